@@ -1,0 +1,431 @@
+import type { ColumnType, Generated, GeneratedAlways, JSONColumnType } from 'kysely'
+
+/** The shape of the database, as the migrations leave it. Rows are turned into `lib/` types before they leave `db/`. */
+
+type Instant = ColumnType<Date, Date | string, Date | string>
+type InstantDefault = ColumnType<Date, Date | string | undefined, Date | string>
+/** A calendar day or a time of day comes back as text: a Date would drag in a time zone. */
+type Day = ColumnType<string, string, string>
+type TimeOfDay = ColumnType<string, string | undefined, string>
+
+interface UserTable {
+  id: string
+  name: string
+  email: string
+  emailVerified: boolean
+  image: string | null
+  createdAt: InstantDefault
+  updatedAt: InstantDefault
+}
+
+interface SessionTable {
+  id: string
+  expiresAt: Instant
+  token: string
+  createdAt: InstantDefault
+  updatedAt: Instant
+  ipAddress: string | null
+  userAgent: string | null
+  userId: string
+  activeOrganizationId: string | null
+}
+
+interface AccountTable {
+  id: string
+  accountId: string
+  providerId: string
+  userId: string
+  accessToken: string | null
+  refreshToken: string | null
+  idToken: string | null
+  accessTokenExpiresAt: Instant | null
+  refreshTokenExpiresAt: Instant | null
+  scope: string | null
+  password: string | null
+  createdAt: InstantDefault
+  updatedAt: Instant
+}
+
+interface OrganizationTable {
+  id: string
+  name: string
+  slug: string
+  logo: string | null
+  createdAt: Instant
+  metadata: string | null
+}
+
+interface MemberTable {
+  id: string
+  organizationId: string
+  userId: string
+  role: string
+  createdAt: Instant
+}
+
+interface InvitationTable {
+  id: string
+  organizationId: string
+  email: string
+  role: string | null
+  status: string
+  expiresAt: Instant
+  createdAt: InstantDefault
+  inviterId: string
+}
+
+interface SiteTable {
+  id: GeneratedAlways<number>
+  code: string
+  organization_id: string
+  name: string
+  time_zone: string
+  unit_system: Generated<string>
+  quiet_from: TimeOfDay
+  quiet_to: TimeOfDay
+  lock_up_at: TimeOfDay
+  is_demo: Generated<boolean>
+  version: Generated<number>
+  created_at: InstantDefault
+}
+
+interface RetiredCodeTable {
+  code: string
+  retired_at: InstantDefault
+}
+
+interface SiteCounterTable {
+  site_id: number
+  kind: 'room' | 'sensor' | 'piece' | 'carry' | 'notice' | 'episode'
+  last_id: Generated<number>
+}
+
+interface MemberSettingTable {
+  site_id: number
+  user_id: string
+  unit_system: string | null
+  mail_on: Generated<boolean>
+  on_house_list: Generated<boolean>
+  last_here_at: Instant | null
+  version: Generated<number>
+}
+
+interface RoomTable {
+  site_id: number
+  id: number
+  code: string
+  name: string
+  kind: string
+  mark: Generated<number>
+  is_shared: Generated<boolean>
+  keeps_dry_work: Generated<boolean>
+  note: Generated<string>
+  version: Generated<number>
+  created_at: InstantDefault
+  archived_at: Instant | null
+}
+
+interface ChangeTable {
+  site_id: number
+  id: GeneratedAlways<number>
+  at: InstantDefault
+  user_id: string | null
+  subject_kind: string
+  subject_code: string
+  action: string
+  before: JSONColumnType<Record<string, unknown>> | null
+  after: JSONColumnType<Record<string, unknown>> | null
+}
+
+interface SensorTable {
+  site_id: number
+  id: number
+  code: string
+  name: string
+  kind: Generated<string>
+  secret_hash: string | null
+  secret_set_at: Instant | null
+  version: Generated<number>
+  created_at: InstantDefault
+  archived_at: Instant | null
+}
+
+interface PlacementTable {
+  site_id: number
+  sensor_id: number
+  from_at: Instant
+  to_at: Instant | null
+  room_id: number
+  spot: Generated<string>
+}
+
+interface SensorStateTable {
+  site_id: number
+  sensor_id: number
+  at: Instant | null
+  temperature_c: number | null
+  humidity_pct: number | null
+  emc_pct: number | null
+  battery_pct: number | null
+  heard_at: Instant | null
+  is_here: boolean | null
+  usual_gap_s: number | null
+  clock_not_set_at: Instant | null
+  clock_ahead_at: Instant | null
+}
+
+interface ReadingTable {
+  site_id: number
+  sensor_id: number
+  at: Instant
+  temperature_c: number
+  humidity_pct: number
+}
+
+interface FigureColumns {
+  site_id: number
+  room_id: number
+  sensor_id: number
+  n: number
+  temperature_milli_sum: number
+  temperature_c_min: number
+  temperature_c_max: number
+  humidity_milli_sum: number
+  humidity_pct_min: number
+  humidity_pct_max: number
+  emc_milli_sum: number
+  emc_pct_min: number
+  emc_pct_max: number
+}
+
+interface RoomHourTable extends FigureColumns {
+  hour_at: Instant
+}
+
+interface RoomDayTable extends FigureColumns {
+  day_on: Day
+}
+
+interface RefusedTable {
+  site_id: number
+  id: GeneratedAlways<number>
+  sensor_id: number | null
+  at: InstantDefault
+  topic: string
+  reason: string
+  field: string | null
+  detail: Generated<string>
+  size_bytes: number
+  head_hex: string
+}
+
+interface IngestCountTable {
+  site_id: number
+  sensor_id: number
+  day_on: Day
+  kind: string
+  n: number
+}
+
+interface StrayCountTable {
+  day_on: Day
+  kind: string
+  n: number
+}
+
+interface HeartbeatTable {
+  part: string
+  at: Instant
+  detail: ColumnType<Record<string, unknown>, string | undefined, string>
+}
+
+interface PieceTable {
+  site_id: number
+  id: number
+  code: string
+  number: string
+  stage: string
+  wood: string | null
+  wood_kind: Generated<string>
+  grain: Generated<string>
+  spigot_on: Generated<string>
+  lid_form: Generated<string>
+  joint_diameter_mm: number | null
+  wall_mm: number | null
+  spigot_mm: number | null
+  lid_mm: number | null
+  body_wall_mm: number | null
+  fit_grade: string | null
+  clearance_mm: number | null
+  allowance_mm: number | null
+  finish: Generated<string>
+  keep_room_id: number | null
+  fitted_room_id: number | null
+  fitted_on: ColumnType<string | null, string | null | undefined, string | null>
+  fitted_at: Instant | null
+  fit_mc_pct: number | null
+  note: Generated<string>
+  owner_user_id: string | null
+  is_private: Generated<boolean>
+  is_shared: Generated<boolean>
+  version: Generated<number>
+  created_at: InstantDefault
+  archived_at: Instant | null
+}
+
+interface CarryTable {
+  site_id: number
+  id: number
+  code: string
+  state: string
+  to_room_id: number
+  cover: string
+  planned_at: Instant
+  stay_minutes: number
+  started_at: Instant | null
+  ended_at: Instant | null
+  against_advice: Generated<boolean>
+  note: Generated<string>
+  created_by: string | null
+  created_at: InstantDefault
+  version: Generated<number>
+}
+
+interface CarryPieceTable {
+  site_id: number
+  carry_id: number
+  piece_id: number
+  from_room_id: number | null
+  cover: string
+  out_at: Instant | null
+  back_at: Instant | null
+  back_room_id: number | null
+}
+
+interface PiecePlaceTable {
+  site_id: number
+  piece_id: number
+  from_at: Instant
+  to_at: Instant | null
+  room_id: number
+  cover: Generated<string>
+  carry_id: number | null
+  moved_by: string | null
+}
+
+interface EpisodeTable {
+  site_id: number
+  id: number
+  rule: string
+  subject: string
+  key: string
+  state: string
+  began_at: Instant
+  told_at: Instant | null
+  ended_at: Instant | null
+  data: ColumnType<Record<string, unknown>, string | undefined, string>
+}
+
+interface NoticeTable {
+  site_id: number
+  id: number
+  code: string
+  episode_id: number | null
+  key: string
+  rule: string
+  urgency: string
+  mark: string
+  title: string
+  body: Generated<string>
+  link: Generated<string>
+  carry_id: number | null
+  piece_id: number | null
+  sensor_id: number | null
+  room_id: number | null
+  at: Instant
+  acknowledged_at: Instant | null
+  acknowledged_by: string | null
+}
+
+interface NoticeSeenTable {
+  site_id: number
+  notice_id: number
+  user_id: string
+  seen_at: Instant
+}
+
+interface DeliveryTable {
+  site_id: number
+  notice_id: number
+  user_id: string
+  channel: string
+  message_id: string
+  state: string
+  hold_until: Instant | null
+  tries: Generated<number>
+  sent_at: Instant | null
+  last_error: string | null
+}
+
+interface IdempotencyTable {
+  user_id: string
+  key: string
+  request_hash: string
+  status: number | null
+  body: ColumnType<unknown, string | null | undefined, string | null>
+  headers: ColumnType<Record<string, string> | null, string | null | undefined, string | null>
+  created_at: InstantDefault
+}
+
+interface RateCountTable {
+  key: string
+  window_at: Instant
+  n: number
+}
+
+interface DemoMailTable {
+  id: GeneratedAlways<number>
+  at: InstantDefault
+  message_id: Generated<string>
+  sender: string
+  recipients: string[]
+  subject: string
+  text_body: string
+  html_body: string
+}
+
+export interface Database {
+  user: UserTable
+  session: SessionTable
+  account: AccountTable
+  organization: OrganizationTable
+  member: MemberTable
+  invitation: InvitationTable
+  site: SiteTable
+  retired_code: RetiredCodeTable
+  site_counter: SiteCounterTable
+  member_setting: MemberSettingTable
+  room: RoomTable
+  change: ChangeTable
+  sensor: SensorTable
+  placement: PlacementTable
+  sensor_state: SensorStateTable
+  reading: ReadingTable
+  room_hour: RoomHourTable
+  room_day: RoomDayTable
+  refused: RefusedTable
+  ingest_count: IngestCountTable
+  stray_count: StrayCountTable
+  heartbeat: HeartbeatTable
+  piece: PieceTable
+  carry: CarryTable
+  carry_piece: CarryPieceTable
+  piece_place: PiecePlaceTable
+  episode: EpisodeTable
+  notice: NoticeTable
+  notice_seen: NoticeSeenTable
+  delivery: DeliveryTable
+  idempotency: IdempotencyTable
+  rate_count: RateCountTable
+  demo_mail: DemoMailTable
+}
