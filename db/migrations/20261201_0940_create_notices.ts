@@ -105,14 +105,6 @@ export async function up(db: Kysely<unknown>): Promise<void> {
 }
 
 export async function down(db: Kysely<unknown>): Promise<void> {
-  const tables = [
-    'demo_mail',
-    'rate_count',
-    'idempotency',
-    'delivery',
-    'notice_seen',
-    'notice',
-    'episode',
-  ]
+  const tables = ['demo_mail', 'rate_count', 'idempotency', 'delivery', 'notice_seen', 'notice', 'episode']
   for (const table of tables) await sql.raw(`drop table ${table}`).execute(db)
 }

@@ -83,16 +83,20 @@ export const roomDetailSchema = roomSchema.extend({
   /** One sentence that a maker could act on. */
   headline: z.string(),
   words: z.array(z.string()),
-  today: z
-    .object({ emcPctMin: z.number(), emcPctMax: z.number(), n: z.int() })
-    .nullable(),
+  today: z.object({ emcPctMin: z.number(), emcPctMax: z.number(), n: z.int() }).nullable(),
   month: z
     .object({ emcPctMin: z.number(), emcPctMax: z.number(), emcPctMean: z.number(), days: z.int() })
     .nullable(),
   /** For setting against on the rule: the other rooms, with fresh air only. */
   others: z.array(z.object({ id, name: z.string(), mark: z.int(), emcPct: z.number() })),
   here: z.array(
-    z.object({ id, number: z.string(), title: z.string(), stage: z.enum(['blank', 'roughed', 'box']), isOut: z.boolean() }),
+    z.object({
+      id,
+      number: z.string(),
+      title: z.string(),
+      stage: z.enum(['blank', 'roughed', 'box']),
+      isOut: z.boolean(),
+    }),
   ),
   hangs: z.array(z.object({ id, name: z.string(), spot: z.string(), isTyped: z.boolean() })),
   cautions: z.array(z.string()),
