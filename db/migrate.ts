@@ -1,3 +1,4 @@
+import { realpathSync } from 'node:fs'
 import { readdir } from 'node:fs/promises'
 import path from 'node:path'
 import { pathToFileURL } from 'node:url'
@@ -55,7 +56,9 @@ async function runOurs(url: string): Promise<string[]> {
   }
 }
 
-if (process.argv[1] === import.meta.filename) {
+const startedAlone = process.argv[1] !== undefined && realpathSync(process.argv[1]) === import.meta.filename
+
+if (startedAlone) {
   const ran = await migrateToLatest(readDatabaseUrl())
   process.stdout.write(ran.length === 0 ? 'The database is up to date.\n' : `Migrated: ${ran.join(', ')}\n`)
 }
