@@ -1,0 +1,67 @@
+/**
+ * When the product speaks, and how long a reading counts. Each threshold stands here with its reason and its status;
+ * none stands in a component or a query.
+ */
+const minuteMs = 60_000
+const hourMs = 60 * minuteMs
+
+/** A planned stay counts as fine only with this much room before the early edge. Common practice, no source. */
+export const fineMarginMs = 30 * minuteMs
+/** The least stay that is of any use in the shop. Common practice, no source. */
+export const leastUsefulStayMs = 30 * minuteMs
+
+/** Two rooms closer than this cannot be told apart: root-sum of two sensors at ±3 % RH near 50 % RH (derived). */
+export const noTellingDifferencePct = 0.7
+
+/** Told this long before a planned carry. A guess, to be learned from use. */
+export const warnBeforePlannedMs = 60 * minuteMs
+/** And at this hour the evening before, in the site's zone. A guess. */
+export const warnEveningBefore = '19:00'
+
+/** Told before the early edge by the larger of 10 min and a quarter of the time out, an hour at most (derived). */
+export function warnBeforeEarlyEdgeMs(timeOutMs: number): number {
+  return Math.min(60 * minuteMs, Math.max(10 * minuteMs, timeOutMs / 4))
+}
+
+/** Last call comes this long before quiet hours. A guess. */
+export const lastCallBeforeQuietMs = 30 * minuteMs
+
+/** A verdict worsens once 2 readings over at least 5 min say so, and betters after 30 min (noise between readings). */
+export const worsenAfterReadings = 2
+export const worsenAfterMs = 5 * minuteMs
+export const betterAfterMs = 30 * minuteMs
+
+/** Usual gap of a sensor that has not yet shown one. Common practice, no source. */
+export const assumedGapS = 300
+
+/**
+ * How long a reading counts as the present air of a room. All guesses: a shop's air turns within the hour when the
+ * door stands open or a stove is lit; a keep room's does not. Typed readings carry ± 5 % RH besides.
+ */
+export function freshForMs(options: {
+  isKeepingRoom: boolean
+  isTyped: boolean
+  usualGapS: number | null
+}): number {
+  if (options.isTyped) return (options.isKeepingRoom ? 24 : 2) * hourMs
+  if (options.isKeepingRoom) return 6 * hourMs
+  const threeGapsMs = 3 * (options.usualGapS ?? assumedGapS) * 1000
+  return Math.min(2 * hourMs, Math.max(30 * minuteMs, threeGapsMs))
+}
+
+/** A sensor is silent after 6 of its usual gaps, 2 h at least. A guess. */
+export function silentAfterMs(usualGapS: number | null): number {
+  return Math.max(2 * hourMs, 6 * (usualGapS ?? assumedGapS) * 1000)
+}
+
+/** Doubt of RH, ± % RH (middle 8 in 10): a common sensor's data sheet figure, from memory; typed in by hand, a guess. */
+export const sensorHumidityDoubtPct = 3
+export const typedHumidityDoubtPct = 5
+/** Doubt of temperature, ± K, for either. Common data sheets, from memory. */
+export const temperatureDoubtK = 0.3
+
+/** Over this a room is called damp and the mould caution is shown (ASHRAE 160-2009's 80 % surface RH criterion). */
+export const mouldCautionHumidityPct = 80
+
+/** A bring-back can be undone for this long. A guess: longer than it takes to notice a wrong press. */
+export const undoBringBackMs = 10 * minuteMs
