@@ -1,0 +1,153 @@
+import type { MovementClass, SpeciesStatus } from './species'
+
+/** Where the movement of each wood was found. Densities are at 12 % MC and often from memory. */
+export const SPECIES_SOURCES = {
+  wh_4_3_13_5: 'Wood Handbook (FPL-GTR-190, 2010), Tables 4-3 and 13-5',
+  wh_13_5: 'Wood Handbook (FPL-GTR-190, 2010), Table 13-5',
+  wh_13_5_memory: 'Wood Handbook (FPL-GTR-190, 2010), Table 13-5 read, Table 4-3 from memory',
+  wh_4_4: 'Wood Handbook (FPL-GTR-190, 2010), Table 4-4',
+  hoadley: 'Hoadley in The Structural Conservation of Panel Paintings (1998), Table 1, p. 15',
+  cirad: 'CIRAD Tropix data sheet',
+  chudnoff: 'Chudnoff, Tropical Timbers of the World (Agriculture Handbook 607, 1984)',
+  wagenfuehr: 'instrument-wood sheet quoting Wagenführ, Holzatlas (1996)',
+  trade: 'a trade or encyclopedia page',
+  memory: 'from memory',
+  none: 'none found',
+} as const
+
+export type SpeciesRow = readonly [
+  commonName: string,
+  latinName: string,
+  densityKgM3: number | null,
+  radialPerPct: number | null,
+  tangentialPerPct: number | null,
+  movementClass: MovementClass,
+  status: SpeciesStatus,
+  source: keyof typeof SPECIES_SOURCES,
+]
+
+/**
+ * Radial and tangential change of size for each % of moisture content, as a fraction, between 6 and 14 % MC.
+ * Where the source prints shrinkage from green to oven-dry, S %, the figure is 1 / (3000 / S - 20) (see movement.ts).
+ * Classes are 9 (radial + tangential): below 3.0 % small, to 4.5 % medium, above large (thresholds from memory).
+ */
+export const SPECIES_TABLE: readonly SpeciesRow[] = [
+  ['Ash, European', 'Fraxinus excelsior', 702, 0.00172, 0.00282, 'medium', 'secondary', 'trade'],
+  ['Ash, white (American)', 'Fraxinus americana', 672, 0.00169, 0.00274, 'medium', 'read', 'wh_4_3_13_5'],
+  ['Beech, European', 'Fagus sylvatica', 720, 0.00201, 0.00427, 'large', 'read', 'hoadley'],
+  ['Beech, American', 'Fagus grandifolia', 717, 0.0019, 0.00431, 'large', 'read', 'wh_4_3_13_5'],
+  ['Oak, European', 'Quercus robur/petraea', 700, 0.0018, 0.00365, 'large', 'read', 'hoadley'],
+  ['Oak, white (American)', 'Quercus alba', 762, 0.0018, 0.00365, 'large', 'read', 'wh_4_3_13_5'],
+  ['Oak, red (American)', 'Quercus rubra', 706, 0.00158, 0.00369, 'large', 'mixed', 'wh_13_5_memory'],
+  ['Sycamore (sycamore maple)', 'Acer pseudoplatanus', 640, 0.00133, 0.00291, 'medium', 'secondary', 'trade'],
+  ['Maple, sugar (hard)', 'Acer saccharum', 706, 0.00165, 0.00353, 'large', 'mixed', 'wh_13_5_memory'],
+  ['Maple, red (soft)', 'Acer rubrum', 605, 0.00137, 0.00289, 'medium', 'mixed', 'wh_13_5_memory'],
+  ['Cherry, European', 'Prunus avium', 603, 0.00172, 0.00308, 'medium', 'secondary', 'trade'],
+  ['Cherry, black (American)', 'Prunus serotina', 560, 0.00126, 0.00248, 'medium', 'read', 'wh_4_3_13_5'],
+  ['Walnut, European', 'Juglans regia', 680, 0.00148, 0.00223, 'medium', 'read', 'hoadley'],
+  ['Walnut, black (American)', 'Juglans nigra', 616, 0.0019, 0.00274, 'medium', 'read', 'wh_4_3_13_5'],
+  ['Yew', 'Taxus baccata', 590, 0.00126, 0.00183, 'small', 'secondary', 'wagenfuehr'],
+  ['Laburnum', 'Laburnum anagyroides', 860, null, null, 'large', 'read (no shrinkage published)', 'trade'],
+  ['Holly, European', 'Ilex aquifolium', null, null, null, 'large', 'none found', 'none'],
+  ['Holly, American', 'Ilex opaca', 640, 0.00165, 0.00353, 'large', 'secondary', 'trade'],
+  ['Boxwood', 'Buxus sempervirens', 970, 0.00216, 0.0035, 'large', 'secondary', 'trade'],
+  ['Pear', 'Pyrus communis', 720, 0.00158, 0.00319, 'medium', 'secondary', 'trade'],
+  ['Apple', 'Malus sylvestris', 745, 0.00205, 0.00376, 'large', 'read', 'wh_13_5'],
+  ['Plane, London', 'Platanus x hispanica', null, null, null, 'medium', 'none found', 'none'],
+  [
+    'Sycamore, American (plane)',
+    'Platanus occidentalis',
+    549,
+    0.00172,
+    0.00296,
+    'medium',
+    'read',
+    'wh_4_3_13_5',
+  ],
+  ['Olive', 'Olea europaea', 850, 0.00187, 0.00312, 'medium', 'secondary', 'trade'],
+  ['Elm, European', 'Ulmus spp.', null, 0.0018, 0.00323, 'large', 'read', 'hoadley'],
+  ['Elm, American', 'Ulmus americana', 560, 0.00144, 0.00338, 'medium', 'read', 'wh_4_3_13_5'],
+  ['Hornbeam', 'Carpinus betulus', 830, 0.00265, 0.00427, 'large', 'secondary', 'trade'],
+  ['African blackwood', 'Dalbergia melanoxylon', 1330, 0.00099, 0.00165, 'small', 'mixed', 'trade'],
+  ['Cocobolo', 'Dalbergia retusa', 1100, 0.00092, 0.00148, 'small', 'from memory', 'memory'],
+  ['Lignum vitae', 'Guaiacum officinale', 1230, 0.00194, 0.0033, 'large', 'from memory', 'memory'],
+  ['Rosewood, Brazilian', 'Dalbergia nigra', 850, 0.00099, 0.00158, 'small', 'from memory', 'wh_4_4'],
+  ['Rosewood, Indian', 'Dalbergia latifolia', 830, 0.00092, 0.00201, 'small', 'from memory', 'wh_4_4'],
+  [
+    'Rosewood, Honduras',
+    'Dalbergia stevensonii',
+    1010,
+    null,
+    null,
+    'small',
+    'read (no shrinkage published)',
+    'chudnoff',
+  ],
+  ['Padauk, African', 'Pterocarpus soyauxii', 745, 0.00112, 0.0018, 'small', 'read', 'chudnoff'],
+  ['Purpleheart', 'Peltogyne spp.', 930, 0.00109, 0.00212, 'small', 'from memory', 'wh_4_4'],
+  ['Bubinga', 'Guibourtia spp.', 890, 0.00201, 0.00297, 'medium', 'from memory', 'wh_4_4'],
+  ['Ebony, African', 'Diospyros crassiflora', 1010, 0.00327, 0.00388, 'large', 'from memory', 'wh_4_4'],
+  ['Zebrano', 'Microberlinia brazzavillensis', 790, 0.00312, 0.00396, 'large', 'read', 'cirad'],
+  ['Wenge', 'Millettia laurentii', 870, 0.00205, 0.00323, 'large', 'read', 'cirad'],
+  ['Mahogany, true', 'Swietenia macrophylla', 540, 0.00102, 0.00141, 'small', 'read', 'wh_4_4'],
+  ['Mahogany, African', 'Khaya spp.', 530, 0.00085, 0.00155, 'small', 'read', 'wh_4_4'],
+  ['Teak', 'Tectona grandis', 650, 0.00085, 0.00201, 'small', 'from memory', 'wh_4_4'],
+  ['Iroko', 'Milicia excelsa', 650, 0.00095, 0.0013, 'small', 'from memory', 'wh_4_4'],
+  ['Bocote', 'Cordia spp.', 855, 0.00137, 0.00259, 'medium', 'secondary', 'trade'],
+  ['Pink ivory', 'Berchemia zeyheri', 1035, null, null, 'medium', 'none found', 'memory'],
+  ['Tulipwood', 'Dalbergia decipularis', 1000, null, null, 'small', 'none found', 'trade'],
+  ['Kingwood', 'Dalbergia cearensis', 1200, null, null, 'small', 'none found', 'trade'],
+  ['Huon pine', 'Lagarostrobos franklinii', 540, 0.00151, 0.00212, 'medium', 'secondary', 'trade'],
+  ['Macawood', 'Platymiscium spp.', null, 0.00092, 0.00119, 'small', 'read', 'wh_4_4'],
+  ['Afrormosia', 'Pericopsis elata', null, 0.00102, 0.00223, 'small', 'read', 'wh_4_4'],
+  ['Birch, yellow', 'Betula alleghaniensis', 694, 0.00256, 0.00338, 'large', 'read', 'wh_4_3_13_5'],
+  ['Lime', 'Tilia spp.', null, 0.00237, 0.00338, 'large', 'read', 'hoadley'],
+  ['Chestnut, sweet', 'Castanea sativa', null, 0.00137, 0.00237, 'medium', 'read', 'hoadley'],
+  ['Alder', 'Alnus spp.', null, 0.00151, 0.00256, 'medium', 'read', 'hoadley'],
+  ['Poplar', 'Populus spp.', null, 0.00116, 0.003, 'medium', 'read', 'hoadley'],
+  ['Willow', 'Salix spp.', null, 0.00144, 0.00252, 'medium', 'read', 'hoadley'],
+  ['Robinia (black locust)', 'Robinia pseudoacacia', 773, 0.00158, 0.00252, 'medium', 'read', 'wh_13_5'],
+  ['Persimmon', 'Diospyros virginiana', 717, 0.00278, 0.00403, 'large', 'read', 'wh_4_3_13_5'],
+  ['Maple (genus average)', 'Acer spp.', null, 0.00144, 0.00312, 'medium', 'read', 'hoadley'],
+]
+
+/** What to know about a wood's figures, by slug. */
+export const SPECIES_NOTES: Readonly<Record<string, string>> = {
+  'fagus-sylvatica': 'A trade page gives 5.7 and 11.6 % shrinkage.',
+  'quercus-robur-petraea': 'The figure is for white oaks; European oak is often quoted lower.',
+  'acer-pseudoplatanus': 'The middle of a printed range.',
+  'taxus-baccata': 'Density as printed; 640 to 680 is often quoted.',
+  'laburnum-anagyroides': 'No shrinkage published; said to shrink strongly, so counted as large movement.',
+  'ilex-aquifolium': 'No shrinkage found; counted as large movement, as American holly.',
+  'buxus-sempervirens': 'Densities from 900 to 1100 are printed.',
+  'platanus-x-hispanica': 'No shrinkage found; counted as medium movement.',
+  'olea-europaea': 'Sources conflict; fit it as a wood of large movement.',
+  'carpinus-betulus': 'The middle of a printed range.',
+  'guaiacum-officinale': 'Very slow to follow the air.',
+  'dalbergia-melanoxylon': 'Very slow to follow the air.',
+  'dalbergia-stevensonii': 'Shrinkage "unusually low", no figures printed; counted as small movement.',
+  'millettia-laurentii': 'Saturates early (22 % MC), so it may move a third more than this figure.',
+  'berchemia-zeyheri': 'No shrinkage found; counted as medium movement.',
+  'dalbergia-decipularis': 'No shrinkage found; counted as small movement, with caution.',
+  'dalbergia-cearensis': 'No shrinkage found; counted as small movement, with caution.',
+  'lagarostrobos-franklinii': 'Densities of 520 and 560 are printed.',
+  'castanea-sativa': 'Figure for the genus.',
+  'acer-spp': 'Average of the genus.',
+}
+
+/**
+ * Oily, dense woods take up less water than the average curve says and saturate earlier; the figures for them are on
+ * the cautious side. Source: fibre saturation of 22 to 23 % in CIRAD sheets; Chudnoff (1984) on cocobolo.
+ */
+export const OILY_SPECIES: ReadonlySet<string> = new Set([
+  'dalbergia-melanoxylon',
+  'dalbergia-retusa',
+  'dalbergia-nigra',
+  'dalbergia-latifolia',
+  'dalbergia-stevensonii',
+  'dalbergia-decipularis',
+  'dalbergia-cearensis',
+  'guaiacum-officinale',
+  'tectona-grandis',
+  'millettia-laurentii',
+])
