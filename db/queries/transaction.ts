@@ -1,0 +1,10 @@
+import type { Kysely, Transaction } from 'kysely'
+import type { Database } from '../schema'
+
+/** Runs `work` in the transaction that is open already, or else in one of its own. */
+export function inTransaction<T>(
+  db: Kysely<Database>,
+  work: (trx: Transaction<Database>) => Promise<T>,
+): Promise<T> {
+  return db.isTransaction ? work(db as Transaction<Database>) : db.transaction().execute(work)
+}
