@@ -1,0 +1,174 @@
+import path from 'node:path'
+import type { Config } from '@/lib/config'
+import { markBuilt, needsBuild, sourcesHash } from './build'
+import { clusterUrl, createMissingDatabase, databaseAnswers, prepareCluster } from './cluster'
+import {
+  loadPorts,
+  loadSecrets,
+  openDataFolder,
+  removeRunFile,
+  writeRunFile,
+  type DataFolder,
+} from './data-folder'
+import * as parts from './parts'
+import { isPortFree, reachable } from './ports'
+import { createSupervisor, type Service, type Supervisor, type Task } from './supervisor'
+
+export interface StackOptions {
+  root: string
+  config: Config
+  inherited: Record<string, string | undefined>
+  mode: 'start' | 'dev'
+  resetDemo?: boolean
+  /** Settings of the private PostgreSQL, for tests. */
+  clusterSettings?: Record<string, string>
+  say: (sentence: string) => void
+}
+
+export interface Stack {
+  /** With everything filled in that was generated. */
+  config: Config
+  env: Record<string, string | undefined>
+  supervisor: Supervisor
+  /** Brings everything up in order. */
+  start(): Promise<void>
+  /** Takes everything down in the reverse order. */
+  stop(): Promise<void>
+}
+
+const databaseName = 'lidfast'
+
+/** Everything of one installation: chooses what it needs and knows the order. Nothing runs before `start`. */
+export async function createStack(options: StackOptions): Promise<Stack> {
+  const { root, say } = options
+  await refuseTakenPorts(options.config)
+  const folder = await openDataFolder(path.resolve(root, options.config.dataDir))
+  const secrets = await loadSecrets(folder)
+  const ports = await loadPorts(folder)
+  const config = fillIn(options.config, folder, { ...secrets, ...ports })
+  const env = { ...options.inherited, ...environmentOf(config), NEXT_TELEMETRY_DISABLED: '1' }
+  const context: parts.PartContext = { root, config, env }
+  const supervisor = createSupervisor({ logFolder: folder.logs, say })
+  const ownDatabase = options.config.databaseUrl === undefined
+  const ownMail = options.config.smtpUrl === undefined && config.smtpUrl !== undefined
+
+  const serve = async (service: Service) => {
+    if (!parts.isThere(service)) return say(`${service.name} is not there yet and is left out.`)
+    await supervisor.serve(service)
+  }
+  const run = async (task: Task) => {
+    if (!parts.isThere(task)) return say(`${task.name} is not there yet and is left out.`)
+    await supervisor.run(task)
+  }
+
+  async function startDatabase(): Promise<void> {
+    const at = { port: ports.database, password: secrets.databasePassword }
+    const wantedDir = folder.postgres
+    const prepared = await prepareCluster({ wantedDir, ...at, settings: options.clusterSettings })
+    await supervisor.serve({
+      name: 'postgres',
+      command: prepared.command,
+      args: prepared.args,
+      cwd: '/',
+      env: { PATH: '/usr/bin:/bin', LC_ALL: 'C.UTF-8' },
+      ready: () => databaseAnswers(prepared.adminUrl),
+      stopSignal: prepared.stopSignal,
+      graceMs: 30_000,
+    })
+    await createMissingDatabase(prepared.adminUrl, databaseName)
+  }
+
+  async function fillDatabase(): Promise<void> {
+    if (ownDatabase) await startDatabase()
+    await run(parts.migrateTask(context))
+    if (config.demo) await run(parts.demoTask(context, options.resetDemo === true))
+  }
+
+  async function build(): Promise<void> {
+    if (options.mode === 'dev' || !(await needsBuild(root))) return
+    const hash = await sourcesHash(root)
+    await run(parts.buildTask(context))
+    await markBuilt(root, hash)
+  }
+
+  return {
+    config,
+    env,
+    supervisor,
+    async start() {
+      // The first to fail stops the start; the other is ended by `stop` and its own failure is no news.
+      await Promise.all([build(), fillDatabase()])
+      await Promise.all([serve(parts.broker(context)), ownMail ? serve(parts.mailTrap(context)) : undefined])
+      await Promise.all([
+        serve(parts.notices(context)),
+        serve(parts.delivery(context)),
+        serve(parts.web(context, options.mode)),
+      ])
+      if (config.demo) await serve(parts.fakeSensors(context))
+      await writeRunFile(folder, {
+        pid: process.pid,
+        startedAt: new Date().toISOString(),
+        mode: options.mode,
+        webUrl: config.baseUrl,
+        databaseUrl: config.databaseUrl ?? '',
+        mqttUrl: `mqtt://${reachable(config.mqttHost)}:${config.mqttPort}`,
+        smtpUrl: ownMail ? config.smtpUrl : undefined,
+      })
+    },
+    async stop() {
+      await supervisor.stop()
+      await removeRunFile(folder)
+    },
+  }
+}
+
+async function refuseTakenPorts(config: Config): Promise<void> {
+  const wanted = [
+    { variable: 'PORT', host: config.listenHost, port: config.port },
+    { variable: 'MQTT_PORT', host: config.mqttHost, port: config.mqttPort },
+  ]
+  for (const { variable, host, port } of wanted) {
+    if (await isPortFree(host, port)) continue
+    throw new Error(
+      `Port ${port} of ${host} is in use by another program. Stop that one, or choose another port: ` +
+        `${variable}=${port + 1} npm start`,
+    )
+  }
+}
+
+interface Made {
+  databasePassword: string
+  authSecret: string
+  database: number
+  mailTrap: number
+}
+
+function fillIn(given: Config, folder: DataFolder, made: Made): Config {
+  const at = { port: made.database, password: made.databasePassword }
+  const trap = given.demo ? `smtp://127.0.0.1:${made.mailTrap}` : undefined
+  return {
+    ...given,
+    dataDir: folder.root,
+    databaseUrl: given.databaseUrl ?? clusterUrl(at, databaseName),
+    authSecret: given.authSecret ?? made.authSecret,
+    smtpUrl: given.smtpUrl ?? trap,
+  }
+}
+
+/** The configuration as the environment that `parseConfig` reads. */
+const environmentOf = (config: Config): Record<string, string | undefined> => ({
+  DATABASE_URL: config.databaseUrl,
+  PORT: String(config.port),
+  LISTEN_HOST: config.listenHost,
+  BASE_URL: config.baseUrl,
+  MQTT_HOST: config.mqttHost,
+  MQTT_PORT: String(config.mqttPort),
+  SMTP_URL: config.smtpUrl,
+  MAIL_FROM: config.mailFrom,
+  LIDFAST_DEMO: config.demo ? 'on' : 'off',
+  AUTH_SECRET: config.authSecret,
+  AUTH_RATE_LIMIT: String(config.authRateLimit),
+  PEER_ADDRESS_HEADER: config.peerAddressHeader,
+  LOG_LEVEL: config.logLevel,
+  DATA_DIR: config.dataDir,
+})
