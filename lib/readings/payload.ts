@@ -172,7 +172,7 @@ function refusalOf(entry: Record<string, unknown>, key: string, prefix: string):
   const field = fieldName(prefix, key)
   if (!Object.hasOwn(entry, key)) return refusal('missing-value', field)
   const value = entry[key]
-  if (typeof value === 'number') return refusal('not-a-number', field, shown(value))
+  if (value === Infinity || value === -Infinity) return refusal('not-a-number', field, shown(value))
   return refusal(key === 'at' && typeof value === 'string' ? 'bad-time' : 'wrong-type', field, shown(value))
 }
 

@@ -16,7 +16,6 @@ const root = 'lidfast/v1'
 const code = '[23456789abcdefghjkmnpqrstvwxyz]{10}'
 const topicPattern = new RegExp(`^${root}/(${code})/(${code})/(${topicKinds.join('|')})$`)
 const signInPattern = new RegExp(`^(${code})/(${code})$`)
-const siteInTopicPattern = new RegExp(`^${root}/(${code})/`)
 
 /** Where a sensor publishes. */
 export const topicOf = (siteCode: string, sensorCode: string, kind: TopicKind): string =>
@@ -32,9 +31,6 @@ export function parseTopic(topic: string): ParsedTopic | undefined {
   if (siteCode === undefined || sensorCode === undefined || kind === undefined) return undefined
   return { siteCode, sensorCode, kind: kind as TopicKind }
 }
-
-/** The site that a topic names, whatever follows: to tell a site that a stranger tried its topics. */
-export const siteCodeInTopic = (topic: string): string | undefined => siteInTopicPattern.exec(topic)?.[1]
 
 /** The name with which a sensor signs in to the broker. */
 export const signInNameOf = (siteCode: string, sensorCode: string): string => `${siteCode}/${sensorCode}`
