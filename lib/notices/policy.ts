@@ -65,3 +65,6 @@ export const mouldCautionHumidityPct = 80
 
 /** A bring-back can be undone for this long. A guess: longer than it takes to notice a wrong press. */
 export const undoBringBackMs = 10 * minuteMs
+
+/** A plan that nobody started is not spoken of any more this long after its hour: the moment is past. A guess. */
+export const planLapsesMs = 60 * minuteMs

@@ -1,0 +1,111 @@
+import type { PieceCheck } from '@/lib/carry/carry-check'
+import type { Stage } from '@/lib/pieces/piece'
+import type { QuietHours } from '@/lib/sites/local-time'
+import type { Role } from '@/lib/sites/permissions'
+import type { Mark, Rule } from './notice'
+
+/** What deciding looks at. All instants are epoch ms; the words are made in the site's zone. */
+export interface NoticeInputs {
+  site: QuietHours & { lockUpAt: string }
+  carries: NoticeCarry[]
+  sensors: NoticeSensor[]
+  people: NoticePerson[]
+}
+
+export interface NoticeCarry {
+  code: string
+  state: 'planned' | 'out'
+  plannedAt: number
+  stayMinutes: number
+  roomName: string
+  /** Who planned it; null when that person has left. */
+  madeBy: string | null
+  /** When the air that its verdict rests on was last read; null: never. */
+  airAt: number | null
+  pieces: NoticePiece[]
+}
+
+export interface NoticePiece {
+  code: string
+  number: string
+  stage: Stage
+  /** Null while it is only planned. A piece that is back is left out. */
+  outAt: number | null
+  /** Null where nothing can be worked out, as for a blank. */
+  check: PieceCheck | null
+}
+
+export interface NoticeSensor {
+  code: string
+  name: string
+  roomName: string | null
+  lastHeardAt: number | null
+  /** Until when its last reading counts as the present air of its room. */
+  freshUntil: number | null
+  silentFrom: number | null
+  /** Numbers of pieces that are out in its room, which nobody then watches. */
+  piecesOutThere: string[]
+}
+
+export interface NoticePerson {
+  userId: string
+  role: Role
+  mailOn: boolean
+  onHouseList: boolean
+}
+
+/** How bad a carry looks; a verdict worsens when this rises. */
+export const severities = { fine: 0, 'keep-short': 1, unknown: 2, leave: 3 } as const
+export type Severity = keyof typeof severities
+
+/** The verdict that counts, and the other one that has to last before it counts (see `verdict-hold.ts`). */
+export interface VerdictHold {
+  held: Severity
+  /** The worst that was told of; "fine" when nothing was. */
+  told: Severity
+  other: Severity | null
+  otherSince: number
+  otherReadings: number
+  otherAirAt: number | null
+}
+
+/** A condition that holds: one episode from its beginning to its end. `key` names the occasion. */
+export interface Episode {
+  rule: Rule
+  subject: string
+  key: string
+  state: 'pending' | 'telling'
+  beganAt: number
+  hold?: VerdictHold
+}
+
+export interface NoticeState {
+  /** Keys of the notices made before. */
+  told: ReadonlySet<string>
+  /** Holds of the open episodes of planned carries, by subject and key joined with a space. */
+  holds: ReadonlyMap<string, VerdictHold>
+}
+
+export interface NewNotice {
+  key: string
+  rule: Rule
+  urgency: 'now' | 'soon' | 'whenever'
+  mark: Mark
+  title: string
+  body: string
+  link: string
+  episode: { rule: Rule; subject: string; key: string }
+  carryCode?: string
+  pieceCode?: string
+  sensorCode?: string
+  mail: { userId: string; holdUntil: number | null }[]
+}
+
+export interface Decision {
+  /** Every condition that holds now. An open episode that is not among them is over. */
+  episodes: Episode[]
+  notices: NewNotice[]
+}
+
+/** What one rule adds to the decision. */
+export type RulePart = Decision

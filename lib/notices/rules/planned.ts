@@ -1,0 +1,78 @@
+import { dayAfter, instantOfLocalTime, localDay } from '@/lib/sites/local-time'
+import {
+  type Episode,
+  type NewNotice,
+  type NoticeCarry,
+  type NoticeInputs,
+  type NoticeState,
+  type RulePart,
+  severities,
+  type Severity,
+} from '../inputs'
+import { mailTo, planners } from '../people'
+import { planLapsesMs, warnBeforePlannedMs, warnEveningBefore } from '../policy'
+import { nextVerdictHold } from '../verdict-hold'
+import { plannedBody, plannedTitle, severityOf } from '../wording'
+
+/**
+ * A planned carry that should not be made as planned: told the evening before and an hour before, each once, and
+ * again when its verdict has worsened since it was told.
+ */
+export function plannedCarry(
+  now: number,
+  state: NoticeState,
+  inputs: NoticeInputs,
+  carry: NoticeCarry,
+): RulePart {
+  if (now > carry.plannedAt + planLapsesMs) return { episodes: [], notices: [] }
+  const { timeZone } = inputs.site
+  const subject = `carry ${carry.code}`
+  const occasion = new Date(carry.plannedAt).toISOString()
+  const hold = nextVerdictHold(state.holds.get(`${subject} ${occasion}`), {
+    severity: worstOf(carry),
+    now,
+    airAt: carry.airAt,
+  })
+  const eveningBefore = instantOfLocalTime(
+    dayAfter(localDay(carry.plannedAt, timeZone), -1),
+    warnEveningBefore,
+    timeZone,
+  )
+  const moment =
+    now >= carry.plannedAt - warnBeforePlannedMs ? 'hour' : now >= eveningBefore ? 'evening' : null
+  const key = `planned-carry/${carry.code}/${occasion}/${moment ?? ''}`
+  const momentIsNew = moment !== null && !state.told.has(key)
+  const isBad = severities[hold.held] > 0
+  const isWorse = moment !== null && severities[hold.held] > severities[hold.told]
+  const tells = isBad && (momentIsNew || isWorse)
+
+  const episode: Episode = {
+    rule: 'planned-carry',
+    subject,
+    key: occasion,
+    state: isBad && moment !== null ? 'telling' : 'pending',
+    beganAt: now,
+    hold: tells ? { ...hold, told: hold.held } : hold,
+  }
+  if (!tells) return { episodes: [episode], notices: [] }
+  const at = new Date(now)
+  const notice: NewNotice = {
+    key: momentIsNew ? key : `verdict-worse/${carry.code}/${occasion}/${hold.held}`,
+    rule: momentIsNew ? 'planned-carry' : 'verdict-worse',
+    urgency: 'soon',
+    mark: hold.held,
+    title: plannedTitle(carry, timeZone, at),
+    body: plannedBody(carry),
+    link: `/carry/${carry.code}`,
+    episode,
+    carryCode: carry.code,
+    mail: mailTo(now, inputs, planners(inputs.people, carry)),
+  }
+  return { episodes: [episode], notices: [notice] }
+}
+
+function worstOf(carry: NoticeCarry): Severity {
+  return carry.pieces
+    .map((piece) => severityOf(piece.check))
+    .reduce<Severity>((worst, one) => (severities[one] > severities[worst] ? one : worst), 'fine')
+}
