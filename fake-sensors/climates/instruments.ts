@@ -1,0 +1,81 @@
+import { createNoise, hashed } from './noise'
+import { DAY_MS, type Weather } from './outdoor'
+import { createRooms, type ClimateRoom } from './rooms'
+
+export interface Instrument {
+  room: ClimateRoom
+  /** What this one reads too much, in K and in percent RH: no two sensors of a shelf agree. */
+  offsetC: number
+  offsetPct: number
+  /** How many days a battery lasts, and how far into it this one was on the first day of 1970. */
+  batteryDays: number
+  batteryUsed: number
+}
+
+/** The nine simulated instruments, by model name. Offsets are inside what data sheets allow (±0.3 K, ±3 % RH). */
+export const instruments = {
+  'cupboard-upper': { room: 'cupboard', offsetC: 0.15, offsetPct: -0.6, batteryDays: 610, batteryUsed: 0.1 },
+  'cupboard-lower': { room: 'cupboard', offsetC: -0.35, offsetPct: 1.1, batteryDays: 590, batteryUsed: 0.45 },
+  study: { room: 'study', offsetC: 0, offsetPct: 0.4, batteryDays: 540, batteryUsed: 0.7 },
+  kitchen: { room: 'kitchen', offsetC: 0.3, offsetPct: -0.9, batteryDays: 560, batteryUsed: 0.25 },
+  'shop-bench': { room: 'shop', offsetC: 0.1, offsetPct: 0.3, batteryDays: 520, batteryUsed: 0.55 },
+  'shop-door': { room: 'shop', offsetC: -0.5, offsetPct: 1.6, batteryDays: 500, batteryUsed: 0.05 },
+  'shop-shelf': { room: 'shop', offsetC: 0.4, offsetPct: -1.2, batteryDays: 515, batteryUsed: 0.8 },
+  store: { room: 'store', offsetC: 0, offsetPct: -0.2, batteryDays: 480, batteryUsed: 0.6 },
+  tub: { room: 'tub', offsetC: 0.1, offsetPct: 0.2, batteryDays: 700, batteryUsed: 0.3 },
+} as const satisfies Record<string, Instrument>
+
+export type InstrumentName = keyof typeof instruments
+export const instrumentNames = Object.keys(instruments) as InstrumentName[]
+export const isInstrumentName = (name: string): name is InstrumentName => Object.hasOwn(instruments, name)
+
+export interface Measured {
+  temperatureC: number
+  humidityPct: number
+}
+
+export type Measure = (name: InstrumentName, atMs: number) => Measured
+
+/** Draughts and people: how far the air at the instrument wanders within minutes, and its last digit. */
+const WANDER_MS = 11 * 60_000
+const WANDER_C = 0.08
+const WANDER_PCT = 0.35
+const LAST_DIGIT_C = 0.03
+const LAST_DIGIT_PCT = 0.12
+
+const rounded = (value: number, steps: number): number => Math.round(value * steps) / steps
+
+/**
+ * What an instrument shows at an instant, with its own offset and noise, to 0.01 °C and 0.1 % RH.
+ * @param seed any integer; the same seed gives the same place
+ * @param weather what a scenario adds to the weather
+ */
+export function createInstruments(seed: number, weather?: Weather): Measure {
+  const air = createRooms(seed, weather)
+  const noise = createNoise(seed)
+  return (name, atMs) => {
+    const { room, offsetC, offsetPct } = instruments[name]
+    const { temperatureC, humidityPct } = air(room, atMs)
+    const own = 100 + 10 * instrumentNames.indexOf(name)
+    const second = Math.floor(atMs / 1000)
+    // A closed tub has no draught and no visitors.
+    const stir = room === 'tub' ? 0.3 : 1
+    const wander = (channel: number) => stir * noise(channel, atMs / WANDER_MS)
+    const digit = (channel: number) => 2 * hashed(seed, channel, second) - 1
+    const shownPct = humidityPct + offsetPct + WANDER_PCT * wander(own) + LAST_DIGIT_PCT * digit(own + 1)
+    return {
+      temperatureC: rounded(
+        temperatureC + offsetC + WANDER_C * wander(own + 2) + LAST_DIGIT_C * digit(own + 3),
+        100,
+      ),
+      humidityPct: rounded(Math.min(99, Math.max(5, shownPct)), 10),
+    }
+  }
+}
+
+/** What is left in an instrument's battery: a line from 100 down to 6 %, then a new one. */
+export function batteryPct(name: InstrumentName, atMs: number): number {
+  const { batteryDays, batteryUsed } = instruments[name]
+  const used = (atMs / DAY_MS / batteryDays + batteryUsed) % 1
+  return Math.round(100 - 94 * used)
+}
