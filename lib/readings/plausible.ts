@@ -44,5 +44,5 @@ export function implausibleTime(at: Date, arrivedAt: Date): 'clock-ahead' | 'clo
  * A value in whole thousandths, as it is stored: finer than any sensor, and a number that single precision gives
  * back letter for letter, so that figures made on arrival equal figures made again from the table.
  */
-export const inThousandths = (value: number): number => Math.round(value * 1000)
-export const toStored = (value: number): number => inThousandths(value) / 1000 + 0
+export const inThousandths = (value: number): number => Math.round(value * 1000) + 0
+export const toStored = (value: number): number => inThousandths(value) / 1000
