@@ -1,0 +1,245 @@
+import { type Kysely, sql, type Transaction } from 'kysely'
+import { z } from 'zod'
+import type { Episode, NewNotice, NoticePerson, NoticeState } from '@/lib/notices/inputs'
+import { roleSchema } from '@/lib/sites/permissions'
+import { queueMail } from '../jobs'
+import type { Database } from '../schema'
+import { newCode, takeIds } from './counters'
+import { notifySite } from './live'
+
+const severitySchema = z.enum(['fine', 'keep-short', 'unknown', 'leave'])
+const holdSchema = z.object({
+  held: severitySchema,
+  told: severitySchema,
+  other: severitySchema.nullable(),
+  otherSince: z.number(),
+  otherReadings: z.number(),
+  otherAirAt: z.number().nullable(),
+})
+
+/** Keys older than this belong to occasions that are long past. */
+const rememberMs = 8 * 24 * 3_600_000
+
+/**
+ * Takes the site for one decision until the end of the transaction. False: somebody else is at it, who sees the same.
+ * The unique key of a notice would keep it from being told twice all the same; this saves the work.
+ */
+export async function takeSiteForNotices(trx: Transaction<Database>, siteId: number): Promise<boolean> {
+  const { rows } = await sql<{ taken: boolean }>`
+    select pg_try_advisory_xact_lock(hashtext('lidfast notices'), ${siteId}) as taken`.execute(trx)
+  return rows[0]?.taken ?? false
+}
+
+export async function loadNoticeState(db: Kysely<Database>, siteId: number, now: Date): Promise<NoticeState> {
+  const told = await db
+    .selectFrom('notice')
+    .where('site_id', '=', siteId)
+    .where('at', '>', new Date(now.getTime() - rememberMs))
+    .select('key')
+    .execute()
+  const open = await db
+    .selectFrom('episode')
+    .where('site_id', '=', siteId)
+    .where('state', '<>', 'over')
+    .where('rule', '=', 'planned-carry')
+    .select(['subject', 'key', 'data'])
+    .execute()
+  return {
+    told: new Set(told.map(({ key }) => key)),
+    holds: new Map(
+      open.flatMap(({ subject, key, data }) => {
+        const hold = holdSchema.safeParse(data.hold)
+        return hold.success ? [[`${subject} ${key}`, hold.data] as const] : []
+      }),
+    ),
+  }
+}
+
+export async function listNoticePeople(db: Kysely<Database>, siteId: number): Promise<NoticePerson[]> {
+  const rows = await db
+    .selectFrom('site')
+    .innerJoin('member', 'member.organizationId', 'site.organization_id')
+    .leftJoin('member_setting as setting', (join) =>
+      join.onRef('setting.site_id', '=', 'site.id').onRef('setting.user_id', '=', 'member.userId'),
+    )
+    .where('site.id', '=', siteId)
+    .select(['member.userId', 'member.role', 'setting.mail_on', 'setting.on_house_list'])
+    .orderBy('member.createdAt')
+    .execute()
+  return rows.map((row) => ({
+    userId: row.userId,
+    role: roleSchema.parse(row.role),
+    mailOn: row.mail_on ?? true,
+    onHouseList: row.on_house_list ?? false,
+  }))
+}
+
+/**
+ * Stores what holds now: new episodes begin, known ones keep their beginning, and the others are over.
+ * @returns the number of each episode that holds, by `episodeName`
+ */
+export async function storeEpisodes(
+  trx: Transaction<Database>,
+  siteId: number,
+  now: Date,
+  episodes: Episode[],
+): Promise<Map<string, number>> {
+  const open = await trx
+    .selectFrom('episode')
+    .where('site_id', '=', siteId)
+    .where('state', '<>', 'over')
+    .select(['id', 'rule', 'subject', 'key'])
+    .execute()
+  const holding = new Set(episodes.map(episodeName))
+  const over = open.filter((one) => !holding.has(episodeName(one))).map(({ id }) => id)
+  if (over.length > 0) {
+    await trx
+      .updateTable('episode')
+      .set({ state: 'over', ended_at: now })
+      .where('site_id', '=', siteId)
+      .where('id', 'in', over)
+      .execute()
+  }
+  const ids = new Map(open.map((one) => [episodeName(one), one.id]))
+  for (const episode of episodes) {
+    const id = ids.get(episodeName(episode))
+    if (id === undefined) ids.set(episodeName(episode), await beginEpisode(trx, siteId, now, episode))
+    else await goOnWithEpisode(trx, siteId, now, id, episode)
+  }
+  return ids
+}
+
+const dataOf = (episode: Episode): string =>
+  JSON.stringify(episode.hold === undefined ? {} : { hold: episode.hold })
+
+async function goOnWithEpisode(
+  trx: Transaction<Database>,
+  siteId: number,
+  now: Date,
+  id: number,
+  episode: Episode,
+): Promise<void> {
+  const tells = episode.state === 'telling'
+  await trx
+    .updateTable('episode')
+    .set((eb) => ({
+      // An acknowledged episode stays so until it is over.
+      state: tells
+        ? eb.case().when('state', '=', 'pending').then('telling').else(eb.ref('state')).end()
+        : eb.ref('state'),
+      told_at: tells ? eb.fn.coalesce('told_at', sql<Date>`${now}::timestamptz`) : eb.ref('told_at'),
+      data: dataOf(episode),
+    }))
+    .where('site_id', '=', siteId)
+    .where('id', '=', id)
+    .execute()
+}
+
+/** An episode of the same name that was thought over has come back, with its old beginning. */
+async function beginEpisode(
+  trx: Transaction<Database>,
+  siteId: number,
+  now: Date,
+  episode: Episode,
+): Promise<number> {
+  const row = await trx
+    .insertInto('episode')
+    .values({
+      site_id: siteId,
+      id: await takeIds(trx, siteId, 'episode'),
+      rule: episode.rule,
+      subject: episode.subject,
+      key: episode.key,
+      state: episode.state,
+      began_at: new Date(episode.beganAt),
+      told_at: episode.state === 'telling' ? now : null,
+      data: dataOf(episode),
+    })
+    .onConflict((clash) =>
+      clash
+        .columns(['site_id', 'rule', 'subject', 'key'])
+        .doUpdateSet((eb) => ({ state: eb.ref('excluded.state'), ended_at: null })),
+    )
+    .returning('id')
+    .executeTakeFirstOrThrow()
+  return row.id
+}
+
+/**
+ * Stores notices that were not told before, with the mail they lead to and the jobs that send it, all or nothing.
+ * @returns how many were new
+ */
+export async function storeNotices(
+  trx: Transaction<Database>,
+  siteId: number,
+  now: Date,
+  notices: NewNotice[],
+  episodeIds: ReadonlyMap<string, number>,
+  messageIdOf: (noticeCode: string, userId: string) => string,
+): Promise<number> {
+  let stored = 0
+  for (const notice of notices) {
+    const code = newCode()
+    const row = await trx
+      .insertInto('notice')
+      .values({
+        site_id: siteId,
+        id: await takeIds(trx, siteId, 'notice'),
+        code,
+        episode_id: episodeIds.get(episodeName(notice.episode)) ?? null,
+        key: notice.key,
+        rule: notice.rule,
+        urgency: notice.urgency,
+        mark: notice.mark,
+        title: notice.title,
+        body: notice.body,
+        link: notice.link,
+        carry_id: await findIdByCode(trx, 'carry', siteId, notice.carryCode),
+        piece_id: await findIdByCode(trx, 'piece', siteId, notice.pieceCode),
+        sensor_id: await findIdByCode(trx, 'sensor', siteId, notice.sensorCode),
+        at: now,
+      })
+      .onConflict((clash) => clash.columns(['site_id', 'key']).doNothing())
+      .returning('id')
+      .executeTakeFirst()
+    if (row === undefined) continue
+    stored += 1
+    for (const { userId, holdUntil } of notice.mail) {
+      const runAt = holdUntil === null ? null : new Date(holdUntil)
+      await trx
+        .insertInto('delivery')
+        .values({
+          site_id: siteId,
+          notice_id: row.id,
+          user_id: userId,
+          channel: 'mail',
+          message_id: messageIdOf(code, userId),
+          state: runAt === null ? 'waiting' : 'held',
+          hold_until: runAt,
+        })
+        .execute()
+      await queueMail(trx, userId, runAt)
+    }
+    await notifySite(trx, siteId, 'notice', code)
+  }
+  return stored
+}
+
+async function findIdByCode(
+  trx: Transaction<Database>,
+  table: 'carry' | 'piece' | 'sensor',
+  siteId: number,
+  code: string | undefined,
+): Promise<number | null> {
+  if (code === undefined) return null
+  const row = await trx
+    .selectFrom(table)
+    .where('site_id', '=', siteId)
+    .where('code', '=', code)
+    .select('id')
+    .executeTakeFirst()
+  return row?.id ?? null
+}
+
+const episodeName = (of: { rule: string; subject: string; key: string }): string =>
+  `${of.rule} ${of.subject} ${of.key}`
