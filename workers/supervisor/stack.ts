@@ -1,3 +1,4 @@
+import { rm } from 'node:fs/promises'
 import path from 'node:path'
 import type { Config } from '@/lib/config'
 import { markBuilt, needsBuild, sourcesHash } from './build'
@@ -34,6 +35,8 @@ export interface Stack {
   start(): Promise<void>
   /** Takes everything down in the reverse order. */
   stop(): Promise<void>
+  /** Removes the database's folder, wherever it had to be. For tests; nothing may run. */
+  removeData(): Promise<void>
 }
 
 const databaseName = 'lidfast'
@@ -61,10 +64,12 @@ export async function createStack(options: StackOptions): Promise<Stack> {
     await supervisor.run(task)
   }
 
+  let clusterFolder: string | undefined
   async function startDatabase(): Promise<void> {
     const at = { port: ports.database, password: secrets.databasePassword }
     const wantedDir = folder.postgres
     const prepared = await prepareCluster({ wantedDir, ...at, settings: options.clusterSettings })
+    clusterFolder = prepared.dataDir
     await supervisor.serve({
       name: 'postgres',
       command: prepared.command,
@@ -118,6 +123,12 @@ export async function createStack(options: StackOptions): Promise<Stack> {
     async stop() {
       await supervisor.stop()
       await removeRunFile(folder)
+    },
+    async removeData() {
+      if (clusterFolder === undefined) return
+      await rm(clusterFolder, { recursive: true, force: true })
+      const isElsewhere = path.dirname(clusterFolder) !== folder.root
+      if (isElsewhere) await rm(path.dirname(clusterFolder), { recursive: true, force: true })
     },
   }
 }
