@@ -222,9 +222,13 @@ describe('a message that is no JSON of ours', () => {
       `{"a":${'1'.repeat(full - 10)}}`,
     ]
     for (const message of hard) {
-      const startedAt = performance.now()
-      parsePayload(bytesOf(message), live)
-      expect(performance.now() - startedAt).toBeLessThan(50)
+      // The best of five: other work on the machine must not decide.
+      const tries = Array.from({ length: 5 }, () => {
+        const startedAt = performance.now()
+        parsePayload(bytesOf(message), live)
+        return performance.now() - startedAt
+      })
+      expect(Math.min(...tries)).toBeLessThan(50)
     }
   })
 
