@@ -1,6 +1,8 @@
 import 'server-only'
+import { roleWords } from '@/lib/sites/permissions'
+import type { Invitation } from '@/lib/sites/site'
 import { serverConfig } from './env'
-import type { Mail } from './mail'
+import { oneLine, type Mail } from './mail'
 
 // Every link starts with the configured address, never with what a request claims to have been sent to.
 
@@ -29,4 +31,19 @@ export const accountExistsMail = (to: string): Mail => ({
     'To sign in, or to set a new password if you have lost it:',
   ],
   link: `${serverConfig().baseUrl}/forgotten`,
+})
+
+export const invitationMail = (
+  { id, email, role }: Pick<Invitation, 'id' | 'email' | 'role'>,
+  siteName: string,
+  inviter: string,
+): Mail => ({
+  to: email,
+  subject: `An invitation to ${oneLine(siteName)}`,
+  lines: [
+    `${oneLine(inviter)} invites you to ${oneLine(siteName)} on Lidfast, as: ${roleWords[role].toLowerCase()}.`,
+    'Open this link within a week, and sign in or sign up with this address:',
+  ],
+  link: `${serverConfig().baseUrl}/invitation/${encodeURIComponent(id)}`,
+  after: ['If you do not know the sender, leave the link alone and nothing happens.'],
 })
