@@ -1,0 +1,117 @@
+'use client'
+
+import { useSiteQuery } from '@/app/_components/live/use-site-query'
+import { ButtonLink } from '@/app/_components/ui/button-link'
+import { Caution, Cautions } from '@/app/_components/ui/caution'
+import { PageSentence } from '@/app/_components/ui/page-sentence'
+import { PieceOutline } from '@/app/_components/ui/piece-outline'
+import { Sheet } from '@/app/_components/ui/sheet'
+import { StaleState } from '@/app/_components/ui/states'
+import { TextLink } from '@/app/_components/ui/text-link'
+import { formatLength } from '@/lib/format/figures'
+import type { PieceDetail } from '@/lib/pieces/piece'
+import { may } from '@/lib/sites/permissions'
+import type { Reader } from '@/lib/sites/reader'
+import type { RoomChoice } from './first-piece'
+import { FitSoFar } from './fit-so-far'
+import { MovePiece } from './move-piece'
+import { outlineOf } from './outline-of'
+import { PieceFactsList } from './piece-facts-list'
+import { PiecePlaces } from './piece-places'
+
+type PieceViewProps = { reader: Reader; initial: PieceDetail; rooms: readonly RoomChoice[] }
+
+export function PieceView({ reader, initial, rooms }: PieceViewProps) {
+  const { data, isError } = useSiteQuery<PieceDetail>({
+    site: reader.site,
+    area: 'pieces',
+    key: ['one', initial.id],
+    path: `/pieces/${initial.id}`,
+    initial,
+  })
+  const piece = data ?? initial
+  const base = `/sites/${reader.site}`
+  const mayCarry = may(reader.role, 'carries:do')
+  const mayMove = may(reader.role, 'pieces:move')
+  const mayChange = may(reader.role, 'pieces:change')
+
+  return (
+    <>
+      <div className="flex items-start gap-5 sm:gap-8">
+        <span className="shrink-0 pl-4 sm:pl-2">
+          <PieceOutline outline={outlineOf(piece)} isOut={piece.isOut} size={84} />
+        </span>
+        <PageSentence
+          above={
+            <span>
+              <TextLink href={`${base}/pieces`}>Pieces</TextLink> {shortWords(piece, reader)}
+            </span>
+          }
+        >
+          {piece.headline}
+        </PageSentence>
+      </div>
+      {isError ? (
+        <StaleState>
+          This piece could not be fetched just now. Nothing is lost; these are the last known.
+        </StaleState>
+      ) : null}
+      {mayCarry || mayMove || mayChange ? (
+        <div className="flex flex-wrap gap-3 px-4 sm:px-0">
+          {mayCarry && !piece.isOut ? (
+            <ButtonLink href={`${base}/carry?piece=${piece.id}`} variant="filled" className="max-sm:w-full">
+              Check a carry
+            </ButtonLink>
+          ) : null}
+          {mayCarry && piece.isOut ? (
+            <ButtonLink href={`${base}/carry`} variant="filled" className="max-sm:w-full">
+              Bring it back
+            </ButtonLink>
+          ) : null}
+          {mayMove && !piece.isOut ? <MovePiece reader={reader} piece={piece} rooms={rooms} /> : null}
+          {mayChange ? (
+            <ButtonLink href={`${base}/pieces/${piece.id}/edit`} className="max-sm:grow">
+              Put facts right
+            </ButtonLink>
+          ) : null}
+        </div>
+      ) : null}
+
+      <FitSoFar piece={piece} units={reader.units} />
+      <div className="grid gap-7 xl:grid-cols-2">
+        <Sheet title="What is known of it" id="facts">
+          <PieceFactsList piece={piece} rooms={rooms} reader={reader} />
+        </Sheet>
+        <Sheet title="Where it has been" id="places">
+          <PiecePlaces piece={piece} reader={reader} />
+        </Sheet>
+      </div>
+      <Sheet title="Take care" id="care">
+        <div className="flex flex-col gap-3">
+          {piece.dust.map((note) => (
+            <Caution key={note.text}>
+              <strong>Dust:</strong> {note.text} {note.source ? `Source: ${note.source}.` : ''}
+            </Caution>
+          ))}
+          <Cautions cautions={piece.cautions} />
+        </div>
+      </Sheet>
+      {piece.note ? (
+        <Sheet title="Note" id="note">
+          <p className="max-w-words whitespace-pre-wrap">{piece.note}</p>
+        </Sheet>
+      ) : null}
+    </>
+  )
+}
+
+function shortWords(piece: PieceDetail, { units }: Reader): string {
+  return [
+    `Piece ${piece.number}, ${piece.title.toLowerCase()}`,
+    piece.jointDiameterMm === null ? '' : `${formatLength(piece.jointDiameterMm, units)} joint`,
+    piece.wallMm === null ? '' : `${formatLength(piece.wallMm, units)} wall at the spigot`,
+    piece.grain === 'end-grain' ? 'end-grain' : 'side-grain',
+  ]
+    .filter(Boolean)
+    .join(', ')
+}
