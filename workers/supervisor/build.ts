@@ -19,7 +19,9 @@ const stampOf = (root: string) => path.join(root, '.next', 'lidfast-sources')
 export async function sourcesHash(root: string): Promise<string> {
   const names = [...files]
   for (const folder of folders) {
-    const entries = await readdir(path.join(root, folder), { recursive: true, withFileTypes: true })
+    const entries = await readdir(path.join(root, folder), { recursive: true, withFileTypes: true }).catch(
+      () => [],
+    )
     for (const entry of entries) {
       const isSource = entry.isFile() && !/\.test\.tsx?$/.test(entry.name)
       if (isSource) names.push(path.relative(root, path.join(entry.parentPath, entry.name)))
