@@ -52,7 +52,7 @@ export function SegmentedTabs({
             </Tabs.Content>
           ))
         : segments.map((segment) => (
-            <Tabs.Content key={segment.value} value={segment.value} tabIndex={-1}>
+            <Tabs.Content key={segment.value} value={segment.value} tabIndex={-1} className="mt-5">
               {segment.value === value ? children : null}
             </Tabs.Content>
           ))}

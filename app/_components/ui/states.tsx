@@ -26,7 +26,7 @@ export function LoadingState({
   rows?: number
 }) {
   return (
-    <div role="status" aria-label={what} className="flex flex-col gap-4">
+    <div role="status" aria-label={what} className="flex flex-col gap-4 max-sm:px-4">
       <div aria-hidden="true" className="h-8 w-4/5 max-w-[40rem] rounded bg-steel" />
       {Array.from({ length: rows }, (_, row) => (
         <div key={row} aria-hidden="true" className="h-14 w-full rounded border border-line bg-board p-4">
