@@ -62,6 +62,7 @@ export async function loadCarryMaterial(
     const month = cutMonth(piece)
     const monthMean = month && cuts.get(monthKey(month.roomId, month.firstOn))
     return {
+      code: piece.code,
       facts: piece.facts,
       places: places.get(piece.id) ?? [],
       keepRoomId: piece.keepRoomId ?? assumedKeep?.id ?? null,
@@ -85,6 +86,7 @@ export function assumedKeepRoom<T extends Pick<RoomRecord, 'kind'>>(rooms: reado
 
 interface FactsRow {
   id: number
+  code: string
   facts: PieceFacts
   keepRoomId: number | null
   fittedRoomId: number | null
@@ -109,6 +111,7 @@ async function listFacts(
     .where('id', 'in', [...pieceIds])
     .select([
       'id',
+      'code',
       'number',
       'stage',
       'wood',
@@ -132,6 +135,7 @@ async function listFacts(
     .execute()
   return rows.map((row) => ({
     id: row.id,
+    code: row.code,
     facts: {
       number: row.number,
       stage: stageSchema.parse(row.stage),

@@ -17,6 +17,33 @@ const holdSchema = z.object({
   otherAirAt: z.number().nullable(),
 })
 
+/** What deciding needs to know of a site itself. */
+export interface NoticeSite {
+  siteId: number
+  siteCode: string
+  timeZone: string
+  quietFrom: string
+  quietTo: string
+  lockUpAt: string
+}
+
+export async function listNoticeSites(db: Kysely<Database>): Promise<NoticeSite[]> {
+  const rows = await db
+    .selectFrom('site')
+    .select(['id', 'code', 'time_zone', 'quiet_from', 'quiet_to', 'lock_up_at'])
+    .orderBy('id')
+    .execute()
+  return rows.map((row) => ({
+    siteId: row.id,
+    siteCode: row.code,
+    timeZone: row.time_zone,
+    // A time of day comes as 22:00:00.
+    quietFrom: row.quiet_from.slice(0, 5),
+    quietTo: row.quiet_to.slice(0, 5),
+    lockUpAt: row.lock_up_at.slice(0, 5),
+  }))
+}
+
 /** Keys older than this belong to occasions that are long past. */
 const rememberMs = 8 * 24 * 3_600_000
 

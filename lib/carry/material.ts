@@ -11,6 +11,8 @@ export interface CarryMaterial {
 }
 
 export interface PieceMaterial {
+  /** Its public id. */
+  code: string
   facts: PieceFacts
   /** Oldest first, as far as the history goes back. */
   places: readonly { roomId: number; fromAt: Date; toAt: Date | null; cover: PlaceCover }[]

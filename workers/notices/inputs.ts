@@ -1,0 +1,94 @@
+import type { Kysely } from 'kysely'
+import { loadCarryMaterial } from '@/db/queries/carry-inputs'
+import { type CarryRecord, listOpenCarries } from '@/db/queries/carries'
+import { listNoticePeople, type NoticeSite } from '@/db/queries/notice-state'
+import { listHangingSensors, listRoomRecords } from '@/db/queries/rooms'
+import type { Database } from '@/db/schema'
+import { carryCheck } from '@/lib/carry/check'
+import { carryCheckInput, type CarryMaterial } from '@/lib/carry/material'
+import type { NoticeCarry, NoticeInputs, NoticePiece, NoticeSensor } from '@/lib/notices/inputs'
+import { freshForMs, silentAfterMs } from '@/lib/notices/policy'
+import { isKeepingRoom } from '@/lib/rooms/room'
+
+/** How things stand at a site, judged by the same loader and the same check as its pages. */
+export async function loadNoticeInputs(
+  db: Kysely<Database>,
+  site: NoticeSite,
+  now: Date,
+): Promise<NoticeInputs> {
+  const { siteId } = site
+  const carries = await listOpenCarries(db, siteId)
+  const pieceIds = carries.flatMap((carry) => carry.pieces.map((piece) => piece.pieceId))
+  const roomIds = carries.map((carry) => carry.toRoom.roomId)
+  const [material, people, hanging, rooms] = await Promise.all([
+    loadCarryMaterial(db, site, pieceIds, roomIds, now),
+    listNoticePeople(db, siteId),
+    listHangingSensors(db, siteId),
+    listRoomRecords(db, siteId),
+  ])
+  const open = carries.map((carry) => ({ roomId: carry.toRoom.roomId, carry: noticeCarry(material, carry) }))
+
+  const sensors = hanging
+    .filter((sensor) => sensor.kind === 'device')
+    .map((sensor): NoticeSensor => {
+      const room = rooms.find(({ id }) => id === sensor.roomId)
+      const lastHeardAt = sensor.heardAt?.getTime() ?? null
+      const freshMs = freshForMs({
+        isKeepingRoom: isKeepingRoom(room?.kind ?? 'shop'),
+        isTyped: false,
+        usualGapS: sensor.usualGapS,
+      })
+      // Where another sensor of the room still speaks, its air is known.
+      const isAirKnown = material.rooms.get(sensor.roomId)?.air.kind === 'fresh'
+      const piecesOut = open
+        .filter(({ roomId, carry }) => roomId === sensor.roomId && carry.state === 'out')
+        .flatMap(({ carry }) => carry.pieces.map(({ number }) => number))
+      return {
+        code: sensor.code,
+        name: sensor.name,
+        roomName: room?.name ?? null,
+        lastHeardAt,
+        freshUntil: lastHeardAt === null ? null : lastHeardAt + freshMs,
+        silentFrom: lastHeardAt === null ? null : lastHeardAt + silentAfterMs(sensor.usualGapS),
+        piecesOutThere: isAirKnown ? [] : piecesOut,
+      }
+    })
+  return { site, carries: open.map(({ carry }) => carry), sensors, people }
+}
+
+function noticeCarry(material: CarryMaterial, carry: CarryRecord): NoticeCarry {
+  const air = material.rooms.get(carry.toRoom.roomId)?.air
+  const isOut = carry.state === 'out'
+  const pieces = carry.pieces
+    .filter((piece) => !isOut || (piece.outAt !== null && piece.backAt === null))
+    .flatMap((piece): NoticePiece[] => {
+      const known = material.pieces.get(piece.pieceId)
+      if (known === undefined) return []
+      const input = carryCheckInput(material, {
+        pieceId: piece.pieceId,
+        toRoomId: carry.toRoom.roomId,
+        startsAt: piece.outAt ?? carry.plannedAt,
+        stayMinutes: carry.stayMinutes,
+        cover: piece.cover,
+      })
+      return [
+        {
+          code: known.code,
+          number: known.facts.number,
+          stage: known.facts.stage,
+          outAt: piece.outAt?.getTime() ?? null,
+          check: input === undefined ? null : carryCheck(input),
+        },
+      ]
+    })
+  return {
+    code: carry.code,
+    state: isOut ? 'out' : 'planned',
+    plannedAt: carry.plannedAt.getTime(),
+    stayMinutes: carry.stayMinutes,
+    roomName: carry.toRoom.name,
+    madeBy: carry.createdBy,
+    airAt: air === undefined || air.kind === 'never' ? null : new Date(air.at).getTime(),
+    pieces,
+  }
+}
