@@ -1,0 +1,236 @@
+import { randomBytes } from 'node:crypto'
+import { type Kysely, sql } from 'kysely'
+import { newCode, takeIds } from '@/db/queries/counters'
+import { insertRoom } from '@/db/queries/rooms'
+import { insertSite, newTextId } from '@/db/queries/sites'
+import type { Database } from '@/db/schema'
+import type { Role } from '@/lib/sites/permissions'
+
+/** The ids, as seen from outside, of one of each thing of a site. */
+export interface Things {
+  site: string
+  room: string
+  /** A second room, a shop. */
+  shop: string
+  sensor: string
+  piece: string
+  carry: string
+  notice: string
+  /** The membership of a maker. */
+  member: string
+  invitation: string
+}
+
+export interface WorldSite {
+  siteId: number
+  siteName: string
+  organizationId: string
+  things: Things
+}
+
+export type Team = Record<Role, string>
+
+/** A site with one of each thing and a member of each role; cheap enough to have one for each request that changes it. */
+export async function makeSite(db: Kysely<Database>, team: Team): Promise<WorldSite> {
+  return db.transaction().execute(async (trx) => {
+    const now = new Date()
+    const siteName = `Yard ${randomBytes(3).toString('hex')}`
+    const made = await insertSite(
+      trx,
+      { name: siteName, timeZone: 'Europe/London', unitSystem: 'metric' },
+      team.owner,
+      now,
+    )
+    const siteId = made.id
+    const { organization_id: organizationId } = await trx
+      .selectFrom('site')
+      .where('id', '=', siteId)
+      .select('organization_id')
+      .executeTakeFirstOrThrow()
+    const others = (['maker', 'hand', 'onlooker'] as const).map((role) => ({
+      id: newTextId(),
+      organizationId,
+      userId: team[role],
+      role,
+      createdAt: now,
+    }))
+    await trx.insertInto('member').values(others).execute()
+    const room = await insertRoom(
+      trx,
+      siteId,
+      { name: 'Cupboard', kind: 'cupboard', isShared: true, note: '' },
+      now,
+    )
+    const shop = await insertRoom(trx, siteId, { name: 'Shop', kind: 'shop', isShared: false, note: '' }, now)
+    const sensor = await makeSensor(trx, siteId, room.id)
+    const piece = await makePiece(trx, siteId, room.id)
+    const carry = await makeCarry(trx, siteId, { from: room.id, to: shop.id, piece: piece.id })
+    const notice = await makeNotice(trx, siteId)
+    const invitation = newTextId()
+    await trx
+      .insertInto('invitation')
+      .values({
+        id: invitation,
+        organizationId,
+        email: `invited.${invitation.slice(0, 8).toLowerCase()}@example.org`,
+        role: 'hand',
+        status: 'pending',
+        createdAt: now,
+        expiresAt: new Date(now.getTime() + 86_400_000),
+        inviterId: team.owner,
+      })
+      .execute()
+    return {
+      siteId,
+      siteName,
+      organizationId,
+      things: {
+        site: made.site.id,
+        room: room.code,
+        shop: shop.code,
+        sensor,
+        piece: piece.code,
+        carry,
+        notice,
+        member: others[0]?.id ?? '',
+        invitation,
+      },
+    }
+  })
+}
+
+async function makeSensor(db: Kysely<Database>, siteId: number, roomId: number): Promise<string> {
+  const id = await takeIds(db, siteId, 'sensor')
+  const code = newCode()
+  await db
+    .insertInto('sensor')
+    .values({
+      site_id: siteId,
+      id,
+      code,
+      name: 'Shelf',
+      secret_hash: '$7$101$c2FsdA==$aGFzaA==',
+      secret_set_at: new Date(),
+    })
+    .execute()
+  const hungAt = new Date(Date.now() - 3_600_000)
+  await db
+    .insertInto('placement')
+    .values({ site_id: siteId, sensor_id: id, from_at: hungAt, room_id: roomId })
+    .execute()
+  await db.insertInto('sensor_state').values({ site_id: siteId, sensor_id: id }).execute()
+  return code
+}
+
+async function makePiece(
+  db: Kysely<Database>,
+  siteId: number,
+  roomId: number,
+): Promise<{ id: number; code: string }> {
+  const id = await takeIds(db, siteId, 'piece')
+  const code = newCode()
+  await db
+    .insertInto('piece')
+    .values({
+      site_id: siteId,
+      id,
+      code,
+      number: 'W1',
+      stage: 'box',
+      wood: 'fraxinus-excelsior',
+      joint_diameter_mm: 60,
+      fit_grade: 'snug',
+      keep_room_id: roomId,
+    })
+    .execute()
+  await db
+    .insertInto('piece_place')
+    .values({
+      site_id: siteId,
+      piece_id: id,
+      from_at: new Date(Date.now() - 7_200_000),
+      room_id: roomId,
+    })
+    .execute()
+  return { id, code }
+}
+
+async function makeCarry(
+  db: Kysely<Database>,
+  siteId: number,
+  way: { from: number; to: number; piece: number },
+): Promise<string> {
+  const id = await takeIds(db, siteId, 'carry')
+  const code = newCode()
+  await db
+    .insertInto('carry')
+    .values({
+      site_id: siteId,
+      id,
+      code,
+      state: 'planned',
+      to_room_id: way.to,
+      cover: 'open',
+      planned_at: new Date(Date.now() + 3_600_000),
+      stay_minutes: 60,
+    })
+    .execute()
+  await db
+    .insertInto('carry_piece')
+    .values({
+      site_id: siteId,
+      carry_id: id,
+      piece_id: way.piece,
+      from_room_id: way.from,
+      cover: 'open',
+    })
+    .execute()
+  return code
+}
+
+async function makeNotice(db: Kysely<Database>, siteId: number): Promise<string> {
+  const id = await takeIds(db, siteId, 'notice')
+  const code = newCode()
+  await db
+    .insertInto('notice')
+    .values({
+      site_id: siteId,
+      id,
+      code,
+      key: code,
+      rule: 'sensor-silent',
+      urgency: 'whenever',
+      mark: 'silent',
+      title: 'Shelf is silent',
+      at: new Date(),
+    })
+    .execute()
+  return code
+}
+
+// What requests may change of a site. That somebody was here is noted by reading, so it does not count.
+const tables = [
+  ...['room', 'sensor', 'placement', 'piece', 'piece_place', 'carry', 'carry_piece', 'notice', 'notice_seen'],
+  ...['episode', 'delivery', 'change', 'reading', 'room_hour', 'room_day', 'refused'],
+]
+
+/** Everything of a site in one text: equal before and after means that nothing was changed. */
+export async function fingerprintOf(
+  db: Kysely<Database>,
+  { siteId, organizationId }: Pick<WorldSite, 'siteId' | 'organizationId'>,
+): Promise<string> {
+  const part = (table: string, where: ReturnType<typeof sql>) =>
+    sql`select ${table}::text as part, coalesce(string_agg(t::text, ' ' order by t::text), '') as rows
+        from ${sql.table(table)} t where ${where}`
+  const parts = [
+    part('site', sql`id = ${siteId}`),
+    part('member', sql`"organizationId" = ${organizationId}`),
+    part('invitation', sql`"organizationId" = ${organizationId}`),
+    ...tables.map((table) => part(table, sql`site_id = ${siteId}`)),
+    sql`select 'wishes' as part, coalesce(string_agg(concat_ws(',', user_id, unit_system, mail_on, on_house_list), ' '), '')
+        as rows from member_setting where site_id = ${siteId}
+        and (unit_system is not null or not mail_on or on_house_list)`,
+  ]
+  const { rows } = await sql<{ part: string; rows: string }>`${sql.join(parts, sql` union all `)}`.execute(db)
+  return rows.map((row) => `${row.part}: ${row.rows}`).join('\n')
+}
