@@ -14,6 +14,8 @@ export const problems = {
   conflict: { status: 409, title: 'That clashes with what is there' },
   'name-taken': { status: 409, title: 'That name is taken' },
   'still-running': { status: 409, title: 'The same request is still being worked on' },
+  'advised-against': { status: 409, title: 'The advice is to leave it where it is' },
+  'already-out': { status: 409, title: 'That piece is out already' },
   'already-done': { status: 409, title: 'That is done already' },
   'changed-meanwhile': { status: 412, title: 'Somebody changed it meanwhile' },
   'too-large': { status: 413, title: 'The request is too large' },

@@ -141,6 +141,8 @@ export const pieceSchema = z.object({
   isOut: z.boolean(),
   keepRoom: z.object({ id: z.string(), name: z.string(), mark: z.int() }).nullable(),
   version: z.int(),
+  /** Private to its maker: only number, room and time out are given, and the rest stands empty. */
+  isHidden: z.boolean().optional(),
 })
 export type Piece = z.infer<typeof pieceSchema>
 

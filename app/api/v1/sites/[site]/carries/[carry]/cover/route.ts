@@ -1,0 +1,14 @@
+import { changeCover } from '@/app/_server/carry-steps'
+import { answer } from '@/app/_server/respond'
+import { siteRoute } from '@/app/_server/route'
+import { carryCoverSchema } from '@/lib/carry/carry'
+import { codeSchema } from '@/lib/sites/site'
+
+// Pressed twice, or sent again, it has happened once: the second answer is the carry as it is.
+export const POST = siteRoute(
+  { action: 'carries:do', params: { carry: codeSchema }, body: carryCoverSchema },
+  async ({ db, member, params, body, now }) => {
+    const carry = await changeCover(db, member, params.carry, body, now)
+    return carry.ok ? answer(carry.value, { etag: carry.value.version }) : carry
+  },
+)
