@@ -1,0 +1,25 @@
+import { Sheet } from '@/app/_components/ui/sheet'
+import type { Site } from '@/lib/sites/site'
+
+/** For those who may look and not change. */
+export function PlaceFacts({ site }: { site: Site }) {
+  const facts = [
+    ['Name', site.name],
+    ['Time zone', site.timeZone.replaceAll('_', ' ')],
+    ['Units', site.unitSystem === 'metric' ? 'metric' : 'imperial'],
+    ['Quiet hours', site.quietFrom === site.quietTo ? 'none' : `${site.quietFrom} to ${site.quietTo}`],
+    ['Lock-up', site.lockUpAt],
+  ] as const
+  return (
+    <Sheet title="The place" id="place" aside="Only an owner changes it">
+      <dl className="grid grid-cols-[8rem_minmax(0,1fr)] gap-x-4 gap-y-2">
+        {facts.map(([name, value]) => (
+          <div key={name} className="contents">
+            <dt className="text-ink-soft">{name}</dt>
+            <dd>{value}</dd>
+          </div>
+        ))}
+      </dl>
+    </Sheet>
+  )
+}

@@ -1,0 +1,37 @@
+import { may, type Role } from './permissions'
+
+const small = [
+  'No',
+  'One',
+  'Two',
+  'Three',
+  'Four',
+  'Five',
+  'Six',
+  'Seven',
+  'Eight',
+  'Nine',
+  'Ten',
+  'Eleven',
+  'Twelve',
+]
+const inWords = (count: number): string => small[count] ?? String(count)
+
+/** The sentence over People and place. The site's name in `**`; members and invitations only where they may be seen. */
+export function placeSentence(
+  siteName: string,
+  members: readonly { role: Role }[] | undefined,
+  invitations: readonly unknown[] | undefined,
+): string {
+  if (members === undefined) return `**${siteName}** is shared with you.`
+  const changers = members.filter((member) => may(member.role, 'rooms:change')).length
+  const open = invitations?.length ?? 0
+  const waiting =
+    open === 0
+      ? ''
+      : open === 1
+        ? ', and one invitation is waiting'
+        : `, and ${inWords(open).toLowerCase()} invitations are waiting`
+  if (members.length === 1) return `You have **${siteName}** to yourself${waiting}.`
+  return `${inWords(members.length)} people share **${siteName}**; ${inWords(changers).toLowerCase()} of them can change things${waiting}.`
+}
