@@ -150,8 +150,8 @@ export async function deleteSite(db: Kysely<Database>, siteId: number, now: Date
   await sql`set local statement_timeout = '5min'`.execute(db)
   await sql`
     insert into retired_code (code, retired_at)
-    select code, ${now} from site where id = ${siteId}
-    union select code, ${now} from sensor where site_id = ${siteId}
+    select code, ${now}::timestamptz from site where id = ${siteId}
+    union select code, ${now}::timestamptz from sensor where site_id = ${siteId}
     on conflict do nothing`.execute(db)
   await db.deleteFrom('reading').where('site_id', '=', siteId).execute()
   const { organization_id: organizationId } = await db

@@ -22,6 +22,8 @@ const ofSites = rows.filter(({ row }) => !isOpen(row))
 const changes = rows.filter(({ route }) => route.method !== 'GET')
 const roles = roleSchema.options
 
+type Entry = (typeof rows)[number]
+
 function isOpen({ action }: Row): boolean {
   return action === 'anyone' || action === 'signed-in'
 }
@@ -92,34 +94,50 @@ const otherThings = (site: WorldSite, from: Things): { name: keyof Things; thing
 const missing = (): Things =>
   Object.fromEntries(Object.keys(foreign.things).map((name) => [name, newCode()])) as unknown as Things
 
+function each(entries: readonly Entry[], title: string, check: (entry: Entry) => Promise<void>): void {
+  for (const entry of entries) it(`${entry.name} ${title}`, () => check(entry))
+}
+
 it('has a row for every method of every address, and none for others', () => {
   expect(Object.keys(routeTable).toSorted()).toEqual(routes.map(nameOf).toSorted())
 })
 
 describe('without a session', () => {
-  it.each(rows.filter(({ row }) => row.action !== 'anyone'))('$name says 401', async (entry) => {
-    const site = await freshSite()
-    expect((await ask(entry, site)).status).toBe(401)
-    expect((await ask(entry, site, { cookie: 'lidfast.session_token=made.up' })).status).toBe(401)
-    // F54: headers that Next sends to itself.
-    const inner = { 'x-middleware-subrequest': 'proxy:proxy:proxy:proxy:proxy', 'x-middleware-next': '1' }
-    expect((await ask(entry, site, { more: { headers: inner } })).status).toBe(401)
-  })
+  each(
+    rows.filter(({ row }) => row.action !== 'anyone'),
+    'says 401',
+    async (entry) => {
+      const site = await freshSite()
+      expect((await ask(entry, site)).status).toBe(401)
+      expect((await ask(entry, site, { cookie: 'lidfast.session_token=made.up' })).status).toBe(401)
+      // F54: headers that Next sends to itself.
+      const inner = { 'x-middleware-subrequest': 'proxy:proxy:proxy:proxy:proxy', 'x-middleware-next': '1' }
+      expect((await ask(entry, site, { more: { headers: inner } })).status).toBe(401)
+    },
+  )
 
-  it.each(rows.filter(({ row }) => row.action === 'anyone'))('$name is open', async (entry) => {
-    expect((await ask(entry, await freshSite())).status).toBe(entry.row.status ?? 200)
-  })
+  each(
+    rows.filter(({ row }) => row.action === 'anyone'),
+    'is open',
+    async (entry) => {
+      expect((await ask(entry, await freshSite())).status).toBe(entry.row.status ?? 200)
+    },
+  )
 })
 
 describe('signed in, of no matter which site', () => {
-  it.each(rows.filter(({ row }) => row.action === 'signed-in'))('$name answers', async (entry) => {
-    const reply = await ask(entry, await freshSite(), { cookie: people.stranger.cookie })
-    expect(reply.status, reply.text).toBe(entry.row.status ?? 200)
-  })
+  each(
+    rows.filter(({ row }) => row.action === 'signed-in'),
+    'answers',
+    async (entry) => {
+      const reply = await ask(entry, await freshSite(), { cookie: people.stranger.cookie })
+      expect(reply.status, reply.text).toBe(entry.row.status ?? 200)
+    },
+  )
 })
 
 describe('a member of another site', () => {
-  it.each(ofSites)('$name answers as if there were nothing', async (entry) => {
+  each(ofSites, 'answers as if there were nothing', async (entry) => {
     const site = await freshSite()
     const before = await fingerprintOf(db, site)
     const theirs = await ask(entry, site, { cookie: people.stranger.cookie })
@@ -134,7 +152,7 @@ describe('a member of another site', () => {
 })
 
 describe('each role', () => {
-  it.each(ofSites)('$name does what the table of actions says', async (entry) => {
+  each(ofSites, 'does what the table of actions says', async (entry) => {
     const { row } = entry
     for (const role of roles) {
       const site = await freshSite()
@@ -149,7 +167,7 @@ describe('each role', () => {
 })
 
 describe('ids of another site inside a request', () => {
-  it.each(ofSites)('$name treats them like ids that are not there, and changes nothing', async (entry) => {
+  each(ofSites, 'treats them like ids that are not there, and changes nothing', async (entry) => {
     const { route, row } = entry
     const site = await freshSite()
     await row.prepare?.(db, site)
@@ -183,7 +201,7 @@ describe('ids of another site inside a request', () => {
 })
 
 describe('a change', () => {
-  it.each(changes)('$name is refused from another origin, and in a form', async (entry) => {
+  each(changes, 'is refused from another origin, and in a form', async (entry) => {
     const site = await freshSite()
     await entry.row.prepare?.(db, site)
     const before = await fingerprintOf(db, site)
@@ -200,7 +218,7 @@ describe('a change', () => {
     expect(await fingerprintOf(db, site)).toBe(before)
   })
 
-  it.each(changes)('$name refuses fields that it does not know', async (entry) => {
+  each(changes, 'refuses fields that it does not know', async (entry) => {
     const site = await freshSite()
     await entry.row.prepare?.(db, site)
     const before = await fingerprintOf(db, site)
