@@ -153,7 +153,10 @@ export async function deleteSite(db: Kysely<Database>, siteId: number, now: Date
     select code, ${now}::timestamptz from site where id = ${siteId}
     union select code, ${now}::timestamptz from sensor where site_id = ${siteId}
     on conflict do nothing`.execute(db)
-  await db.deleteFrom('reading').where('site_id', '=', siteId).execute()
+  // What points at rooms goes before them: such a key is looked at before the cascade has come round to its own table.
+  for (const table of ['notice', 'piece_place', 'carry_piece', 'carry', 'piece', 'reading'] as const) {
+    await db.deleteFrom(table).where('site_id', '=', siteId).execute()
+  }
   const { organization_id: organizationId } = await db
     .selectFrom('site')
     .where('id', '=', siteId)
