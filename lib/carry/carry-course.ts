@@ -19,6 +19,7 @@ function comingSteps(input: CarryCheckInput, there: FreshAir): StepOfAir[] {
     temperatureC: usableC(hour.temperatureC),
     cover: input.cover,
     isKnown: true,
+    isCarryStart: false,
   }))
 }
 
@@ -58,6 +59,7 @@ export function courseOfCarry(
   const moistureAt = moistureCourse({
     size: joint.size,
     densityKgM3: joint.densityKgM3,
+    now: input.now,
     startMcPct: record.startMcPct,
     steps: [...before, ...steps],
   })

@@ -1,6 +1,7 @@
 import type { PlaceCover } from '@/lib/pieces/piece'
 import { diffusionMcPct } from './diffusion'
 import { EXPOSURE_OF_COVER, ringFractionChanged, type FractionChanged, type RingSize } from './joint'
+import { tabulated } from './tabulated'
 
 /** The air from one moment on, until the next step. */
 export type StepOfAir = {
@@ -12,7 +13,7 @@ export type StepOfAir = {
   /** False where a gap is bridged by the last value known. */
   readonly isKnown: boolean
   /** True where a carry starts: the wood is taken as evenly moist there, and its diffusion is taken afresh. */
-  readonly isCarryStart?: boolean
+  readonly isCarryStart: boolean
 }
 
 export type CourseInput = {
@@ -20,6 +21,8 @@ export type CourseInput = {
   readonly densityKgM3: number
   /** Mean moisture content at the first step, % MC. */
   readonly startMcPct: number
+  /** Epoch ms: what comes after it is a forecast. */
+  readonly now: number
   /** Oldest first, at least one. */
   readonly steps: readonly StepOfAir[]
 }
@@ -37,20 +40,32 @@ type Stretch = {
 }
 
 const HOUR_MS = 3_600_000
-/** How much of the air to come counts for the diffusion of a stretch that has no end yet. Status: guess, a day. */
+/** How much of a stretch that has no end yet counts for its diffusion, at least. Status: guess, a day. */
 const OPEN_STRETCH_MS = 24 * HOUR_MS
-/** What is left of a step's effect when it no longer shows, as a fraction. */
-const SPENT = 1e-6
 
-const meanOf = (values: readonly number[]): number =>
-  values.reduce((sum, value) => sum + value, 0) / Math.max(1, values.length)
+/** The mean air of a stretch up to a moment, each step by how long it lasted. */
+function meanAir(steps: readonly StepOfAir[], until: number): { emcPct: number; temperatureC: number } {
+  let lastedMs = 0
+  let emcPct = 0
+  let temperatureC = 0
+  for (let n = 0; n < steps.length; n += 1) {
+    const step = steps[n]
+    if (step === undefined || (n > 0 && step.at >= until)) break
+    // Two changes in the same instant leave a step that lasted no time; counting a millisecond keeps a mean of it.
+    const ms = Math.max(1, Math.min(until, steps[n + 1]?.at ?? until) - step.at)
+    lastedMs += ms
+    emcPct += ms * step.emcPct
+    temperatureC += ms * step.temperatureC
+  }
+  return { emcPct: emcPct / lastedMs, temperatureC: temperatureC / lastedMs }
+}
 
 function stretchesOf(steps: readonly StepOfAir[]): StepOfAir[][] {
   const stretches: StepOfAir[][] = []
   let current: StepOfAir[] = []
   for (const step of steps) {
     const before = current.at(-1)
-    if (before === undefined || before.cover !== step.cover || step.isCarryStart === true) {
+    if (before === undefined || before.cover !== step.cover || step.isCarryStart) {
       current = []
       stretches.push(current)
     }
@@ -76,7 +91,7 @@ function moistureInStretch({ steps, start, fractionChanged }: Stretch, at: numbe
     mcPct += weight * step.emcPct
     if (!step.isKnown) unknownShare += weight
     leftAtEnd = leftAtBegin
-    if (leftAtEnd < SPENT) break
+    if (leftAtEnd === 0) break
   }
   return {
     mcPct: mcPct + leftAtEnd * start.mcPct,
@@ -99,17 +114,18 @@ export function moistureCourse(input: CourseInput): (at: number) => MoistureAt {
   let start: MoistureAt = { mcPct: input.startMcPct, unknownShare: 1 }
   const parts = stretchesOf(input.steps)
   parts.forEach((steps, n) => {
-    const firstAt = steps[0]?.at ?? 0
     const nextAt = parts[n + 1]?.[0]?.at
-    const known = steps.filter((step) => nextAt !== undefined || step.at < firstAt + OPEN_STRETCH_MS)
+    const air = meanAir(steps, nextAt ?? Math.max(input.now, (steps[0]?.at ?? 0) + OPEN_STRETCH_MS))
     const stretch: Stretch = {
       steps,
       start,
-      fractionChanged: ringFractionChanged(input.size, EXPOSURE_OF_COVER[steps[0]?.cover ?? 'closed'], {
-        densityKgM3: input.densityKgM3,
-        temperatureC: meanOf(known.map((step) => step.temperatureC)),
-        mcPct: diffusionMcPct(start.mcPct, meanOf(known.map((step) => step.emcPct))),
-      }),
+      fractionChanged: tabulated(
+        ringFractionChanged(input.size, EXPOSURE_OF_COVER[steps[0]?.cover ?? 'closed'], {
+          densityKgM3: input.densityKgM3,
+          temperatureC: air.temperatureC,
+          mcPct: diffusionMcPct(start.mcPct, air.emcPct),
+        }),
+      ),
     }
     made.push(stretch)
     if (nextAt !== undefined) start = moistureInStretch(stretch, nextAt)

@@ -1,3 +1,4 @@
+import type { PlaceCover } from '@/lib/pieces/piece'
 import type { HourOfAir } from './carry-check'
 import type { Ring } from './joint-defaults'
 import { moistureCourse, type MoistureAt, type StepOfAir } from './moisture-course'
@@ -26,6 +27,14 @@ export type HistoryInput = {
 export const usableC = (temperatureC: number): number =>
   Math.min(TEMPERATURE_MAX_C, Math.max(TEMPERATURE_MIN_C, temperatureC))
 
+const stepOf = (
+  at: number,
+  emcPct: number,
+  temperatureC: number,
+  cover: PlaceCover,
+  isKnown: boolean,
+): StepOfAir => ({ at, emcPct, temperatureC: usableC(temperatureC), cover, isKnown, isCarryStart: false })
+
 /**
  * The record as steps of air. A gap, marked by null or by hours that are not there at all, holds the last value known
  * and is marked unknown.
@@ -44,10 +53,12 @@ export function stepsOfHistory(
   hours.forEach((hour, n) => {
     heldEmcPct = hour.emcPct ?? heldEmcPct
     heldC = hour.temperatureC ?? heldC
-    const step = { emcPct: heldEmcPct, temperatureC: usableC(heldC), cover: hour.cover }
-    steps.push({ ...step, at: hour.at, isKnown: hour.emcPct !== null })
+    const isKnown = hour.emcPct !== null
+    steps.push(stepOf(hour.at, heldEmcPct, heldC, hour.cover, isKnown))
     const nextAt = hours[n + 1]?.at ?? until
-    if (nextAt > hour.at + HOUR_MS) steps.push({ ...step, at: hour.at + HOUR_MS, isKnown: false })
+    if (nextAt > hour.at + HOUR_MS) {
+      steps.push(stepOf(hour.at + HOUR_MS, heldEmcPct, heldC, hour.cover, false))
+    }
   })
   return { startMcPct, steps }
 }
@@ -75,7 +86,7 @@ export function ringMoisture(ring: Ring, input: HistoryInput, now: number): Ring
   const moisture =
     record.steps.length === 0
       ? { mcPct: record.startMcPct, unknownShare: 1 }
-      : moistureCourse({ size: ring.size, densityKgM3: ring.densityKgM3, ...record })(now)
+      : moistureCourse({ size: ring.size, densityKgM3: ring.densityKgM3, now, ...record })(now)
   const gapHours = record.steps.reduce((sum, step, n) => {
     const endAt = record.steps[n + 1]?.at ?? now
     return step.isKnown ? sum : sum + (endAt - step.at) / HOUR_MS

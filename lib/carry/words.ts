@@ -35,12 +35,12 @@ export function reasonWords(figures: ReasonFigures): string {
   const lossWords = `it is ${millimetres(figures.lossMm)} tighter one way and easier the other`
   if (figures.isPast) {
     sentences.push(
-      `Its joint has already moved past what it may lose: turned a quarter, ${lossWords}, of ${allowanceWords(figures.allowanceMm)}.`,
+      `Its joint has already moved past its allowance of ${allowanceWords(figures.allowanceMm)}: turned a quarter, ${lossWords}.`,
     )
     return sentences.join(' ')
   }
   sentences.push(`${changeWords(figures.changePct, figures.stayMinutes)}; turned a quarter, ${lossWords}.`)
-  sentences.push(`It may lose ${allowanceWords(figures.allowanceMm)}.`)
+  sentences.push(`Its allowance is ${allowanceWords(figures.allowanceMm)}.`)
   return sentences.join(' ')
 }
 
