@@ -8,6 +8,7 @@ import {
   formatMass,
   formatPoints,
   formatTemperature,
+  formatUsed,
 } from './figures'
 
 const plain = (text: string) => text.replaceAll('\u00a0', ' ')
@@ -43,6 +44,14 @@ describe('figures as a reader sees them', () => {
     expect(plain(formatFineLength(0.163, 'imperial'))).toBe('0.006 in')
     expect(plain(formatMass(84.46))).toBe('84.5 g')
     expect(plain(formatMass(28.349523125, 'imperial'))).toBe('1.00 oz')
+  })
+
+  it('tells a share used in words a maker would use, and owns up past the end', () => {
+    expect(formatUsed(0.02)).toBe('hardly any used')
+    expect(formatUsed(0.24)).toBe('a quarter used')
+    expect(formatUsed(0.5)).toBe('half used')
+    expect(formatUsed(1)).toBe('all used')
+    expect(formatUsed(1.4)).toBe('more than all used')
   })
 
   it('counts in the singular and the plural', () => {

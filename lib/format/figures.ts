@@ -56,6 +56,24 @@ export function formatCount(count: number, one: string, many = `${one}s`): strin
   return `${String(count)} ${count === 1 ? one : many}`
 }
 
+/** A share of what a lid may lose, in words: "a quarter used", "half used", "more than all used". */
+export function formatUsed(fraction: number): string {
+  if (fraction > 1.02) return 'more than all used'
+  const step = USED_WORDS.find(([upTo]) => fraction <= upTo)
+  return `${step?.[1] ?? 'all'} used`
+}
+
+const USED_WORDS: readonly (readonly [number, string])[] = [
+  [0.05, 'hardly any'],
+  [0.17, 'a tenth'],
+  [0.29, 'a quarter'],
+  [0.41, 'a third'],
+  [0.58, 'half'],
+  [0.71, 'two thirds'],
+  [0.87, 'three quarters'],
+  [0.97, 'nearly all'],
+]
+
 function trimmed(value: number, digits: number): string {
   return fixed(value, digits).replace(/\.0+$/, '')
 }

@@ -8,6 +8,7 @@ import {
   formatFullMoment,
   formatMoment,
   formatRelativeDay,
+  formatShortMoment,
 } from './times'
 
 const LONDON = 'Europe/London'
@@ -44,6 +45,11 @@ describe('times as a reader sees them', () => {
     expect(formatMoment('2026-03-06T10:00:00Z', LONDON, now)).toBe('tomorrow 10:00')
     expect(formatMoment('2026-03-07T11:00:00Z', LONDON, now)).toBe('Saturday 11:00')
     expect(formatMoment('2026-02-01T11:00:00Z', LONDON, now)).toBe('Sun 1 Feb, 11:00')
+  })
+
+  it('names the weekday in a figure only when it is another day in the zone', () => {
+    expect(formatShortMoment('2026-03-05T14:00:00Z', LONDON, now)).toBe('14:00')
+    expect(formatShortMoment('2026-03-05T19:00:00Z', KOLKATA, now)).toBe('Fri 00:30')
   })
 
   it('gives the zone with a full moment', () => {

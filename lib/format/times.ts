@@ -44,6 +44,12 @@ export function formatMoment(at: Date | string, timeZone: string, now: Date): st
   return `${formatDay(at, timeZone, now)}, ${clock}`
 }
 
+/** A moment in a figure: "14:00" today, "Tue 14:00" on another day. */
+export function formatShortMoment(at: Date | string, timeZone: string, now: Date): string {
+  const local = inZone(at, timeZone)
+  return format(local, dayOn(at, timeZone) === dayOn(now, timeZone) ? 'HH:mm' : 'EEE HH:mm')
+}
+
 /** The whole moment, for titles and tables: "Thu 5 Mar 2026, 13:10:42 GMT". */
 export function formatFullMoment(at: Date | string, timeZone: string): string {
   const zone = new Intl.DateTimeFormat('en-GB', { timeZone, timeZoneName: 'short' })

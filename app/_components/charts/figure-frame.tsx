@@ -1,7 +1,6 @@
 'use client'
 
 import { type ReactNode, useId, useState } from 'react'
-import { classNames } from '../ui/class-names'
 
 type FigureFrameProps = {
   title?: ReactNode
@@ -10,6 +9,8 @@ type FigureFrameProps = {
   tableName: string
   table: ReactNode
   headingLevel?: 2 | 3
+  /** A small figure in a row of others has its button below it. */
+  isButtonBelow?: boolean
   className?: string
   children: ReactNode
 }
@@ -21,36 +22,45 @@ export function FigureFrame({
   tableName,
   table,
   headingLevel = 2,
+  isButtonBelow = false,
   className,
   children,
 }: FigureFrameProps) {
   const [open, setOpen] = useState(false)
   const tableId = useId()
   const Heading = headingLevel === 2 ? 'h2' : 'h3'
+  const button = (
+    <button
+      type="button"
+      aria-expanded={open}
+      aria-controls={tableId}
+      onClick={() => {
+        setOpen(!open)
+      }}
+      className="min-h-11 text-heart underline decoration-1 underline-offset-4 hover:decoration-2"
+    >
+      {tableName}
+    </button>
+  )
   return (
     <figure className={className}>
-      <div className="flex flex-wrap items-baseline justify-between gap-x-4">
-        <div className="flex flex-wrap items-baseline gap-x-4">
-          {title ? <Heading className="text-title font-semibold">{title}</Heading> : null}
-          {aside ? <span className="text-ink-soft">{aside}</span> : null}
+      {title || aside || !isButtonBelow ? (
+        <div className="flex flex-wrap items-baseline justify-between gap-x-4">
+          <div className="flex flex-wrap items-baseline gap-x-4">
+            {title ? <Heading className="text-title font-semibold">{title}</Heading> : null}
+            {aside ? <span className="text-ink-soft">{aside}</span> : null}
+          </div>
+          {isButtonBelow ? null : button}
         </div>
-        <button
-          type="button"
-          aria-expanded={open}
-          aria-controls={tableId}
-          onClick={() => {
-            setOpen(!open)
-          }}
-          className="min-h-11 text-heart underline decoration-1 underline-offset-4 hover:decoration-2"
-        >
-          {tableName}
-        </button>
-      </div>
+      ) : null}
       {children}
+      {isButtonBelow ? button : null}
       <div
         id={tableId}
         hidden={!open}
-        className={classNames('mt-4 overflow-x-auto')}
+        role="region"
+        aria-label={tableName}
+        className="mt-4 max-h-[28rem] overflow-auto"
         tabIndex={open ? 0 : undefined}
       >
         {open ? table : null}
