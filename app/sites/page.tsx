@@ -19,11 +19,16 @@ export default async function SitesPage() {
   return (
     <PublicShell narrow actions={<SignOut className="min-h-11" />}>
       <PageSentence>
-        {sites.length === 0
-          ? `Welcome, ${user.name}. **Two rooms** make a beginning: where boxes are kept, and where you turn.`
-          : sites.length === 1
-            ? 'You belong to **one site**.'
-            : `You belong to **${String(sites.length)} sites**.`}
+        {sites.length === 0 ? (
+          <>
+            Welcome, {user.name}. <strong>Two rooms</strong> make a beginning: where boxes are kept, and where
+            you turn.
+          </>
+        ) : sites.length === 1 ? (
+          'You belong to one site.'
+        ) : (
+          `You belong to ${String(sites.length)} sites.`
+        )}
       </PageSentence>
       {sites.length > 0 ? (
         <Sheet title="Your sites" id="sites">

@@ -1,6 +1,14 @@
 import { describe, expect, it } from 'vitest'
-import { movedWords, piecesHeadline, quarterTurnWords, usedWords, woodWords } from './wording'
+import { plainText } from '@/lib/format/sentence'
+import {
+  movedWords,
+  piecesHeadline as headlineParts,
+  quarterTurnWords,
+  usedWords,
+  woodWords,
+} from './wording'
 
+const piecesHeadline = (...of: Parameters<typeof headlineParts>) => plainText(headlineParts(...of))
 const numbers = (...of: string[]) => of.map((number) => ({ number }))
 
 describe('the sentence over the pieces', () => {
@@ -11,10 +19,10 @@ describe('the sentence over the pieces', () => {
     expect(piecesHeadline([], false)).toContain('Five answers')
   })
   it('names who is out', () => {
-    expect(piecesHeadline(numbers('207'), true)).toBe('**207** is logged out; nothing else is.')
-    expect(piecesHeadline(numbers('207', '219', '224'), true)).toBe('**207, 219 and 224** are logged out.')
+    expect(piecesHeadline(numbers('207'), true)).toBe('207 is logged out; nothing else is.')
+    expect(piecesHeadline(numbers('207', '219', '224'), true)).toBe('207, 219 and 224 are logged out.')
     expect(piecesHeadline(numbers('1', '2', '3', '4', '5', '6'), true)).toBe(
-      '**1, 2, 3 and 3 more** are logged out.',
+      '1, 2, 3 and 3 more are logged out.',
     )
   })
 })

@@ -1,4 +1,5 @@
 import { formatFineLength, formatPoints } from '@/lib/format/figures'
+import { say, strong, type TextPart } from '@/lib/format/sentence'
 import type { UnitSystem } from '@/lib/sites/site'
 import { findSpecies } from '@/lib/wood/species'
 import type { FitGrade, Grain, Piece, PieceDetail, Stage, WoodKind } from './piece'
@@ -39,16 +40,17 @@ export function woodWords(slug: string | null): string {
 type ListedOut = Pick<Piece, 'number'>
 
 /** The sentence over the list of pieces. `hasAny` says whether any piece is known at all. */
-export function piecesHeadline(out: readonly ListedOut[], hasAny: boolean): string {
-  if (!hasAny) return 'No piece is known here yet. **Five answers** make the first.'
-  if (out.length === 0) return 'Nothing is logged out.'
+export function piecesHeadline(out: readonly ListedOut[], hasAny: boolean): TextPart[] {
+  if (!hasAny) return say`No piece is known here yet. ${strong('Five answers')} make the first.`
   const numbers = out.map((piece) => piece.number)
-  if (numbers.length === 1) return `**${numbers[0] ?? ''}** is logged out; nothing else is.`
+  const last = numbers.at(-1)
+  if (last === undefined) return say`Nothing is logged out.`
+  if (numbers.length === 1) return say`${strong(last)} is logged out; nothing else is.`
   const told =
     numbers.length <= 4
-      ? `${numbers.slice(0, -1).join(', ')} and ${numbers.at(-1) ?? ''}`
+      ? `${numbers.slice(0, -1).join(', ')} and ${last}`
       : `${numbers.slice(0, 3).join(', ')} and ${String(numbers.length - 3)} more`
-  return `**${told}** are logged out.`
+  return say`${strong(told)} are logged out.`
 }
 
 type Moved = NonNullable<PieceDetail['mc']>

@@ -1,4 +1,5 @@
 import { formatCount, formatEmc } from '@/lib/format/figures'
+import { say, strong, type TextPart } from '@/lib/format/sentence'
 import { formatMoment } from '@/lib/format/times'
 import type { Sensor, SensorCredential, SensorStateWord } from './sensor'
 
@@ -16,10 +17,11 @@ export const coinCellCaution =
 
 type Headlined = Pick<Sensor, 'name' | 'state'>
 
-/** The sentence over the list: what needs someone first. Names in `**`. */
-export function sensorsHeadline(sensors: readonly Headlined[]): string {
+/** The sentence over the list: what needs someone first. */
+export function sensorsHeadline(sensors: readonly Headlined[]): TextPart[] {
   const inUse = sensors.filter((sensor) => sensor.state !== 'retired')
-  if (inUse.length === 0) return 'No sensor hangs here yet. **Add one**, and its room keeps watch by itself.'
+  if (inUse.length === 0)
+    return say`No sensor hangs here yet. ${strong('Add one')}, and its room keeps watch by itself.`
   const silent = inUse.filter((sensor) => sensor.state === 'silent')
   const unheard = inUse.filter((sensor) => sensor.state === 'never-heard')
   const heard = inUse.length - silent.length - unheard.length
@@ -30,11 +32,15 @@ export function sensorsHeadline(sensors: readonly Headlined[]): string {
         ? ' The other one is heard from.'
         : ` The other ${String(heard)} are heard from.`
   if (silent.length > 0) {
-    return `**${listed(silent)}** ${silent.length === 1 ? 'is' : 'are'} silent: look at the battery and the way to it.${rest}`
+    const verb = silent.length === 1 ? 'is' : 'are'
+    return say`${strong(listed(silent))} ${verb} silent: look at the battery and the way to it.${rest}`
   }
-  if (unheard.length > 0)
-    return `**${listed(unheard)}** ${unheard.length === 1 ? 'has' : 'have'} never been heard.${rest}`
-  return heard === 1 ? 'The one sensor is heard from.' : `All ${formatCount(heard, 'sensor')} are heard from.`
+  if (unheard.length > 0) {
+    return say`${strong(listed(unheard))} ${unheard.length === 1 ? 'has' : 'have'} never been heard.${rest}`
+  }
+  return heard === 1
+    ? say`The one sensor is heard from.`
+    : say`All ${formatCount(heard, 'sensor')} are heard from.`
 }
 
 function listed(sensors: readonly Headlined[]): string {
@@ -70,18 +76,19 @@ export const countWords: Readonly<Record<string, string>> = {
 
 type Sentenced = Pick<Sensor, 'name' | 'state' | 'room' | 'last' | 'heardAt' | 'clock'>
 
-/** The sentence over one sensor's page. Names and figures in `**`. */
-export function sensorSentence(sensor: Sentenced, timeZone: string, now: Date): string {
+/** The sentence over one sensor's page. */
+export function sensorSentence(sensor: Sentenced, timeZone: string, now: Date): TextPart[] {
+  const name = strong(sensor.name)
   const where = sensor.room ? ` in ${sensor.room.name}` : ''
-  if (sensor.state === 'retired') return `**${sensor.name}** is retired; its readings are kept.`
+  if (sensor.state === 'retired') return say`${name} is retired; its readings are kept.`
   if (sensor.state === 'never-heard')
-    return `**${sensor.name}**${where} has never been heard. Put its secret in, and it starts.`
-  const since = sensor.heardAt ? ` since **${formatMoment(sensor.heardAt, timeZone, now)}**` : ''
+    return say`${name}${where} has never been heard. Put its secret in, and it starts.`
+  const since = sensor.heardAt ? say` since ${strong(formatMoment(sensor.heardAt, timeZone, now))}` : ''
   if (sensor.state === 'silent')
-    return `**${sensor.name}**${where} has been silent${since}: look at its battery and the way to it.`
-  if (sensor.state === 'late') return `**${sensor.name}**${where} is later than usual; not heard${since}.`
+    return say`${name}${where} has been silent${since}: look at its battery and the way to it.`
+  if (sensor.state === 'late') return say`${name}${where} is later than usual; not heard${since}.`
   if (sensor.clock !== 'right')
-    return `**${sensor.name}**${where} is heard from, but **its clock is wrong**: set it.`
-  const says = sensor.last ? ` and says **${formatEmc(sensor.last.emcPct)}**` : ''
-  return `**${sensor.name}**${where} is alive${says}.`
+    return say`${name}${where} is heard from, but ${strong('its clock is wrong')}: set it.`
+  const says = sensor.last ? say` and says ${strong(formatEmc(sensor.last.emcPct))}` : ''
+  return say`${name}${where} is alive${says}.`
 }

@@ -1,3 +1,4 @@
+import { say, strong, type TextPart } from '@/lib/format/sentence'
 import { may, type Role } from './permissions'
 
 const small = [
@@ -17,13 +18,14 @@ const small = [
 ]
 const inWords = (count: number): string => small[count] ?? String(count)
 
-/** The sentence over People and place. The site's name in `**`; members and invitations only where they may be seen. */
+/** The sentence over People and place. Members and invitations only where they may be seen. */
 export function placeSentence(
   siteName: string,
   members: readonly { role: Role }[] | undefined,
   invitations: readonly unknown[] | undefined,
-): string {
-  if (members === undefined) return `**${siteName}** is shared with you.`
+): TextPart[] {
+  const site = strong(siteName)
+  if (members === undefined) return say`${site} is shared with you.`
   const changers = members.filter((member) => may(member.role, 'rooms:change')).length
   const open = invitations?.length ?? 0
   const waiting =
@@ -32,6 +34,7 @@ export function placeSentence(
       : open === 1
         ? ', and one invitation is waiting'
         : `, and ${inWords(open).toLowerCase()} invitations are waiting`
-  if (members.length === 1) return `You have **${siteName}** to yourself${waiting}.`
-  return `${inWords(members.length)} people share **${siteName}**; ${inWords(changers).toLowerCase()} of them can change things${waiting}.`
+  if (members.length === 1) return say`You have ${site} to yourself${waiting}.`
+  const can = inWords(changers).toLowerCase()
+  return say`${inWords(members.length)} people share ${site}; ${can} of them can change things${waiting}.`
 }

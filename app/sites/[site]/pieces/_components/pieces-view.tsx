@@ -37,7 +37,7 @@ export function PiecesView({ reader, initial, initialQuery, out, rooms, hasAny }
   ) : null
   return (
     <>
-      <PageSentence>{piecesHeadline(outNow.items, hasAny)}</PageSentence>
+      <PageSentence parts={piecesHeadline(outNow.items, hasAny)} />
       {hasAny ? (
         <Sheet title="Pieces" id="pieces" action={add}>
           <PieceList reader={reader} initial={initial} initialQuery={initialQuery} rooms={rooms} />

@@ -86,7 +86,7 @@ export function PlaceView({
 
   return (
     <>
-      <PageSentence>{placeSentence(site.name, memberList?.items, invitationList?.items)}</PageSentence>
+      <PageSentence parts={placeSentence(site.name, memberList?.items, invitationList?.items)} />
       <div className="px-4 sm:hidden">
         <Field label="Part of People and place">
           <Select

@@ -73,9 +73,13 @@ export function AddSensor({ reader, rooms, roomId }: AddSensorProps) {
   return (
     <>
       <PageSentence above="A new sensor, a sentence at a time">
-        {made === null
-          ? 'Say what it is called and where it hangs; the rest of the sentence follows.'
-          : `**${made.sensor.name}** is known here. Copy its secret now: it is shown once.`}
+        {made === null ? (
+          'Say what it is called and where it hangs; the rest of the sentence follows.'
+        ) : (
+          <>
+            <strong>{made.sensor.name}</strong> is known here. Copy its secret now: it is shown once.
+          </>
+        )}
       </PageSentence>
       <form
         noValidate

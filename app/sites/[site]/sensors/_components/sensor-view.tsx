@@ -45,15 +45,14 @@ export function SensorView({ reader, initial, rooms, refused }: SensorViewProps)
   return (
     <>
       <PageSentence
+        parts={sensorSentence(sensor, timeZone, new Date(at))}
         above={
           <>
             <TextLink href={`/sites/${site}/sensors`}>Sensors</TextLink>
             <SensorState state={sensor.state} />
           </>
         }
-      >
-        {sensorSentence(sensor, timeZone, new Date(at))}
-      </PageSentence>
+      />
       {isError ? (
         <StaleState>
           This sensor could not be fetched just now. Nothing is lost; these are the last known.

@@ -44,7 +44,7 @@ export function SensorsView({ reader, initial }: { reader: Reader; initial: Sens
   )
   return (
     <>
-      <PageSentence>{sensorsHeadline(devices)}</PageSentence>
+      <PageSentence parts={sensorsHeadline(devices)} />
       {isError ? (
         <StaleState>
           The sensors could not be fetched just now. Nothing is lost; these are the last known.

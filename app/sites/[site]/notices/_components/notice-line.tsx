@@ -1,0 +1,97 @@
+'use client'
+
+import { apiFetch } from '@/app/_components/api'
+import { siteKey } from '@/app/_components/live/site-keys'
+import { Button } from '@/app/_components/ui/button'
+import { ButtonLink } from '@/app/_components/ui/button-link'
+import { classNames } from '@/app/_components/ui/class-names'
+import { Mark } from '@/app/_components/ui/mark'
+import { RichText } from '@/app/_components/ui/rich-text'
+import { useAction } from '@/app/_components/use-action'
+import { formatFullMoment, formatMoment } from '@/lib/format/times'
+import type { Notice, Rule } from '@/lib/notices/notice'
+import { may } from '@/lib/sites/permissions'
+import type { Reader } from '@/lib/sites/reader'
+
+/** Where a notice leads, in words. */
+const linkWords: Readonly<Record<Rule, string>> = {
+  'planned-carry': 'Open the carry',
+  'verdict-worse': 'Open the carry',
+  'time-nearly-out': 'Open the carry',
+  'time-out': 'Open the carry',
+  'lock-up': 'What is out',
+  'last-call': 'What is out',
+  'sensor-silent': 'Open the sensor',
+}
+
+export function NoticeLine({ reader, notice }: { reader: Reader; notice: Notice }) {
+  const path = `/sites/${reader.site}/notices/${notice.id}`
+  const invalidates = [
+    siteKey(reader.site, 'notices'),
+    siteKey(reader.site, 'frame'),
+    siteKey(reader.site, 'now'),
+  ]
+  const change = useAction<{ isSeen?: true; isAcknowledged?: true }, unknown>({
+    run: (body) => apiFetch(path, { method: 'PATCH', body }),
+    invalidates,
+  })
+  const moment = (at: string) => formatMoment(at, reader.timeZone, new Date(reader.at))
+  const mayAcknowledge = may(reader.role, 'notices:acknowledge')
+
+  return (
+    <li className="grid grid-cols-[1.75rem_minmax(0,1fr)] gap-x-2 py-4 sm:grid-cols-[2rem_7.5rem_minmax(0,1fr)_auto]">
+      <Mark kind={notice.mark} size={20} className="mt-0.5" />
+      <time
+        dateTime={notice.at}
+        title={formatFullMoment(notice.at, reader.timeZone)}
+        className="text-label leading-6 text-ink-soft"
+      >
+        {moment(notice.at)}
+      </time>
+      <div className="max-sm:col-start-2">
+        <p className={classNames('max-w-words', !notice.isSeen && 'font-semibold')}>
+          <RichText parts={notice.title} />
+        </p>
+        {notice.body ? (
+          <p className="max-w-words">
+            <RichText parts={notice.body} />
+          </p>
+        ) : null}
+        <p className="text-label text-ink-soft">
+          {notice.delivery}.{' '}
+          {notice.acknowledgedAt
+            ? `Acknowledged${notice.acknowledgedBy ? ` by ${notice.acknowledgedBy}` : ''}, ${moment(notice.acknowledgedAt)}.`
+            : notice.isSeen
+              ? 'Seen.'
+              : 'Not seen yet.'}
+        </p>
+      </div>
+      <div className="flex flex-wrap items-start gap-2 max-sm:col-start-2 max-sm:mt-2 sm:justify-end">
+        {notice.link ? (
+          <ButtonLink href={`/sites/${reader.site}${notice.link}`}>{linkWords[notice.rule]}</ButtonLink>
+        ) : null}
+        {mayAcknowledge && notice.acknowledgedAt === null && notice.urgency !== 'whenever' ? (
+          <Button
+            pending={change.pending}
+            onClick={() => {
+              change.act({ isSeen: true, isAcknowledged: true })
+            }}
+          >
+            I have it in hand
+          </Button>
+        ) : null}
+        {!notice.isSeen ? (
+          <Button
+            variant="link"
+            pending={change.pending}
+            onClick={() => {
+              change.act({ isSeen: true })
+            }}
+          >
+            Seen
+          </Button>
+        ) : null}
+      </div>
+    </li>
+  )
+}
