@@ -4,6 +4,7 @@ import { changedFields, insertChange } from '@/db/queries/changes'
 import { notifySite } from '@/db/queries/live'
 import { findSiteMember, type SiteMember } from '@/db/queries/members'
 import { insertRoom } from '@/db/queries/rooms'
+import { holdFiguresAlone, rebuildSiteFigures } from '@/db/queries/rollups'
 import {
   countOwnedSites,
   deleteSite,
@@ -12,7 +13,7 @@ import {
   listSitesOf,
   updateSite,
 } from '@/db/queries/sites'
-import { inTransaction } from '@/db/queries/transaction'
+import { allowLongStatements, inTransaction } from '@/db/queries/transaction'
 import type { Database } from '@/db/schema'
 import { ok } from '@/lib/result'
 import { demoAccounts } from '@/lib/sites/demo'
@@ -54,9 +55,16 @@ export async function changeSite(
   change: SiteChange,
   version: number,
 ): Promise<Outcome<Site>> {
+  const isNewZone = change.timeZone !== undefined && change.timeZone !== member.timeZone
   return inTransaction(db, async (trx) => {
+    // Days begin at other instants in another zone, so every daily figure is made again, in the same step.
+    if (isNewZone) await holdFiguresAlone(trx, member.siteId)
     const changed = await updateSite(trx, member.siteId, version, change)
     if (changed === undefined) return staleSite(trx, member)
+    if (isNewZone) {
+      await allowLongStatements(trx)
+      await rebuildSiteFigures(trx, member.siteId)
+    }
     const { id, name, timeZone, unitSystem, quietFrom, quietTo, lockUpAt } = member.site
     const before = { name, timeZone, unitSystem, quietFrom, quietTo, lockUpAt }
     await insertChange(trx, member.siteId, {
@@ -95,6 +103,8 @@ export async function removeSite(
     return failField('not-possible', 'name', 'not the name of this site')
   }
   return inTransaction(db, async (trx) => {
+    await allowLongStatements(trx)
+    await holdFiguresAlone(trx, member.siteId)
     await notifySite(trx, member.siteId, 'site')
     await deleteSite(trx, member.siteId, now)
     if (member.site.isDemo) {

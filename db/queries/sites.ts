@@ -146,8 +146,6 @@ export async function lockMembersOf(db: Kysely<Database>, siteId: number): Promi
  * given out again. Call it in a transaction.
  */
 export async function deleteSite(db: Kysely<Database>, siteId: number, now: Date): Promise<void> {
-  // Years of readings take longer than a page may wait.
-  await sql`set local statement_timeout = '5min'`.execute(db)
   await sql`
     insert into retired_code (code, retired_at)
     select code, ${now}::timestamptz from site where id = ${siteId}
