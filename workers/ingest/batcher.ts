@@ -150,7 +150,8 @@ export function createBatcher<T>(options: BatcherOptions<T>): Batcher<T> {
       isStopping = true
       isFull()
       const timer = setTimeout(() => giveUp.abort(), deadlineMs)
-      await running
+      // A write that hangs is not waited for beyond the deadline.
+      await Promise.race([running, delay(deadlineMs, undefined, { ref: false })])
       clearTimeout(timer)
     },
   }
