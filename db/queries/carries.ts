@@ -244,3 +244,22 @@ export async function findCarryOfPieceOut(
     .executeTakeFirst()
   return row && { carryCode: row.code }
 }
+
+/** A planned carry that a piece is in. */
+export async function findPlannedCarry(
+  db: Kysely<Database>,
+  siteId: number,
+  pieceId: number,
+): Promise<{ carryCode: string } | undefined> {
+  const row = await db
+    .selectFrom('carry_piece')
+    .innerJoin('carry', (join) =>
+      join.onRef('carry.site_id', '=', 'carry_piece.site_id').onRef('carry.id', '=', 'carry_piece.carry_id'),
+    )
+    .where('carry_piece.site_id', '=', siteId)
+    .where('carry_piece.piece_id', '=', pieceId)
+    .where('carry.state', '=', 'planned')
+    .select('carry.code')
+    .executeTakeFirst()
+  return row && { carryCode: row.code }
+}

@@ -258,6 +258,23 @@ export async function listPiecesInRoom(
   return rows.map(pieceOf)
 }
 
+/** More would not find room on the rule. */
+const standingMax = 300
+
+/** The pieces in use, the newest first, for the rule. */
+export async function listStandingPieces(
+  db: Kysely<Database>,
+  siteId: number,
+  viewer: Viewer,
+): Promise<PieceRecord[]> {
+  const rows = await pieceQuery(db, siteId, viewer)
+    .where('piece.archived_at', 'is', null)
+    .orderBy('piece.id', 'desc')
+    .limit(standingMax)
+    .execute()
+  return rows.map(pieceOf)
+}
+
 /**
  * Locks pieces for the rest of the transaction, always in the same order, so that two people who carry the same pieces
  * wait for one another instead of both going on, and never for ever.

@@ -104,6 +104,9 @@ export const pieceMoveSchema = z.strictObject({
   at: instant.optional(),
 })
 
+/** What happens to a piece. So far it can be moved. */
+export const pieceEventSchema = z.strictObject({ kind: z.literal('move'), ...pieceMoveSchema.shape })
+
 export const pieceSortSchema = z.enum([
   'number',
   '-number',
@@ -163,6 +166,8 @@ export const pieceDetailSchema = pieceSchema.extend({
   isPrivate: z.boolean(),
   isShared: z.boolean(),
   isYours: z.boolean(),
+  /** Put away; it can be brought out again. */
+  isArchived: z.boolean().optional(),
   createdAt: instant,
   /** What was not told and is taken as usual, each as a short phrase. */
   assumed: z.array(z.string()),

@@ -1,0 +1,168 @@
+import 'server-only'
+import type { Kysely } from 'kysely'
+import { listCarriesBackSince, listOpenCarries } from '@/db/queries/carries'
+import { assumedKeepRoom, loadCarryMaterial } from '@/db/queries/carry-inputs'
+import type { SiteMember } from '@/db/queries/members'
+import { listStandingPieces, type PieceRecord } from '@/db/queries/pieces'
+import { listSensorRecords, type SensorRecord } from '@/db/queries/sensors'
+import { countPieces } from '@/db/queries/site-counts'
+import type { Database } from '@/db/schema'
+import type { Carry } from '@/lib/carry/carry'
+import { ringOfPiece } from '@/lib/carry/joint-defaults'
+import { baselineOf, type CarryMaterial, historyOfPiece } from '@/lib/carry/material'
+import { ringMoisture } from '@/lib/carry/ring-moisture'
+import { undoBringBackMs } from '@/lib/notices/policy'
+import { nowHeadline } from '@/lib/now/headline'
+import { needs, type SensorForNeeds } from '@/lib/now/needs'
+import type { NowView, RuleRoom } from '@/lib/now/now-view'
+import { ruleBrackets, ruleShelf, type ShelfPiece } from '@/lib/now/rule'
+import { pieceOutline, pieceTitle } from '@/lib/pieces/title'
+import { settledTo } from '@/lib/rooms/air'
+import { sensorClock, sensorState } from '@/lib/sensors/state'
+import { may } from '@/lib/sites/permissions'
+import { pieceIdsOf, roomIdsOf, viewCarries } from './carry-view'
+import { viewerOf } from './piece-view'
+import { isOnlooker, type SeenRoom, seenRooms } from './rooms'
+
+/** Everything that the page Now shows. What a role may not see is not loaded for it. */
+export async function getNow(db: Kysely<Database>, member: SiteMember, now: Date): Promise<NowView> {
+  const { siteId } = member
+  const seesCarries = may(member.role, 'carries:see')
+  const [rooms, records, back, sensors, pieces, pieceCount] = await Promise.all([
+    seenRooms(db, member, now),
+    seesCarries ? listOpenCarries(db, siteId) : [],
+    seesCarries ? listCarriesBackSince(db, siteId, new Date(now.getTime() - undoBringBackMs)) : [],
+    may(member.role, 'sensors:see') ? listSensorRecords(db, siteId) : [],
+    listStandingPieces(db, siteId, viewerOf(member)),
+    countPieces(db, siteId, isOnlooker(member)),
+  ])
+  const pieceIds = new Set([...pieceIdsOf(records), ...pieces.map((piece) => piece.id)])
+  const material = await loadCarryMaterial(db, member, [...pieceIds], roomIdsOf(records), now)
+  const carries = await viewCarries(db, member, records, now, material)
+  const out = byUrgency(carries.filter((carry) => carry.state === 'out'))
+  const planned = carries.filter((carry) => carry.state === 'planned')
+  const ruleRooms = roomsOfRule(rooms)
+  const clock = { timeZone: member.timeZone, now }
+  const devices = sensors.filter((sensor) => sensor.kind === 'device').map((one) => signsOf(one, now))
+  const silent = devices.filter((sensor) => sensor.state === 'silent')
+  return {
+    at: now.toISOString(),
+    headline: nowHeadline({ out, planned, rooms: ruleRooms, ...clock }),
+    out,
+    planned,
+    rule: {
+      rooms: ruleRooms,
+      brackets: ruleBrackets([...out, ...planned], now),
+      // Where a piece's wood stands tells which rooms it was in and when: not for onlookers.
+      shelf: seesCarries ? ruleShelf(pieces.flatMap((piece) => shelfPiece(piece, material) ?? [])) : [],
+    },
+    justBack: (await viewCarries(db, member, back, now, material)).flatMap((carry) =>
+      justBack(carry, back, now),
+    ),
+    needs: needs({ sensors: devices, rooms: rooms.map((room) => room.view) }, clock),
+    silent: silent.map((sensor) => ({
+      id: sensor.id,
+      name: sensor.name,
+      roomName: sensor.roomName,
+      since: sensor.heardAt?.toISOString() ?? null,
+    })),
+    counts: { rooms: rooms.length, sensors: devices.length, pieces: pieceCount },
+    ...settledOverall(rooms, now),
+  }
+}
+
+const edgeOf = (carry: Carry): number =>
+  Math.min(
+    ...carry.pieces.map(({ check, backAt }) =>
+      backAt === null && check?.kind === 'verdict' && check.earlyAt !== null
+        ? new Date(check.earlyAt).getTime()
+        : Infinity,
+    ),
+  )
+
+/** Overdue first, then by the moment at which the first piece has to be in. */
+function byUrgency(carries: readonly Carry[]): Carry[] {
+  const late = (carry: Carry) => carry.pieces.some((piece) => piece.isOverdue)
+  return carries.toSorted((a, b) => Number(late(b)) - Number(late(a)) || edgeOf(a) - edgeOf(b) || 0)
+}
+
+function roomsOfRule(rooms: readonly SeenRoom[]): RuleRoom[] {
+  const focus = assumedKeepRoom(rooms.map((room) => room.record))
+  return rooms.map(({ record, view }) => ({
+    id: view.id,
+    name: view.name,
+    kind: view.kind,
+    mark: view.mark,
+    air: view.air,
+    isFocus: record.id === focus?.id,
+    year:
+      view.year === null || record.id !== focus?.id
+        ? null
+        : { emcPctLow: view.year.emcPctLow, emcPctHigh: view.year.emcPctHigh, days: view.year.days },
+  }))
+}
+
+/** Boxes only: a blank's wall isn't known, and its wood lags too far behind for the ring's reckoning. */
+function shelfPiece(piece: PieceRecord, material: CarryMaterial): ShelfPiece | undefined {
+  const own = material.pieces.get(piece.id)
+  if (own === undefined || piece.isHidden || piece.stage !== 'box' || piece.woodKind !== 'plain')
+    return undefined
+  const input = { history: historyOfPiece(material, own), baselineEmcPct: baselineOf(material, own) }
+  const moisture = ringMoisture(ringOfPiece(own.facts), input, material.now.getTime())
+  if (moisture === undefined) return undefined
+  return {
+    number: piece.number,
+    title: pieceTitle(piece),
+    outline: pieceOutline(piece),
+    isOut: piece.isOut,
+    mcPct: moisture.mcPct,
+  }
+}
+
+function signsOf(sensor: SensorRecord, now: Date): SensorForNeeds {
+  return {
+    id: sensor.code,
+    name: sensor.name,
+    roomName: sensor.room?.name ?? null,
+    state: sensorState(sensor, now),
+    heardAt: sensor.heardAt,
+    createdAt: sensor.createdAt,
+    clock: sensorClock(sensor, now),
+  }
+}
+
+function justBack(
+  carry: Carry,
+  records: Awaited<ReturnType<typeof listCarriesBackSince>>,
+  now: Date,
+): NowView['justBack'] {
+  const record = records.find((one) => one.code === carry.id)
+  const roomOfBack = new Map(record?.pieces.map((piece) => [piece.backAt?.toISOString(), piece.backRoomName]))
+  return carry.pieces.flatMap((piece) =>
+    piece.backAt !== null && new Date(piece.backAt).getTime() > now.getTime() - undoBringBackMs
+      ? {
+          carryId: carry.id,
+          number: piece.number,
+          roomName: roomOfBack.get(piece.backAt) ?? '',
+          at: piece.backAt,
+        }
+      : [],
+  )
+}
+
+function settledOverall(
+  rooms: readonly SeenRoom[],
+  now: Date,
+): { completeTo: string | null; age: number | null } {
+  // A room that fell silent does not hold the others back; its own page says so.
+  const fresh = rooms.filter((room) => room.view.air.kind === 'fresh')
+  const settled = (fresh.length > 0 ? fresh : rooms).map((room) =>
+    settledTo(room.readings, room.record.kind, now),
+  )
+  const completeTo = settled
+    .flatMap((one) => one.completeTo ?? [])
+    .toSorted()
+    .at(0)
+  const ages = settled.flatMap((one) => one.age ?? [])
+  return { completeTo: completeTo ?? null, age: ages.length === 0 ? null : Math.min(...ages) }
+}
