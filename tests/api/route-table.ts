@@ -2,6 +2,7 @@ import type { Kysely } from 'kysely'
 import type { Database } from '@/db/schema'
 import type { Action } from '@/lib/sites/permissions'
 import type { Things, WorldSite } from '../support/api-world'
+import type { Reply } from '../support/session'
 
 /**
  * One row for each method of each address. `walk.test.ts` finds the addresses by the route files, asks each of them as
@@ -21,8 +22,20 @@ export interface Row {
   /** What a member who may do it gets; 200 unless it says otherwise. */
   status?: number
   /** What has to be there beside the things of every fresh site. */
-  prepare?: (db: Kysely<Database>, site: WorldSite) => Promise<void>
+  prepare?: (arranging: Arranging) => Promise<unknown>
 }
+
+export interface Arranging {
+  db: Kysely<Database>
+  site: WorldSite
+  /** Sends a request to an address below the site as its owner, and fails unless it is done. */
+  asOwner: (method: string, path: string, body?: unknown) => Promise<Reply>
+}
+
+const tomorrow = () => new Date(Date.now() + 86_400_000).toISOString()
+
+const start = ({ asOwner, site }: Arranging) =>
+  asOwner('POST', `/carries/${site.things.carry}/start`, { againstAdvice: true })
 
 export const routeTable: Record<string, Row> = {
   'GET /api/health': { action: 'anyone' },
@@ -69,10 +82,9 @@ export const routeTable: Record<string, Row> = {
   'DELETE /api/v1/sites/[site]/members/me': {
     action: 'settings:own',
     status: 204,
-    prepare: async (db, { things }) => {
-      // A second owner, so that the first may go.
-      await db.updateTable('member').set({ role: 'owner' }).where('id', '=', things.member).execute()
-    },
+    // A second owner, so that the first may go.
+    prepare: ({ db, site }) =>
+      db.updateTable('member').set({ role: 'owner' }).where('id', '=', site.things.member).execute(),
   },
   'GET /api/v1/sites/[site]/invitations': { action: 'invitations:see' },
   'POST /api/v1/sites/[site]/invitations': {
@@ -83,5 +95,115 @@ export const routeTable: Record<string, Row> = {
   'DELETE /api/v1/sites/[site]/invitations/[invitation]': { action: 'invitations:change', status: 204 },
   'POST /api/v1/sites/[site]/invitations/[invitation]/resend': { action: 'invitations:change' },
 
+  'GET /api/v1/sites/[site]/now': { action: 'now:see' },
   'GET /api/v1/sites/[site]/rooms': { action: 'rooms:see' },
+  'POST /api/v1/sites/[site]/rooms': {
+    action: 'rooms:change',
+    body: () => ({ name: 'Study', kind: 'house' }),
+    status: 201,
+  },
+  'GET /api/v1/sites/[site]/rooms/[room]': { action: 'rooms:see' },
+  'PATCH /api/v1/sites/[site]/rooms/[room]': {
+    action: 'rooms:change',
+    body: () => ({ name: 'Airing cupboard' }),
+    ifMatch: true,
+  },
+  'DELETE /api/v1/sites/[site]/rooms/[room]': {
+    action: 'rooms:change',
+    ifMatch: true,
+    status: 204,
+    // A room that something is in stays; this one is cleared first.
+    prepare: async ({ db, site: { siteId } }) => {
+      for (const table of ['carry_piece', 'piece_place', 'carry', 'piece', 'placement', 'sensor'] as const)
+        await db.deleteFrom(table).where('site_id', '=', siteId).execute()
+    },
+  },
+  'GET /api/v1/sites/[site]/rooms/[room]/series': {
+    action: 'rooms:readings',
+    query: () => ({ from: '2026-01-01T00:00:00Z', to: '2026-02-01T00:00:00Z' }),
+  },
+
+  'GET /api/v1/sites/[site]/carries': { action: 'carries:see', query: () => ({ state: 'open' }) },
+  'POST /api/v1/sites/[site]/carries': {
+    action: 'carries:do',
+    body: ({ piece, shop }) => ({
+      pieceIds: [piece],
+      toRoomId: shop,
+      cover: 'open',
+      stayMinutes: 30,
+      plannedAt: tomorrow(),
+    }),
+    status: 201,
+  },
+  'POST /api/v1/sites/[site]/carries/check': {
+    action: 'carries:see',
+    body: ({ piece, shop }) => ({ pieceIds: [piece], toRoomId: shop, cover: 'open', stayMinutes: 30 }),
+  },
+  'GET /api/v1/sites/[site]/carries/[carry]': { action: 'carries:see' },
+  'PATCH /api/v1/sites/[site]/carries/[carry]': {
+    action: 'carries:do',
+    body: ({ piece }) => ({ stayMinutes: 45, pieceIds: [piece] }),
+    ifMatch: true,
+  },
+  'POST /api/v1/sites/[site]/carries/[carry]/start': {
+    action: 'carries:do',
+    body: () => ({ againstAdvice: true }),
+  },
+  'POST /api/v1/sites/[site]/carries/[carry]/cover': {
+    action: 'carries:do',
+    body: ({ piece }) => ({ pieceIds: [piece], cover: 'bagged' }),
+    prepare: start,
+  },
+  'POST /api/v1/sites/[site]/carries/[carry]/bring-back': {
+    action: 'carries:do',
+    body: ({ piece, room }) => ({ pieceIds: [piece], roomId: room }),
+    prepare: start,
+  },
+  'POST /api/v1/sites/[site]/carries/[carry]/undo': {
+    action: 'carries:do',
+    prepare: async (arranging) => {
+      await start(arranging)
+      await arranging.asOwner('POST', `/carries/${arranging.site.things.carry}/bring-back`, {})
+    },
+  },
+  'POST /api/v1/sites/[site]/carries/[carry]/call-off': { action: 'carries:do' },
+
+  'GET /api/v1/bench/air': bench({ temperatureC: '20', humidityPct: '50' }),
+  'GET /api/v1/bench/diffusion': bench({ temperatureC: '20', mcPct: '9', densityKgM3: '680' }),
+  'GET /api/v1/bench/emc': bench({ temperatureC: '20', humidityPct: '50' }),
+  'GET /api/v1/bench/fit': bench({
+    diameterMm: '60',
+    clearanceMm: '0.1',
+    angleDeg: '90',
+    mcChangePct: '2',
+    species: 'fraxinus-excelsior',
+  }),
+  'GET /api/v1/bench/follow': bench({ shape: 'slab', biot: 'inf', fourier: '0.2' }),
+  'GET /api/v1/bench/humidity': bench({ temperatureC: '20', emcPct: '9' }),
+  'GET /api/v1/bench/joint': bench({
+    densityKgM3: '680',
+    temperatureC: '15',
+    mcPct: '9',
+    wallMm: '2.5',
+    faces: '2',
+    spigotMm: '6',
+    lidMm: '8',
+    hours: '2',
+  }),
+  'GET /api/v1/bench/time-out': bench({
+    species: 'fraxinus-excelsior',
+    diameterMm: '60',
+    wallMm: '2.5',
+    spigotMm: '6',
+    cover: 'open',
+    allowanceMm: '0.08',
+    fromMcPct: '8',
+    toEmcPct: '16',
+    temperatureC: '12',
+  }),
+  'GET /api/v1/bench/warming': bench({ fromC: '5', fromHumidityPct: '85', toC: '15' }),
+}
+
+function bench(query: Record<string, string>): Row {
+  return { action: 'anyone', query: () => query }
 }

@@ -79,6 +79,21 @@ function ask(
   })
 }
 
+async function prepare({ row }: Entry, site: WorldSite): Promise<void> {
+  await row.prepare?.({
+    db,
+    site,
+    asOwner: async (method, path, body) => {
+      const reply = await call(method, `/api/v1/sites/${site.things.site}${path}`, {
+        cookie: people.owner.cookie,
+        body,
+      })
+      if (reply.status >= 300) throw new Error(`${method} ${path}: ${reply.status} ${reply.text}`)
+      return reply
+    },
+  })
+}
+
 /** What an answer gives away: everything but the moment and the connection. */
 const seen = ({ status, text, headers }: Reply) => ({
   status,
@@ -156,7 +171,7 @@ describe('each role', () => {
     const { row } = entry
     for (const role of roles) {
       const site = await freshSite()
-      await row.prepare?.(db, site)
+      await prepare(entry, site)
       const before = await fingerprintOf(db, site)
       const reply = await ask(entry, site, { cookie: people[role].cookie })
       const allowed = !isOpen(row) && may(role, row.action as Parameters<typeof may>[1])
@@ -170,7 +185,7 @@ describe('ids of another site inside a request', () => {
   each(ofSites, 'treats them like ids that are not there, and changes nothing', async (entry) => {
     const { route, row } = entry
     const site = await freshSite()
-    await row.prepare?.(db, site)
+    await prepare(entry, site)
     const before = [await fingerprintOf(db, site), await fingerprintOf(db, foreign)]
     const { cookie } = people.owner
 
@@ -203,7 +218,7 @@ describe('ids of another site inside a request', () => {
 describe('a change', () => {
   each(changes, 'is refused from another origin, and in a form', async (entry) => {
     const site = await freshSite()
-    await entry.row.prepare?.(db, site)
+    await prepare(entry, site)
     const before = await fingerprintOf(db, site)
     const { cookie } = people.owner
     const from = (headers: Record<string, string | null>) => ask(entry, site, { cookie, more: { headers } })
@@ -220,7 +235,7 @@ describe('a change', () => {
 
   each(changes, 'refuses fields that it does not know', async (entry) => {
     const site = await freshSite()
-    await entry.row.prepare?.(db, site)
+    await prepare(entry, site)
     const before = await fingerprintOf(db, site)
     const body = {
       ...entry.row.body?.(site.things, site),
