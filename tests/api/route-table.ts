@@ -37,6 +37,8 @@ const tomorrow = () => new Date(Date.now() + 86_400_000).toISOString()
 const start = ({ asOwner, site }: Arranging) =>
   asOwner('POST', `/carries/${site.things.carry}/start`, { againstAdvice: true })
 
+const callOff = ({ asOwner, site }: Arranging) => asOwner('POST', `/carries/${site.things.carry}/call-off`)
+
 export const routeTable: Record<string, Row> = {
   'GET /api/health': { action: 'anyone' },
   'GET /api/v1/demo/inbox': { action: 'anyone' },
@@ -167,6 +169,48 @@ export const routeTable: Record<string, Row> = {
     },
   },
   'POST /api/v1/sites/[site]/carries/[carry]/call-off': { action: 'carries:do' },
+
+  'GET /api/v1/sites/[site]/species': { action: 'pieces:see' },
+  'GET /api/v1/sites/[site]/pieces': {
+    action: 'pieces:see',
+    query: ({ room }) => ({ room, sort: '-created' }),
+  },
+  'POST /api/v1/sites/[site]/pieces': {
+    action: 'pieces:change',
+    body: ({ room, shop }) => ({
+      number: 'W2',
+      wood: 'juglans-nigra',
+      jointDiameterMm: 58,
+      fitGrade: 'snug',
+      roomId: room,
+      keepRoomId: room,
+      fittedRoomId: shop,
+    }),
+    status: 201,
+  },
+  'GET /api/v1/sites/[site]/pieces/[piece]': { action: 'pieces:see' },
+  'PATCH /api/v1/sites/[site]/pieces/[piece]': {
+    action: 'pieces:change',
+    body: ({ room, shop }) => ({ finish: 'wax', keepRoomId: room, fittedRoomId: shop }),
+    ifMatch: true,
+  },
+  'DELETE /api/v1/sites/[site]/pieces/[piece]': {
+    action: 'pieces:change',
+    ifMatch: true,
+    status: 204,
+    prepare: callOff,
+  },
+  'POST /api/v1/sites/[site]/pieces/[piece]/restore': {
+    action: 'pieces:change',
+    prepare: ({ db, site: { siteId } }) =>
+      db.updateTable('piece').set({ archived_at: new Date() }).where('site_id', '=', siteId).execute(),
+  },
+  'POST /api/v1/sites/[site]/pieces/[piece]/events': {
+    action: 'pieces:move',
+    body: ({ shop }) => ({ kind: 'move', roomId: shop }),
+    status: 201,
+    prepare: callOff,
+  },
 
   'GET /api/v1/bench/air': bench({ temperatureC: '20', humidityPct: '50' }),
   'GET /api/v1/bench/diffusion': bench({ temperatureC: '20', mcPct: '9', densityKgM3: '680' }),

@@ -140,6 +140,7 @@ async function makePiece(
       wood: 'fraxinus-excelsior',
       joint_diameter_mm: 60,
       fit_grade: 'snug',
+      is_shared: true,
       keep_room_id: roomId,
     })
     .execute()
