@@ -1,0 +1,51 @@
+'use client'
+
+import { apiFetch } from '@/app/_components/api'
+import { siteKey } from '@/app/_components/live/site-keys'
+import { useAction } from '@/app/_components/use-action'
+import type { Carry } from '@/lib/carry/carry'
+import type { Cover } from '@/lib/pieces/piece'
+
+type PiecesOf = { carryId: string; pieceIds?: string[] }
+
+/** What can be done to a carry from wherever it is shown. */
+export function useCarryActions(site: string) {
+  const invalidates = [
+    siteKey(site, 'now'),
+    siteKey(site, 'carries'),
+    siteKey(site, 'pieces'),
+    siteKey(site, 'rooms'),
+  ]
+  const post = (carryId: string, verb: string, body?: unknown) =>
+    apiFetch<Carry>(`/sites/${site}/carries/${carryId}/${verb}`, { method: 'POST', body })
+
+  return {
+    start: useAction({
+      run: ({ carryId, againstAdvice }: { carryId: string; againstAdvice: boolean }) =>
+        post(carryId, 'start', { againstAdvice }),
+      invalidates,
+      errors: 'inline',
+    }),
+    bringBack: useAction({
+      run: ({ carryId, pieceIds, roomId }: PiecesOf & { roomId?: string }) =>
+        post(carryId, 'bring-back', { pieceIds, roomId }),
+      invalidates,
+    }),
+    cover: useAction({
+      run: ({ carryId, pieceIds, cover }: PiecesOf & { cover: Cover }) =>
+        post(carryId, 'cover', { pieceIds, cover }),
+      invalidates,
+    }),
+    callOff: useAction({
+      run: ({ carryId }: { carryId: string }) => post(carryId, 'call-off'),
+      invalidates,
+      done: 'Called off',
+    }),
+    undo: useAction({
+      run: ({ carryId }: { carryId: string }) => post(carryId, 'undo'),
+      invalidates,
+    }),
+  }
+}
+
+export type CarryActions = ReturnType<typeof useCarryActions>
