@@ -21,7 +21,11 @@ export function MovePiece({ reader, piece, rooms }: MovePieceProps) {
   const [roomId, setRoomId] = useState(others[0]?.id ?? '')
   const move = useAction<{ roomId: string }, unknown>({
     run: (body, idempotencyKey) =>
-      apiFetch(`/sites/${reader.site}/pieces/${piece.id}/move`, { method: 'POST', body, idempotencyKey }),
+      apiFetch(`/sites/${reader.site}/pieces/${piece.id}/events`, {
+        method: 'POST',
+        body: { kind: 'move', ...body },
+        idempotencyKey,
+      }),
     invalidates: [siteKey(reader.site, 'pieces'), siteKey(reader.site, 'now'), siteKey(reader.site, 'rooms')],
     done: (_answer, input) =>
       `${piece.number} is in ${rooms.find((room) => room.id === input.roomId)?.name ?? 'its new place'}`,

@@ -1,7 +1,6 @@
 'use client'
 
 import { useSiteQuery } from '@/app/_components/live/use-site-query'
-import { ButtonLink } from '@/app/_components/ui/button-link'
 import { Caution, Cautions } from '@/app/_components/ui/caution'
 import { PageSentence } from '@/app/_components/ui/page-sentence'
 import { PieceOutline } from '@/app/_components/ui/piece-outline'
@@ -10,12 +9,11 @@ import { StaleState } from '@/app/_components/ui/states'
 import { TextLink } from '@/app/_components/ui/text-link'
 import { formatLength } from '@/lib/format/figures'
 import type { PieceDetail } from '@/lib/pieces/piece'
-import { may } from '@/lib/sites/permissions'
 import type { Reader } from '@/lib/sites/reader'
 import type { RoomChoice } from './first-piece'
 import { FitSoFar } from './fit-so-far'
-import { MovePiece } from './move-piece'
 import { outlineOf } from './outline-of'
+import { PieceActions } from './piece-actions'
 import { PieceFactsList } from './piece-facts-list'
 import { PiecePlaces } from './piece-places'
 
@@ -31,9 +29,6 @@ export function PieceView({ reader, initial, rooms }: PieceViewProps) {
   })
   const piece = data ?? initial
   const base = `/sites/${reader.site}`
-  const mayCarry = may(reader.role, 'carries:do')
-  const mayMove = may(reader.role, 'pieces:move')
-  const mayChange = may(reader.role, 'pieces:change')
 
   return (
     <>
@@ -56,27 +51,23 @@ export function PieceView({ reader, initial, rooms }: PieceViewProps) {
           This piece could not be fetched just now. Nothing is lost; these are the last known.
         </StaleState>
       ) : null}
-      {mayCarry || mayMove || mayChange ? (
-        <div className="flex flex-wrap gap-3 px-4 sm:px-0">
-          {mayCarry && !piece.isOut ? (
-            <ButtonLink href={`${base}/carry?piece=${piece.id}`} variant="filled" className="max-sm:w-full">
-              Check a carry
-            </ButtonLink>
-          ) : null}
-          {mayCarry && piece.isOut ? (
-            <ButtonLink href={`${base}/carry`} variant="filled" className="max-sm:w-full">
-              Bring it back
-            </ButtonLink>
-          ) : null}
-          {mayMove && !piece.isOut ? <MovePiece reader={reader} piece={piece} rooms={rooms} /> : null}
-          {mayChange ? (
-            <ButtonLink href={`${base}/pieces/${piece.id}/edit`} className="max-sm:grow">
-              Put facts right
-            </ButtonLink>
-          ) : null}
-        </div>
-      ) : null}
+      <PieceActions reader={reader} piece={piece} rooms={rooms} />
+      {piece.isHidden === true ? (
+        <Sheet>
+          <p>This piece is private to its maker: others see its number, its room and its time out.</p>
+        </Sheet>
+      ) : (
+        <PieceSheets reader={reader} piece={piece} rooms={rooms} />
+      )}
+    </>
+  )
+}
 
+type PieceProps = { reader: Reader; piece: PieceDetail; rooms: readonly RoomChoice[] }
+
+function PieceSheets({ reader, piece, rooms }: PieceProps) {
+  return (
+    <>
       <FitSoFar piece={piece} units={reader.units} />
       <div className="grid gap-7 xl:grid-cols-2">
         <Sheet title="What is known of it" id="facts">

@@ -1,0 +1,28 @@
+import type { Metadata } from 'next'
+import { notFound } from 'next/navigation'
+import { database } from '@/app/_server/database'
+import { getPiece } from '@/app/_server/pieces'
+import { listRooms } from '@/app/_server/rooms'
+import { requireMember } from '@/app/_server/session'
+import { readerOf } from '@/lib/sites/reader'
+import { PieceView } from '../_components/piece-view'
+
+export const metadata: Metadata = { title: 'Piece' }
+
+type Props = { params: Promise<{ site: string; piece: string }> }
+
+export default async function PiecePage({ params }: Props) {
+  const { site, piece: code } = await params
+  const member = await requireMember(site, 'pieces:see')
+  const now = new Date()
+  const db = database()
+  const [piece, rooms] = await Promise.all([getPiece(db, member, code, now), listRooms(db, member, now)])
+  if (!piece.ok) notFound()
+  return (
+    <PieceView
+      reader={readerOf(member, now)}
+      initial={piece.value}
+      rooms={rooms.map(({ id, name, mark }) => ({ id, name, mark }))}
+    />
+  )
+}

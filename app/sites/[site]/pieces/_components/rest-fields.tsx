@@ -1,0 +1,43 @@
+'use client'
+
+import { useFormContext } from 'react-hook-form'
+import { Checkbox } from '@/app/_components/ui/checkbox'
+import { Field } from '@/app/_components/ui/field'
+import { Input } from '@/app/_components/ui/input'
+import { Textarea } from '@/app/_components/ui/textarea'
+import type { PieceChange } from '@/lib/pieces/piece'
+import { type EditFieldsProps, RoomField } from './edit-fields'
+
+export function RestFields({ rooms, problem }: EditFieldsProps) {
+  const { register, formState } = useFormContext<PieceChange>()
+  return (
+    <div className="grid gap-5 md:grid-cols-2">
+      <RoomField
+        name="keepRoomId"
+        label="Kept for"
+        hint="The room that it is being kept to match, usually the house cupboard."
+        rooms={rooms}
+      />
+      <Field label="Finish" error={formState.errors.finish?.message ?? problem?.errorOf('finish')}>
+        <Input autoComplete="off" {...register('finish')} />
+      </Field>
+      <Field
+        label="Note"
+        className="md:col-span-2"
+        error={formState.errors.note?.message ?? problem?.errorOf('note')}
+      >
+        <Textarea rows={4} {...register('note')} />
+      </Field>
+      <Checkbox
+        label="Private"
+        hint="Others see its number, its room and its time out, and nothing else."
+        {...register('isPrivate')}
+      />
+      <Checkbox
+        label="Shared with onlookers"
+        hint="They see it among the pieces."
+        {...register('isShared')}
+      />
+    </div>
+  )
+}

@@ -1,0 +1,34 @@
+import type { Metadata } from 'next'
+import { database } from '@/app/_server/database'
+import { listPieces } from '@/app/_server/pieces'
+import { listRooms } from '@/app/_server/rooms'
+import { requireMember } from '@/app/_server/session'
+import { nextNumber } from '@/lib/pieces/next-number'
+import { readerOf } from '@/lib/sites/reader'
+import { FirstPiece } from '../_components/first-piece'
+
+export const metadata: Metadata = { title: 'A new piece' }
+
+type Props = {
+  params: Promise<{ site: string }>
+  searchParams: Promise<Record<string, string | string[] | undefined>>
+}
+
+export default async function NewPiecePage({ params, searchParams }: Props) {
+  const member = await requireMember((await params).site, 'pieces:change')
+  const now = new Date()
+  const db = database()
+  const [rooms, latest] = await Promise.all([
+    listRooms(db, member, now),
+    listPieces(db, member, { sort: '-created', limit: 1 }),
+  ])
+  const { room } = await searchParams
+  return (
+    <FirstPiece
+      reader={readerOf(member, now)}
+      rooms={rooms.map(({ id, name, mark }) => ({ id, name, mark }))}
+      number={nextNumber(latest.ok ? latest.value.items[0]?.number : undefined)}
+      roomId={rooms.find(({ id }) => id === room)?.id}
+    />
+  )
+}
