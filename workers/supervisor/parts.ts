@@ -20,11 +20,6 @@ function part(context: PartContext, name: string, args: readonly string[]) {
   return { name, command: node, args, cwd: context.root, env: context.env }
 }
 
-export const migrateTask = (context: PartContext): Task => ({
-  ...part(context, 'migrate', typescript('db/migrate.ts')),
-  words: 'Bringing the database up to date',
-})
-
 export const buildTask = (context: PartContext): Task => ({
   ...part(context, 'build', [next, 'build']),
   words: 'Building the pages',

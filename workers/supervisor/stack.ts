@@ -13,6 +13,7 @@ import {
 } from './data-folder'
 import * as parts from './parts'
 import { isPortFree, reachable } from './ports'
+import { migrate } from './migrate'
 import { createSupervisor, type Service, type Supervisor, type Task } from './supervisor'
 
 export interface StackOptions {
@@ -83,10 +84,14 @@ export async function createStack(options: StackOptions): Promise<Stack> {
     await createMissingDatabase(prepared.adminUrl, databaseName)
   }
 
-  async function fillDatabase(): Promise<void> {
+  async function startBase(): Promise<void> {
     if (ownDatabase) await startDatabase()
-    await run(parts.migrateTask(context))
-    if (config.demo) await run(parts.demoTask(context, options.resetDemo === true))
+    await migrate(config.databaseUrl ?? '', say)
+    await Promise.all([
+      config.demo ? run(parts.demoTask(context, options.resetDemo === true)) : undefined,
+      serve(parts.broker(context)),
+      ownMail ? serve(parts.mailTrap(context)) : undefined,
+    ])
   }
 
   async function build(): Promise<void> {
@@ -102,8 +107,8 @@ export async function createStack(options: StackOptions): Promise<Stack> {
     supervisor,
     async start() {
       // The first to fail stops the start; the other is ended by `stop` and its own failure is no news.
-      await Promise.all([build(), fillDatabase()])
-      await Promise.all([serve(parts.broker(context)), ownMail ? serve(parts.mailTrap(context)) : undefined])
+      await Promise.all([build(), startBase()])
+      // Not before the demo is whole: these would act on what is half made.
       await Promise.all([
         serve(parts.notices(context)),
         serve(parts.delivery(context)),

@@ -1,5 +1,5 @@
 import { exitWords, spawnChild, type Child } from './child'
-import { openPartLog, warningIn } from './part-log'
+import { openPartLog, warningIn, type PartLog } from './part-log'
 import { waitUntil } from './wait'
 
 export interface Part {
@@ -48,12 +48,16 @@ export class Stopped extends Error {}
 interface Running {
   service: Service
   child?: Child
+  /** Until it is ready for the first time, or is given up. */
+  starting: Promise<void>
+  /** The loop that starts it again. */
   done: Promise<void>
 }
 
 const progressEveryMs = 10_000
 const steadyAfterMs = 60_000
 const startTries = 3
+const taskGraceMs = 5_000
 
 export function createSupervisor(options: SupervisorOptions): Supervisor {
   const { say, logFolder, firstDelayMs = 500, longestDelayMs = 30_000 } = options
@@ -71,6 +75,7 @@ export function createSupervisor(options: SupervisorOptions): Supervisor {
     const began = performance.now()
     const seconds = () => Math.round((performance.now() - began) / 1000)
     const child = await spawnChild({ ...task, onLine: log.write })
+    if (stopping.signal.aborted) await child.stop('SIGTERM', taskGraceMs)
     tasks.add(child)
     const progress = setInterval(() => say(`${task.words} … ${seconds()} s`), progressEveryMs)
     const exit = await child.exited
@@ -93,21 +98,24 @@ export function createSupervisor(options: SupervisorOptions): Supervisor {
       const warning = warningIn(line)
       if (warning !== undefined) say(`${service.name}: ${warning}`)
     }
-    const running: Running = { service, done: Promise.resolve() }
+    const running: Running = { service, starting: Promise.resolve(), done: Promise.resolve() }
     services.push(running)
-    for (let attempt = 1; ; attempt += 1) {
-      const child = await spawnChild({ ...service, onLine })
-      running.child = child
-      if (await becomesReady(service, child, stopping.signal)) break
-      refuseWhenStopping()
-      await child.stop('SIGKILL', 0)
-      if (attempt === startTries) {
-        throw new Error(
-          `${service.name} did not start. Its last lines, the rest is in ${log.file}:\n${log.tail().join('\n')}`,
-        )
-      }
-    }
+    running.starting = startFirst(running, onLine, log)
+    await running.starting
     running.done = keepAlive(running, onLine)
+  }
+
+  async function startFirst(running: Running, onLine: (line: string) => void, log: PartLog): Promise<void> {
+    const { service } = running
+    for (let attempt = 1; ; attempt += 1) {
+      running.child = await spawnChild({ ...service, onLine })
+      if (await becomesReady(service, running.child, stopping.signal)) return
+      refuseWhenStopping()
+      await running.child.stop('SIGKILL', 0)
+      if (attempt < startTries) continue
+      const rest = `Its last lines, the rest is in ${log.file}:\n${log.tail().join('\n')}`
+      throw new Error(`${service.name} did not start. ${rest}`)
+    }
   }
 
   /** Waits for the end of the service again and again, and starts it anew after a growing delay. */
@@ -135,13 +143,15 @@ export function createSupervisor(options: SupervisorOptions): Supervisor {
   let stopped: Promise<void> | undefined
   async function stopAll(): Promise<void> {
     stopping.abort()
-    await Promise.all([...tasks].map((child) => child.stop('SIGTERM', 5_000)))
+    await Promise.all([...tasks].map((child) => child.stop('SIGTERM', taskGraceMs)))
     for (const running of services.toReversed()) {
-      const { stopSignal = 'SIGTERM', graceMs = 8_000 } = running.service
-      await running.child?.stop(stopSignal, graceMs)
+      const end = () =>
+        running.child?.stop(running.service.stopSignal ?? 'SIGTERM', running.service.graceMs ?? 8_000)
+      await end()
+      // One that was just being started, for the first time or anew, is there only now.
+      await running.starting.catch(() => undefined)
       await running.done
-      // One that was just being started anew is there only now.
-      await running.child?.stop(stopSignal, graceMs)
+      await end()
     }
   }
 
