@@ -64,6 +64,7 @@ export function ringFractionChanged(size: RingSize, exposure: Exposure, wood: Wo
 /**
  * How a plug lid follows a step of the air: a disc with end grain above and below.
  * @param lidMm thickness of the disc, mm, above 0
+ * @param faces how many of its faces are open: two in work, one with the lid on its box
  * @param wood density in kg/m³ at 12 % MC, temperature in °C, moisture content in % MC
  * @returns the fraction changed, 0 to 1, against seconds since the step
  * @throws RangeError for an input out of range or NaN
@@ -71,8 +72,8 @@ export function ringFractionChanged(size: RingSize, exposure: Exposure, wood: Wo
  * The way in through the edge hardly counts for a lid's sizes and is left out.
  * Source: derived from Crank, The Mathematics of Diffusion (1975), ch. 4.
  */
-export function plugLidFractionChanged(lidMm: number, wood: WoodAt): FractionChanged {
+export function plugLidFractionChanged(lidMm: number, faces: 1 | 2, wood: WoodAt): FractionChanged {
   assertFiniteAbove('lidMm', lidMm, 0)
   const acrossGrain = transverseDiffusionM2PerS(wood.temperatureC, wood.mcPct, wood.densityKgM3)
-  return throughSlab(LONGITUDINAL_RATIO * acrossGrain, lidMm / 2)
+  return throughSlab(LONGITUDINAL_RATIO * acrossGrain, lidMm / faces)
 }

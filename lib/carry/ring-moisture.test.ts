@@ -158,7 +158,7 @@ describe('gaps', () => {
 })
 
 describe('a response read from its table', () => {
-  it('is within 1e-4 of the response itself', () => {
+  it('is within 2e-4 of the response itself', () => {
     const wall = fc.double({ min: 1, max: 20, noNaN: true })
     fc.assert(
       fc.property(
@@ -172,7 +172,7 @@ describe('a response read from its table', () => {
             { faces: 2, rim: 'open' },
             wood,
           )
-          expect(Math.abs(tabulated(direct)(elapsedS) - direct(elapsedS))).toBeLessThan(1e-4)
+          expect(Math.abs(tabulated(direct)(elapsedS) - direct(elapsedS))).toBeLessThan(2e-4)
         },
       ),
       { numRuns: 50 },

@@ -9,7 +9,7 @@ const FIRST_GUESS_S = 3600
 /**
  * A response read from a table of itself: superposing hundreds of hours asks for it thousands of times.
  * @param fractionChanged a response that rises from 0 towards 1
- * @returns the same within 1e-4, and exactly 1 once less than 1e-6 is left
+ * @returns the same within 2e-4, and exactly 1 once less than 1e-6 is left
  */
 export function tabulated(fractionChanged: FractionChanged): FractionChanged {
   let spentS = FIRST_GUESS_S

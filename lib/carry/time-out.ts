@@ -1,6 +1,13 @@
 import { assertFiniteAbove, assertInRange } from '@/lib/assert'
 import { diffusionMcPct } from './diffusion'
-import { EXPOSURE_OF_COVER, ringFractionChanged, type RingSize } from './joint'
+import {
+  EXPOSURE_OF_COVER,
+  plugLidFractionChanged,
+  ringFractionChanged,
+  type FractionChanged,
+  type RingSize,
+  type WoodAt,
+} from './joint'
 import type { PlaceCover } from '@/lib/pieces/piece'
 
 /**
@@ -66,6 +73,11 @@ function halved(
   return high
 }
 
+/** A lid over the spigot: a plug with end grain above and below, or hollow with its recess's own wall. */
+export type LidOver =
+  | { readonly form: 'plug'; readonly lidMm: number; readonly swellMmPerPct: number }
+  | { readonly form: 'hollow'; readonly wallMm: number; readonly swellMmPerPct: number }
+
 export type SteadyAirInput = {
   readonly size: RingSize
   readonly densityKgM3: number
@@ -76,6 +88,8 @@ export type SteadyAirInput = {
   readonly fromMcPct: number
   readonly toEmcPct: number
   readonly temperatureC: number
+  /** Left out: the lid is taken to keep step with the ring. `swellMmPerPct` is the mean growth of the diameter. */
+  readonly lid?: LidOver
 }
 
 export type TimeOut =
@@ -98,7 +112,8 @@ const STEADY_HORIZON_MS = 3650 * 24 * HOUR_MS
  * @returns minutes: the early edge, the middle and the late edge; or that it never uses it up there
  * @throws RangeError for an input out of range or NaN
  *
- * Swelling and drying count alike. The ring alone; a lid that lags it binds sooner still.
+ * Swelling and drying count alike. With a lid of its own pace, a ring ahead of it on the way to damp binds sooner, at
+ * every angle; on the way to dry it eases first.
  * Source: derived from Crank, The Mathematics of Diffusion (1975), ch. 4; early and late edge derived.
  */
 export function timeOutInSteadyAir(input: SteadyAirInput): TimeOut {
@@ -106,14 +121,23 @@ export function timeOutInSteadyAir(input: SteadyAirInput): TimeOut {
   assertFiniteAbove('allowanceMm', input.allowanceMm, 0)
   assertInRange('fromMcPct', input.fromMcPct, 0, 30)
   assertInRange('toEmcPct', input.toEmcPct, 0, 30)
-  const usedInTheEnd = (input.lossMmPerPct * Math.abs(input.toEmcPct - input.fromMcPct)) / input.allowanceMm
-  if (usedInTheEnd <= 1) return { binds: false, usedInTheEnd }
-  const fractionChanged = ringFractionChanged(input.size, EXPOSURE_OF_COVER[input.cover], {
+  const change = input.toEmcPct - input.fromMcPct
+  const usedInTheEnd = (input.lossMmPerPct * Math.abs(change)) / input.allowanceMm
+  if (usedInTheEnd <= 1 && input.lid === undefined) return { binds: false, usedInTheEnd }
+  const wood: WoodAt = {
     densityKgM3: input.densityKgM3,
     temperatureC: input.temperatureC,
     mcPct: diffusionMcPct(input.fromMcPct, input.toEmcPct),
-  })
-  const usedAfter = (elapsedMs: number): number => usedInTheEnd * fractionChanged(elapsedMs / 1000)
+  }
+  const ring = ringFractionChanged(input.size, EXPOSURE_OF_COVER[input.cover], wood)
+  const lid = input.lid === undefined ? ring : lidFractionChanged(input.lid, input, wood)
+  const swellMm = input.lid === undefined ? 0 : input.lid.swellMmPerPct * change
+  const skewMm = Math.abs(input.lossMmPerPct * change) / 2
+  const usedAfter = (elapsedMs: number): number => {
+    const ofRing = ring(elapsedMs / 1000)
+    const ofLid = lid(elapsedMs / 1000)
+    return (swellMm * (ofRing - ofLid) + skewMm * (ofRing + ofLid)) / input.allowanceMm
+  }
   const middleMs = firstReachedMs(usedAfter, 1, STEADY_HORIZON_MS)
   if (middleMs === undefined) return { binds: false, usedInTheEnd }
   const minutes = middleMs / MINUTE_MS
@@ -124,4 +148,11 @@ export function timeOutInSteadyAir(input: SteadyAirInput): TimeOut {
     minutesLate: LATE_OF_MIDDLE * minutes,
     usedInTheEnd,
   }
+}
+
+function lidFractionChanged(lid: LidOver, { size, cover }: SteadyAirInput, wood: WoodAt): FractionChanged {
+  const exposure = EXPOSURE_OF_COVER[cover]
+  return lid.form === 'plug'
+    ? plugLidFractionChanged(lid.lidMm, exposure.faces, wood)
+    : ringFractionChanged({ ...size, wallMm: lid.wallMm }, exposure, wood)
 }

@@ -140,3 +140,43 @@ export function allowedMcChangePct(
   if (lossMmPerPct === 0) return undefined
   return Math.max(0, clearanceMm - keepMm) / lossMmPerPct
 }
+
+/** Losses smaller than this for each % MC are rounding, mm. */
+const NO_LOSS_MM = 1e-12
+
+const scaled = (joint: Joint, factor: number): Joint => ({
+  ...joint,
+  spigot: { ...joint.spigot, mcChangePct: joint.spigot.mcChangePct * factor },
+  socket: { ...joint.socket, mcChangePct: joint.socket.mcChangePct * factor },
+})
+
+/**
+ * The largest change at which a clearance is left, where the two parts change in the proportion given.
+ * @param joint as for `clearanceFirstOrderMm`; where neither part has changed, both are taken to change alike
+ * @param angleDeg turn of the lid, degrees, -360 to 360
+ * @param keepMm clearance to be left, mm
+ * @returns % MC of the part that changes more; 0 where no more than that is there to begin with; undefined where
+ *   nothing is lost at that angle, so that there is no limit
+ * @throws RangeError for an input out of range or NaN
+ *
+ * The loss grows in proportion to the change. For parts alike this is `allowedMcChangePct`.
+ * Source: derived, `clearanceFirstOrderMm` solved for the change.
+ */
+export function allowedChange(joint: Joint, angleDeg: number, keepMm: number): number | undefined {
+  assertInRange('keepMm', keepMm, -CLEARANCE_MAX_MM, CLEARANCE_MAX_MM)
+  const most = Math.max(Math.abs(joint.spigot.mcChangePct), Math.abs(joint.socket.mcChangePct))
+  const lossesMm =
+    most > 0
+      ? [joint.clearanceMm - clearanceFirstOrderMm(scaled(joint, 1 / most), angleDeg)]
+      : [1, -1].map((mcChangePct) => {
+          const unit = {
+            ...joint,
+            spigot: { ...joint.spigot, mcChangePct },
+            socket: { ...joint.socket, mcChangePct },
+          }
+          return joint.clearanceMm - clearanceFirstOrderMm(unit, angleDeg)
+        })
+  const lossMmPerPct = Math.max(...lossesMm)
+  if (lossMmPerPct < NO_LOSS_MM) return undefined
+  return Math.max(0, joint.clearanceMm - keepMm) / lossMmPerPct
+}
