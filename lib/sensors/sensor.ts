@@ -89,3 +89,12 @@ export const refusedSchema = z.object({
   headHex: z.string(),
 })
 export type Refused = z.infer<typeof refusedSchema>
+
+/** A reading as it was taken, with what it means for wood. */
+export const sensorReadingSchema = z.object({
+  at: instant,
+  temperatureC: z.number(),
+  humidityPct: z.number(),
+  emcPct: z.number(),
+})
+export type SensorReading = z.infer<typeof sensorReadingSchema>
