@@ -13,14 +13,20 @@ import { ControlSentence, SentenceInput, SentenceSelect } from '@/app/_component
 import { Sheet } from '@/app/_components/ui/sheet'
 import { EmptyState } from '@/app/_components/ui/states'
 import { useAction } from '@/app/_components/use-action'
-import { newSensorSchema, type NewSensor, type Sensor, type SensorCredential } from '@/lib/sensors/sensor'
+import {
+  newSensorSchema,
+  type NewSensor,
+  type SensorCredential,
+  type SensorDetail,
+} from '@/lib/sensors/sensor'
 import { coinCellCaution } from '@/lib/sensors/wording'
 import type { Reader } from '@/lib/sites/reader'
 import { CredentialSentence } from './credential-sentence'
 import { FirstReading } from './first-reading'
 
 type RoomChoice = { id: string; name: string }
-export type SensorMade = { sensor: Sensor; credential: SensorCredential }
+/** A sensor that was just made, with the secret that is shown this once. */
+type SensorMade = SensorDetail & { credential: SensorCredential }
 
 type AddSensorProps = { reader: Reader; rooms: readonly RoomChoice[]; roomId?: string }
 
@@ -77,7 +83,7 @@ export function AddSensor({ reader, rooms, roomId }: AddSensorProps) {
           'Say what it is called and where it hangs; the rest of the sentence follows.'
         ) : (
           <>
-            <strong>{made.sensor.name}</strong> is known here. Copy its secret now: it is shown once.
+            <strong>{made.name}</strong> is known here. Copy its secret now: it is shown once.
           </>
         )}
       </PageSentence>
@@ -147,20 +153,20 @@ export function AddSensor({ reader, rooms, roomId }: AddSensorProps) {
 }
 
 function MadeSentence({ made, reader }: { made: SensorMade; reader: Reader }) {
-  const { sensor, credential } = made
+  const { credential } = made
   return (
     <>
       <ControlSentence>
         <span>
-          A sensor called <strong>{sensor.name}</strong> hangs in{' '}
-          <strong>{sensor.room?.name ?? 'no room'}</strong>
-          {sensor.spot ? `, ${sensor.spot}` : ''}.
+          A sensor called <strong>{made.name}</strong> hangs in{' '}
+          <strong>{made.room?.name ?? 'no room'}</strong>
+          {made.spot ? `, ${made.spot}` : ''}.
         </span>
       </ControlSentence>
       <CredentialSentence credential={credential} />
-      <FirstReading reader={reader} sensorId={sensor.id} />
+      <FirstReading reader={reader} sensorId={made.id} />
       <div className="flex flex-wrap gap-3">
-        <ButtonLink href={`/sites/${reader.site}/sensors/${sensor.id}`}>Open its page</ButtonLink>
+        <ButtonLink href={`/sites/${reader.site}/sensors/${made.id}`}>Open its page</ButtonLink>
         <ButtonLink href={`/sites/${reader.site}/sensors`} variant="quiet">
           All sensors
         </ButtonLink>

@@ -29,7 +29,7 @@ export function SensorsView({ reader, initial }: { reader: Reader; initial: Sens
     site: reader.site,
     area: 'sensors',
     key: ['list'],
-    path: '/sensors?limit=200',
+    path: '/sensors',
     initial,
   })
   const [show, setShow] = useQueryState('show', parseAsStringLiteral(shows).withDefault('all'))
