@@ -76,7 +76,11 @@ export async function readBody(
   return ok({ value: parsed.data, text: text.value })
 }
 
+// The one character that the database's text can't hold, written as JSON writes it.
+const escapedNul = /(?<!\\)(?:\\\\)*\\u0000/
+
 function parseJson(text: string): Outcome<unknown> {
+  if (escapedNul.test(text)) return fail('malformed', 'The character NUL can not be stored.')
   try {
     return ok(JSON.parse(text) as unknown)
   } catch (error) {
@@ -100,6 +104,8 @@ export function readQuery(request: Request, schema: z.ZodType | undefined): Outc
     const values = search.getAll(name)
     given[name] = values.length === 1 ? (values[0] ?? '') : values
   }
+  if ([...search].flat().join('').includes('\0'))
+    return fail('malformed', 'The character NUL can not be looked for.')
   const parsed = schema.safeParse({ ...given })
   return parsed.success ? ok(parsed.data) : malformed(parsed.error)
 }

@@ -4,6 +4,7 @@ import { z } from 'zod'
 import { findSiteMember, type SiteMember } from '@/db/queries/members'
 import type { Database } from '@/db/schema'
 import { may, type Action } from '@/lib/sites/permissions'
+import { codeSchema } from '@/lib/sites/site'
 import { database, isDatabaseAway } from './database'
 import { once } from './idempotency'
 import { log } from './log'
@@ -99,7 +100,7 @@ export function siteRoute<
 ): RouteHandler {
   return guarded(async (request, params) =>
     withUser(request, async (user) => {
-      const site = z.object({ site: z.string().max(40) }).safeParse(params)
+      const site = z.object({ site: codeSchema }).safeParse(params)
       const member = site.success ? await findSiteMember(database(), site.data.site, user.id) : undefined
       if (member === undefined) return notThere()
       if (!may(member.role, spec.action)) {

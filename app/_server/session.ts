@@ -4,6 +4,7 @@ import { notFound, redirect } from 'next/navigation'
 import { cache } from 'react'
 import { findSiteMember, type SiteMember } from '@/db/queries/members'
 import { may, type Action } from '@/lib/sites/permissions'
+import { codeSchema } from '@/lib/sites/site'
 import { safeNextPath } from '@/lib/sites/next-path'
 import { auth } from './auth'
 import { database } from './database'
@@ -58,7 +59,8 @@ export async function requireUser(): Promise<SignedInUser> {
  */
 export async function requireMember(siteCode: string, action: Action): Promise<SiteMember> {
   const user = await requireUser()
-  const member = await memberOfPage(siteCode, user.id)
+  const isCode = codeSchema.safeParse(siteCode).success
+  const member = isCode ? await memberOfPage(siteCode, user.id) : undefined
   if (member === undefined || !may(member.role, action)) notFound()
   return member
 }

@@ -125,6 +125,35 @@ export const routeTable: Record<string, Row> = {
     query: () => ({ from: '2026-01-01T00:00:00Z', to: '2026-02-01T00:00:00Z' }),
   },
 
+  'POST /api/v1/sites/[site]/rooms/[room]/readings': {
+    action: 'readings:type',
+    body: () => ({ temperatureC: 18.5, humidityPct: 52 }),
+    status: 201,
+  },
+
+  'GET /api/v1/sites/[site]/sensors': { action: 'sensors:see' },
+  'POST /api/v1/sites/[site]/sensors': {
+    action: 'sensors:change',
+    body: ({ room }) => ({ name: 'Window sill', roomId: room }),
+    status: 201,
+  },
+  'GET /api/v1/sites/[site]/sensors/[sensor]': { action: 'sensors:see' },
+  'PATCH /api/v1/sites/[site]/sensors/[sensor]': {
+    action: 'sensors:change',
+    body: () => ({ name: 'Top shelf' }),
+    ifMatch: true,
+  },
+  'DELETE /api/v1/sites/[site]/sensors/[sensor]': { action: 'sensors:change', ifMatch: true, status: 204 },
+  'GET /api/v1/sites/[site]/sensors/[sensor]/readings': { action: 'sensors:see' },
+  'GET /api/v1/sites/[site]/sensors/[sensor]/placements': { action: 'sensors:see' },
+  'POST /api/v1/sites/[site]/sensors/[sensor]/placements': {
+    action: 'sensors:change',
+    body: ({ shop }) => ({ roomId: shop, spot: 'by the door' }),
+    status: 201,
+  },
+  'POST /api/v1/sites/[site]/sensors/[sensor]/credential': { action: 'sensors:change', status: 201 },
+  'GET /api/v1/sites/[site]/refused': { action: 'refused:see' },
+
   'GET /api/v1/sites/[site]/carries': { action: 'carries:see', query: () => ({ state: 'open' }) },
   'POST /api/v1/sites/[site]/carries': {
     action: 'carries:do',
@@ -234,6 +263,7 @@ export const routeTable: Record<string, Row> = {
     lidMm: '8',
     hours: '2',
   }),
+  'GET /api/v1/bench/salts': bench({ temperatureC: '20' }),
   'GET /api/v1/bench/time-out': bench({
     species: 'fraxinus-excelsior',
     diameterMm: '60',

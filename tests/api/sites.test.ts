@@ -279,6 +279,9 @@ describe('a request that is too much', () => {
     const odd = '{"__proto__":{"role":"owner"},"name":"A"}'
     expect((await call('PATCH', at(site), { cookie, rawBody: odd, ifMatch: 1 })).status).toBe(400)
     expect((await call('PATCH', at(site), { cookie, rawBody: '{"name":', ifMatch: 1 })).status).toBe(400)
+    const nul = await call('PATCH', at(site), { cookie, body: { name: 'A\0B' }, ifMatch: 1 })
+    expect(nul.status).toBe(400)
+    expect((await call('GET', '/api/v1/sites/%00%00%00%00%00%00%00%00%00%00', { cookie })).status).toBe(404)
     expect(performance.now() - began).toBeLessThan(5_000)
   })
 
