@@ -9,7 +9,12 @@ import { scenarios } from './scenarios/all'
 const SAVE_MS = 20_000
 
 const environment = readFakeSensorsEnvironment()
-const log = pino({ name: 'fake-sensors', level: environment.logLevel, base: { name: 'fake-sensors' } })
+// Pino's own writer tries for ever when the reader of the pipe is gone, and then this never ends.
+process.stdout.on('error', () => undefined)
+const log = pino(
+  { level: environment.logLevel, base: { name: 'fake-sensors' } },
+  { write: (line: string) => void process.stdout.write(line) },
+)
 const state = await KeptState.open(environment.stateFile)
 const told = new Set<string>()
 

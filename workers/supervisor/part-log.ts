@@ -32,7 +32,8 @@ export function openPartLog(folder: string, name: string): PartLog {
   }
 }
 
-const shownLevels: ReadonlySet<string> = new Set(['warn', 'error', 'fatal'])
+/** By name, or by the number that the logger gives to "warn", "error" and "fatal". */
+const shownLevels: ReadonlySet<unknown> = new Set(['warn', 'error', 'fatal', 40, 50, 60])
 
 /** The sentence of a worker's log line that a person at the terminal should see, or undefined. */
 export function warningIn(line: string): string | undefined {
@@ -41,7 +42,7 @@ export function warningIn(line: string): string | undefined {
     const entry: unknown = JSON.parse(line)
     if (typeof entry !== 'object' || entry === null) return undefined
     const { level, msg, err } = entry as { level?: unknown; msg?: unknown; err?: { message?: unknown } }
-    if (typeof level !== 'string' || !shownLevels.has(level)) return undefined
+    if (!shownLevels.has(level)) return undefined
     const reason = typeof err?.message === 'string' && err.message !== msg ? ` (${err.message})` : ''
     return `${String(msg ?? 'a warning')}${reason}`
   } catch {
