@@ -241,6 +241,14 @@ export const routeTable: Record<string, Row> = {
     prepare: callOff,
   },
 
+  'GET /api/v1/sites/[site]/notices': { action: 'notices:see', query: () => ({ unseen: 'yes' }) },
+  'PATCH /api/v1/sites/[site]/notices/[notice]': {
+    action: 'notices:acknowledge',
+    body: () => ({ isSeen: true, isAcknowledged: true }),
+  },
+  'POST /api/v1/sites/[site]/notices/seen': { action: 'notices:acknowledge', status: 204 },
+  'GET /api/v1/sites/[site]/live': { action: 'site:see' },
+
   'GET /api/v1/bench/air': bench({ temperatureC: '20', humidityPct: '50' }),
   'GET /api/v1/bench/diffusion': bench({ temperatureC: '20', mcPct: '9', densityKgM3: '680' }),
   'GET /api/v1/bench/emc': bench({ temperatureC: '20', humidityPct: '50' }),
