@@ -1,0 +1,63 @@
+'use client'
+
+import { parseAsArrayOf, parseAsInteger, parseAsString, parseAsStringLiteral, useQueryStates } from 'nuqs'
+import type { CarryCheckRequest } from '@/lib/carry/carry-check'
+import type { Cover, Piece } from '@/lib/pieces/piece'
+import type { Room } from '@/lib/rooms/room'
+import { instantOfLocalField } from '@/lib/format/local-time'
+
+export const covers = ['open', 'lid-on', 'bagged', 'tub'] as const satisfies readonly Cover[]
+
+/** Lengths of stay to choose from, in minutes. */
+export const stays = [30, 60, 120, 180, 240, 360, 480, 720, 1440, 4320, 10_080] as const
+/** How long ago something went that was not logged then, in minutes. */
+export const sinces = [0, 10, 30, 60, 120, 240, 480] as const
+
+const parsers = {
+  mode: parseAsStringLiteral(['now', 'plan']).withDefault('now'),
+  pieces: parseAsArrayOf(parseAsString).withDefault([]),
+  to: parseAsString,
+  /** The planned time as its field has it, in the site's zone. */
+  at: parseAsString,
+  stay: parseAsInteger.withDefault(120),
+  since: parseAsInteger.withDefault(0),
+  cover: parseAsStringLiteral(covers).withDefault('open'),
+}
+
+/** What stands in the sentence. It is in the address, so that a question can be kept and sent. */
+export const useCarryForm = () => useQueryStates(parsers, { history: 'replace' })
+
+export type CarryForm = ReturnType<typeof useCarryForm>[0]
+export type SetCarryForm = ReturnType<typeof useCarryForm>[1]
+
+const SHOP_FIRST = ['shop', 'store', 'outdoor', 'van', 'house', 'cupboard', 'tub']
+
+/** The room that is asked about when none was named: the shop, for that is where boxes are lost. */
+export function roomOf(rooms: readonly Room[], code: string | null): Room | undefined {
+  const named = rooms.find((room) => room.id === code)
+  return named ?? rooms.toSorted((a, b) => SHOP_FIRST.indexOf(a.kind) - SHOP_FIRST.indexOf(b.kind))[0]
+}
+
+/** The question that the sentence asks, or nothing while it is not whole. */
+export function requestOf(
+  form: CarryForm,
+  chosen: readonly Piece[],
+  room: Room | undefined,
+  timeZone: string,
+  now: Date,
+): CarryCheckRequest | null {
+  if (!room || chosen.length === 0) return null
+  const stayMinutes = Math.min(43_200, Math.max(1, form.stay))
+  const common = {
+    pieceIds: chosen.map((piece) => piece.id),
+    toRoomId: room.id,
+    stayMinutes,
+    cover: form.cover,
+  }
+  if (form.mode === 'now') {
+    if (form.since <= 0) return common
+    return { ...common, startsAt: new Date(now.getTime() - form.since * 60_000).toISOString() }
+  }
+  const at = form.at === null ? undefined : instantOfLocalField(form.at, timeZone)
+  return at === undefined ? null : { ...common, startsAt: at.toISOString() }
+}

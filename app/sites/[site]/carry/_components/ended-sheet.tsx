@@ -1,0 +1,42 @@
+import { PieceOutline } from '@/app/_components/ui/piece-outline'
+import { Sheet } from '@/app/_components/ui/sheet'
+import { TextLink } from '@/app/_components/ui/text-link'
+import type { Carry, CarryPiece } from '@/lib/carry/carry'
+import { formatDuration, formatMoment } from '@/lib/format/times'
+import type { Reader } from '@/lib/sites/reader'
+
+/** What came back, from where and after how long. */
+export function EndedSheet({ carry, reader, now }: { carry: Carry; reader: Reader; now: Date }) {
+  const shown = carry.pieces.filter((piece) => piece.outAt === null || piece.backAt !== null)
+  return (
+    <Sheet
+      id="ended"
+      title={carry.state === 'called-off' ? 'What did not go' : 'What is back'}
+      aside={carry.againstAdvice ? 'went against the advice' : undefined}
+    >
+      <ul>
+        {shown.map((piece) => (
+          <li key={piece.id} className="flex items-center gap-4 border-b border-line py-3 last:border-b-0">
+            <PieceOutline outline={piece.outline} />
+            <p>
+              <TextLink href={`/sites/${reader.site}/pieces/${piece.id}`} className="font-semibold">
+                {piece.number}
+              </TextLink>{' '}
+              {piece.title}
+              <span className="block text-label text-ink-soft">
+                {backWords(carry, piece, reader.timeZone, now)}
+              </span>
+            </p>
+          </li>
+        ))}
+      </ul>
+      {carry.note ? <p className="mt-3 max-w-words">{carry.note}</p> : null}
+    </Sheet>
+  )
+}
+
+function backWords(carry: Carry, piece: CarryPiece, timeZone: string, now: Date): string {
+  if (piece.outAt === null || piece.backAt === null) return `was down to go to ${carry.toRoom.name}`
+  const minutes = (new Date(piece.backAt).getTime() - new Date(piece.outAt).getTime()) / 60_000
+  return `${carry.toRoom.name}, ${formatMoment(piece.outAt, timeZone, now)}; back after ${formatDuration(minutes)}`
+}
