@@ -2,6 +2,7 @@ import { mkdtemp, rm, writeFile } from 'node:fs/promises'
 import os from 'node:os'
 import path from 'node:path'
 import { afterEach, beforeEach, describe, expect, test } from 'vitest'
+import { batteryPct } from './battery'
 import { BACKLOG_MOST_MS, missedInstants } from './backlog'
 import { KeptState } from './kept-state'
 import { frontShare } from './scenarios/damp-front'
@@ -73,5 +74,25 @@ describe('scenarios', () => {
   test('a front comes, stays and leaves', () => {
     expect([-1, 0, 10, 30, 50].map(frontShare)).toEqual([0, 0, 1, 1, 0])
     expect(frontShare(0.75)).toBeCloseTo(0.35, 9)
+  })
+})
+
+describe('a battery', () => {
+  const sensor = {
+    code: 'aaaaaaaaaa',
+    model: 'study',
+    secret: 's',
+    everyS: 60,
+    habit: 'steady',
+    lastAt: new Date(now).toISOString(),
+    batteryPct: 31,
+  } as const
+
+  test('goes on from what the history says, falls slowly, and is never quite empty', () => {
+    const after = (days: number) => batteryPct(sensor, now + days * 24 * 60 * minute)
+    expect(after(0)).toBe(31)
+    expect(after(55)).toBe(21)
+    expect(after(5_000)).toBe(3)
+    expect(batteryPct({ ...sensor, batteryPct: 1 }, now)).toBe(1)
   })
 })

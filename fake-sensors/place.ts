@@ -2,7 +2,8 @@ import type { DemoRoster, DemoSensor } from '@/lib/sensors/demo-roster'
 import { DEMO_HISTORY_EVERY_S } from '@/lib/sensors/demo-roster'
 import type { ReadingMessage } from '@/lib/readings/payload'
 import { missedInstants } from './backlog'
-import { batteryPct, createInstruments, isInstrumentName } from './climates/instruments'
+import { batteryPct } from './battery'
+import { createInstruments, isInstrumentName } from './climates/instruments'
 import { startDevice, type Device } from './device'
 import type { KeptState } from './kept-state'
 import type { Scenario } from './scenarios/scenario'
@@ -39,7 +40,8 @@ export function startPlace({ roster, scenario, state, now = Date.now, ...rest }:
     },
   }
 
-  function measureOf({ model }: DemoSensor): ((atMs: number) => ReadingMessage) | undefined {
+  function measureOf(sensor: DemoSensor): ((atMs: number) => ReadingMessage) | undefined {
+    const { model } = sensor
     if (!isInstrumentName(model)) {
       rest.onTrouble(`There is no simulated instrument called ${model}.`)
       return undefined
@@ -47,7 +49,7 @@ export function startPlace({ roster, scenario, state, now = Date.now, ...rest }:
     return (atMs) => ({
       at: new Date(atMs).toISOString(),
       ...measured(model, atMs),
-      batteryPct: batteryPct(model, atMs),
+      batteryPct: batteryPct(sensor, atMs),
     })
   }
 

@@ -231,7 +231,7 @@ export async function renewDemoSecret(
 export async function listDemoSensors(
   db: Kysely<Database>,
   siteId: number,
-): Promise<{ id: number; code: string; name: string; lastAt: Date | null }[]> {
+): Promise<{ id: number; code: string; name: string; lastAt: Date | null; batteryPct: number | null }[]> {
   const rows = await db
     .selectFrom('sensor')
     .leftJoin('sensor_state as state', (join) =>
@@ -240,10 +240,16 @@ export async function listDemoSensors(
     .where('sensor.site_id', '=', siteId)
     .where('sensor.kind', '=', 'device')
     .where('sensor.archived_at', 'is', null)
-    .select(['sensor.id', 'sensor.code', 'sensor.name', 'state.at'])
+    .select(['sensor.id', 'sensor.code', 'sensor.name', 'state.at', 'state.battery_pct'])
     .orderBy('sensor.id')
     .execute()
-  return rows.map((row) => ({ id: row.id, code: row.code, name: row.name, lastAt: row.at }))
+  return rows.map((row) => ({
+    id: row.id,
+    code: row.code,
+    name: row.name,
+    lastAt: row.at,
+    batteryPct: row.battery_pct,
+  }))
 }
 
 /** What the arrivals of the last hours would have counted, and one message that could not be used. */

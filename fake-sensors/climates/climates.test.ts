@@ -2,7 +2,7 @@ import { describe, expect, test } from 'vitest'
 import { emcOfReadingPct } from '@/lib/wood/emc'
 import { historyLines } from '../history'
 import { dampFront } from '../scenarios/damp-front'
-import { createInstruments, instrumentNames, batteryPct } from './instruments'
+import { createInstruments, instrumentNames } from './instruments'
 import { createNoise } from './noise'
 import { DAY_MS, HOUR_MS } from './outdoor'
 import { climateRooms, createRooms, type ClimateRoom } from './rooms'
@@ -28,7 +28,8 @@ describe('noise', () => {
   })
 })
 
-describe('the simulated place', () => {
+// Worked out for thousands of hours: a busy machine takes its time.
+describe('the simulated place', { timeout: 60_000 }, () => {
   test('is the same for the same seed, whatever is asked first', () => {
     const forward = createRooms(seed)
     const backward = createRooms(seed)
@@ -102,7 +103,7 @@ describe('the simulated place', () => {
   })
 })
 
-describe('the simulated instruments', () => {
+describe('the simulated instruments', { timeout: 60_000 }, () => {
   test('show between 5 and 100 % RH and a living temperature at any season', () => {
     const measure = createInstruments(seed)
     for (let day = 0; day < fourteenMonthsDays; day++)
@@ -114,9 +115,6 @@ describe('the simulated instruments', () => {
           expect(humidityPct).toBeLessThanOrEqual(100)
           expect(temperatureC).toBeGreaterThan(-10)
           expect(temperatureC).toBeLessThan(32)
-          const battery = batteryPct(name, at)
-          expect(battery).toBeGreaterThan(0)
-          expect(battery).toBeLessThanOrEqual(100)
         }
   })
 

@@ -1,5 +1,5 @@
 import { createNoise, hashed } from './noise'
-import { DAY_MS, type Weather } from './outdoor'
+import type { Weather } from './outdoor'
 import { createRooms, type ClimateRoom } from './rooms'
 
 export interface Instrument {
@@ -7,22 +7,19 @@ export interface Instrument {
   /** What this one reads too much, in K and in percent RH: no two sensors of a shelf agree. */
   offsetC: number
   offsetPct: number
-  /** How many days a battery lasts, and how far into it this one was on the first day of 1970. */
-  batteryDays: number
-  batteryUsed: number
 }
 
 /** The nine simulated instruments, by model name. Offsets are inside what data sheets allow (±0.3 K, ±3 % RH). */
 export const instruments = {
-  'cupboard-upper': { room: 'cupboard', offsetC: 0.15, offsetPct: -0.6, batteryDays: 610, batteryUsed: 0.1 },
-  'cupboard-lower': { room: 'cupboard', offsetC: -0.35, offsetPct: 1.1, batteryDays: 590, batteryUsed: 0.45 },
-  study: { room: 'study', offsetC: 0, offsetPct: 0.4, batteryDays: 540, batteryUsed: 0.7 },
-  kitchen: { room: 'kitchen', offsetC: 0.3, offsetPct: -0.9, batteryDays: 560, batteryUsed: 0.25 },
-  'shop-bench': { room: 'shop', offsetC: 0.1, offsetPct: 0.3, batteryDays: 520, batteryUsed: 0.55 },
-  'shop-door': { room: 'shop', offsetC: -0.5, offsetPct: 1.6, batteryDays: 500, batteryUsed: 0.05 },
-  'shop-shelf': { room: 'shop', offsetC: 0.4, offsetPct: -1.2, batteryDays: 515, batteryUsed: 0.8 },
-  store: { room: 'store', offsetC: 0, offsetPct: -0.2, batteryDays: 480, batteryUsed: 0.6 },
-  tub: { room: 'tub', offsetC: 0.1, offsetPct: 0.2, batteryDays: 700, batteryUsed: 0.3 },
+  'cupboard-upper': { room: 'cupboard', offsetC: 0.15, offsetPct: -0.6 },
+  'cupboard-lower': { room: 'cupboard', offsetC: -0.35, offsetPct: 1.1 },
+  study: { room: 'study', offsetC: 0, offsetPct: 0.4 },
+  kitchen: { room: 'kitchen', offsetC: 0.3, offsetPct: -0.9 },
+  'shop-bench': { room: 'shop', offsetC: 0.1, offsetPct: 0.3 },
+  'shop-door': { room: 'shop', offsetC: -0.5, offsetPct: 1.6 },
+  'shop-shelf': { room: 'shop', offsetC: 0.4, offsetPct: -1.2 },
+  store: { room: 'store', offsetC: 0, offsetPct: -0.2 },
+  tub: { room: 'tub', offsetC: 0.1, offsetPct: 0.2 },
 } as const satisfies Record<string, Instrument>
 
 export type InstrumentName = keyof typeof instruments
@@ -71,11 +68,4 @@ export function createInstruments(seed: number, weather?: Weather): Measure {
       humidityPct: rounded(Math.min(99, Math.max(5, shownPct)), 10),
     }
   }
-}
-
-/** What is left in an instrument's battery: a line from 100 down to 6 %, then a new one. */
-export function batteryPct(name: InstrumentName, atMs: number): number {
-  const { batteryDays, batteryUsed } = instruments[name]
-  const used = (atMs / DAY_MS / batteryDays + batteryUsed) % 1
-  return Math.round(100 - 94 * used)
 }

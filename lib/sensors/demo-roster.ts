@@ -12,6 +12,8 @@ export const demoSensorSchema = z.strictObject({
   secret: z.string().min(1),
   everyS: z.int().min(1).max(3600),
   lastAt: z.iso.datetime(),
+  /** What was left in its battery then. */
+  batteryPct: z.number().min(0).max(100),
   /** steady: always there; drops-out: goes away now and then and catches up; silent: no longer heard. */
   habit: z.enum(['steady', 'drops-out', 'silent']),
 })

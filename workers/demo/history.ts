@@ -60,7 +60,8 @@ export async function insertHistory(db: Kysely<Database>, options: HistoryOption
   let before: Promise<void> = Promise.resolve()
   let rows: ReadingRow[] = []
   const store = async (batch: ReadingRow[], share: number) => {
-    stored += await insertReadings(db, batch)
+    const inserted = await insertReadings(db, batch)
+    stored += inserted
     onProgress(share, stored)
   }
   for await (const line of simulated(fromS, toS, everyS, sources)) {

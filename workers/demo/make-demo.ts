@@ -109,7 +109,7 @@ const rosterOf = (place: MadePlace, now: Date): DemoRoster => ({
   seed: placeSeed,
   sensors: placeSensors.map((sensor) => {
     const { code, secret } = madeSensor(place, sensor)
-    const { model, everyS, habit } = sensor
-    return { code, model, secret, everyS, habit, lastAt: endOf(sensor, now).toISOString() }
+    const { model, everyS, habit, batteryPct } = sensor
+    return { code, model, secret, everyS, habit, batteryPct, lastAt: endOf(sensor, now).toISOString() }
   }),
 })

@@ -1,9 +1,18 @@
 import { dayAfter, instantOfLocalTime, localDay } from '@/lib/sites/local-time'
 import type { Moment } from './carries'
 
-/** The instant of a moment that is told as seen from now. */
+const minuteMs = 60_000
+/** People plan by five minutes. */
+const planMs = 5 * minuteMs
+
+/** The instant of a moment that is told as seen from now: to the minute, and to five minutes where it is a plan. */
 export function instantOf(moment: Moment, now: Date, timeZone: string): Date {
-  if ('minutes' in moment) return new Date(now.getTime() + moment.minutes * 60_000)
+  if ('minutes' in moment) {
+    const at = now.getTime() + moment.minutes * minuteMs
+    return new Date(
+      moment.minutes > 0 ? Math.round(at / planMs) * planMs : Math.floor(at / minuteMs) * minuteMs,
+    )
+  }
   const day = dayAfter(localDay(now.getTime(), timeZone), moment.days)
   return new Date(instantOfLocalTime(day, moment.time, timeZone))
 }

@@ -11,13 +11,21 @@ import { placeSeed, placeSensors } from './place'
  */
 export async function renewRoster(db: Kysely<Database>, site: DemoSiteState, now: Date): Promise<DemoRoster> {
   const sensors: DemoSensor[] = []
-  for (const { id, code, name, lastAt } of await listDemoSensors(db, site.id)) {
+  for (const { id, code, name, lastAt, batteryPct } of await listDemoSensors(db, site.id)) {
     const known = placeSensors.find((one) => one.name === name)
     if (known === undefined) continue
     const { secret, hash } = await makeSensorSecret()
     await renewDemoSecret(db, site.id, id, hash, now)
     const { model, everyS, habit } = known
-    sensors.push({ code, model, secret, everyS, habit, lastAt: (lastAt ?? now).toISOString() })
+    sensors.push({
+      code,
+      model,
+      secret,
+      everyS,
+      habit,
+      lastAt: (lastAt ?? now).toISOString(),
+      batteryPct: batteryPct ?? known.batteryPct,
+    })
   }
   return { siteCode: site.code, seed: placeSeed, sensors }
 }
