@@ -14,7 +14,7 @@ export function proxy(request: NextRequest): NextResponse {
 
   const elsewhere = canonicalOrigin(request.headers.get('host'), baseUrl)
   if (elsewhere !== undefined && !isData && request.method === 'GET') {
-    return NextResponse.redirect(elsewhere + pathname + search, 307)
+    return movedTo(elsewhere + pathname + search)
   }
 
   const nonce = Buffer.from(crypto.randomUUID()).toString('base64')
@@ -27,6 +27,26 @@ export function proxy(request: NextRequest): NextResponse {
   response.headers.set('content-security-policy', policy)
   for (const [name, value] of Object.entries(securityHeaders({ isHttps }))) response.headers.set(name, value)
   return response
+}
+
+/**
+ * Sends a browser on. Next takes `localhost` and 127.0.0.1 for one and the same, and would turn a Location from one to
+ * the other into a circle; a browser that is told to load another address does just that.
+ */
+function movedTo(address: string): NextResponse {
+  const shown = address.replaceAll('&', '&amp;').replaceAll('"', '&quot;').replaceAll('<', '&lt;')
+  return new NextResponse(
+    `<!doctype html><meta charset="utf-8"><title>Lidfast</title><p>Lidfast is at <a href="${shown}">${shown}</a>.`,
+    {
+      headers: {
+        refresh: `0; url=${address}`,
+        'content-type': 'text/html; charset=utf-8',
+        'cache-control': 'no-store',
+        'content-security-policy': dataPolicy,
+        'x-content-type-options': 'nosniff',
+      },
+    },
+  )
 }
 
 export const config = { matcher: '/((?!_next/static|_next/image).*)' }
