@@ -102,7 +102,14 @@ export function siteRoute<
     withUser(request, async (user) => {
       const site = z.object({ site: codeSchema }).safeParse(params)
       const member = site.success ? await findSiteMember(database(), site.data.site, user.id) : undefined
-      if (member === undefined) return notThere()
+      if (member === undefined) {
+        // To be seen by who runs the machine: many of these from one person are somebody trying ids.
+        log().info(
+          { userId: user.id, path: new URL(request.url).pathname },
+          'asked for a site that is not theirs',
+        )
+        return notThere()
+      }
       if (!may(member.role, spec.action)) {
         return fail('not-yours-to-do', `Your role here is ${member.role}, which does not allow that.`)
       }
