@@ -219,7 +219,8 @@ function toResponse(reply: Reply): Response {
 function guarded(work: (request: Request, params: unknown) => Promise<Reply>): RouteHandler {
   return async (request, context) => {
     try {
-      return toResponse(await work(request, await context.params))
+      // An address without brackets gets no params at all.
+      return toResponse(await work(request, (await context.params) ?? {}))
     } catch (error) {
       return problemResponse(await failureOf(error, request))
     }
