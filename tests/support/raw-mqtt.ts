@@ -72,6 +72,7 @@ export function publishPacket(topic: string, payload: string | Buffer, options: 
 export class RawMqtt {
   readonly packets: Packet[] = []
   isClosed = false
+  onPacket: (packet: Packet) => void = () => undefined
   private rest = Buffer.alloc(0)
 
   private constructor(readonly socket: Socket) {
@@ -135,7 +136,9 @@ export class RawMqtt {
     // All that the broker says to us is shorter than 128 bytes but for echoes, which no test here asks for.
     while (this.rest.length >= 2 && this.rest.length >= 2 + (this.rest[1] ?? 0)) {
       const length = this.rest[1] ?? 0
-      this.packets.push({ kind: (this.rest[0] ?? 0) >> 4, body: this.rest.subarray(2, 2 + length) })
+      const packet = { kind: (this.rest[0] ?? 0) >> 4, body: this.rest.subarray(2, 2 + length) }
+      this.packets.push(packet)
+      this.onPacket(packet)
       this.rest = this.rest.subarray(2 + length)
     }
   }
