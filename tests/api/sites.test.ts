@@ -180,6 +180,7 @@ describe('deleting a site', () => {
     const { cookie } = people.owner
     const wrong = await call('DELETE', at(site), { cookie, body: { name: 'Another Yard' } })
     expect(wrong.status).toBe(422)
+    expect((await call('DELETE', at(site), { cookie })).status).toBe(422)
     expect((await call('DELETE', at(site), { cookie, body: { name: site.siteName } })).status).toBe(204)
     expect((await call('GET', at(site), { cookie })).status).toBe(404)
     for (const table of ['room', 'sensor', 'piece', 'carry', 'notice', 'change', 'member_setting'] as const) {
@@ -193,6 +194,14 @@ describe('deleting a site', () => {
       .execute()
     expect(retired.length).toBe(2)
   })
+})
+
+it('removes a demo in one press', async () => {
+  const site = await freshSite()
+  await db.updateTable('site').set({ is_demo: true }).where('id', '=', site.siteId).execute()
+  const gone = await call('DELETE', at(site), { cookie: people.owner.cookie })
+  expect(gone.status, gone.text).toBe(204)
+  expect((await call('GET', at(site), { cookie: people.owner.cookie })).status).toBe(404)
 })
 
 describe('members', () => {

@@ -17,7 +17,7 @@ export const PATCH = siteRoute(
 )
 
 export const DELETE = siteRoute(
-  { action: 'site:delete', body: z.strictObject({ name: z.string().max(200) }) },
+  { action: 'site:delete', body: z.strictObject({ name: z.string().max(200).optional() }) },
   async ({ db, member, body, now }) => {
     const removed = await removeSite(db, member, body.name, now)
     return removed.ok ? answer(undefined) : removed
