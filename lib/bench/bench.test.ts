@@ -286,8 +286,8 @@ describe('answers', () => {
       'tangentialPerPct',
       'radialPerPct',
     ])
-    const alike = { ...figures, radialPerPct: '0.00282' }
-    expect(refusals(timeOutQuerySchema, { ...sizes, ...alike })[0]?.[0]).toBe('tangentialPerPct')
+    const alike = { ...sizes, ...figures, radialPerPct: '0.00282' }
+    expect(timeOutAnswer(timeOutQuerySchema.parse(alike)).binds).toBe(false)
   })
 
   it('follow, diffusion and salts', () => {

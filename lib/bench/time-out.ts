@@ -43,9 +43,6 @@ export const timeOutQuerySchema = z
       context.addIssue({ code: 'custom', path: [path], message })
     }
     refineWood(query, ['densityKgM3', 'tangentialPerPct', 'radialPerPct'], refuse)
-    if (query.tangentialPerPct !== undefined && query.tangentialPerPct === query.radialPerPct) {
-      refuse('tangentialPerPct', 'must differ from radialPerPct: a wood that moves alike stays round')
-    }
     if (query.lidForm === 'plug' && query.lidMm === undefined) refuse('lidMm', 'needed for a plug lid')
     if (query.lidForm === 'hollow' && query.lidWallMm === undefined)
       refuse('lidWallMm', 'needed for a hollow lid')

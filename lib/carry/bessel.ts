@@ -1,7 +1,7 @@
 import { assertInRange } from '@/lib/assert'
 
 /** Points of the trapezium rule over a half period: exact to rounding while they outnumber the argument. */
-const POINTS = 400
+const POINTS = 200
 const ARGUMENT_MAX = 300
 
 function besselIntegral(order: 0 | 1, x: number): number {
@@ -29,7 +29,7 @@ function bisect(f: (x: number) => number, low: number, high: number): number {
   const risesAtLow = f(low) > 0
   let from = low
   let to = high
-  for (let n = 0; n < 60; n += 1) {
+  for (let n = 0; n < 50; n += 1) {
     const middle = (from + to) / 2
     if (f(middle) > 0 === risesAtLow) from = middle
     else to = middle
@@ -40,6 +40,24 @@ function bisect(f: (x: number) => number, low: number, high: number): number {
 /** Half width of the bracket round McMahon's estimate of a zero; the estimate is within 0.02 of it. */
 const ZERO_BRACKET = 0.1
 
+function zeroNear(f: (x: number) => number, estimate: number): number {
+  return bisect(f, estimate - ZERO_BRACKET, estimate + ZERO_BRACKET)
+}
+
+/** Zeros found so far, in order: the same for every Biot number. */
+const zerosOfJ0: number[] = []
+const zerosOfJ1: number[] = [0]
+
+function zeroOfJ0(n: number): number {
+  const near = (n + 0.75) * Math.PI
+  return (zerosOfJ0[n] ??= zeroNear(besselJ0, near + 1 / (8 * near)))
+}
+
+function zeroOfJ1(n: number): number {
+  const near = (n + 0.25) * Math.PI
+  return (zerosOfJ1[n] ??= zeroNear(besselJ1, near - 3 / (8 * near)))
+}
+
 /**
  * The first roots of b J1(b) = Bi J0(b): one between each zero of J1 (with 0) and the next zero of J0.
  * @param biot Biot number, above 0; Infinity gives the zeros of J0
@@ -49,19 +67,9 @@ const ZERO_BRACKET = 0.1
  * 1964, 9.5.12).
  */
 export function cylinderRoots(biot: number, count: number): number[] {
-  return Array.from({ length: count }, (_, n) => {
-    const nearJ0 = (n + 0.75) * Math.PI
-    const zeroOfJ0 = bisect(
-      besselJ0,
-      nearJ0 + 1 / (8 * nearJ0) - ZERO_BRACKET,
-      nearJ0 + 1 / (8 * nearJ0) + ZERO_BRACKET,
-    )
-    if (biot === Infinity) return zeroOfJ0
-    const nearJ1 = (n + 0.25) * Math.PI
-    const zeroOfJ1 =
-      n === 0
-        ? 0
-        : bisect(besselJ1, nearJ1 - 3 / (8 * nearJ1) - ZERO_BRACKET, nearJ1 - 3 / (8 * nearJ1) + ZERO_BRACKET)
-    return bisect((b) => b * besselJ1(b) - biot * besselJ0(b), zeroOfJ1, zeroOfJ0)
-  })
+  return Array.from({ length: count }, (_, n) =>
+    biot === Infinity
+      ? zeroOfJ0(n)
+      : bisect((b) => b * besselJ1(b) - biot * besselJ0(b), zeroOfJ1(n), zeroOfJ0(n)),
+  )
 }

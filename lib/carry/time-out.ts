@@ -107,7 +107,7 @@ const STEADY_HORIZON_MS = 3650 * 24 * HOUR_MS
 
 /**
  * How long until a joint has used up its allowance in air that does not change.
- * @param input sizes in mm, density in kg/m³ (200 to 1400), loss in mm per % MC, allowance in mm above 0, moisture
+ * @param input sizes in mm, density in kg/m³ (200 to 1400), loss in mm per % MC (0 to 10), allowance in mm above 0, moisture
  *   contents in % MC (0 to 30), temperature in °C (-10 to 50)
  * @returns minutes: the early edge, the middle and the late edge; or that it never uses it up there
  * @throws RangeError for an input out of range or NaN
@@ -117,7 +117,7 @@ const STEADY_HORIZON_MS = 3650 * 24 * HOUR_MS
  * Source: derived from Crank, The Mathematics of Diffusion (1975), ch. 4; early and late edge derived.
  */
 export function timeOutInSteadyAir(input: SteadyAirInput): TimeOut {
-  assertFiniteAbove('lossMmPerPct', input.lossMmPerPct, 0)
+  assertInRange('lossMmPerPct', input.lossMmPerPct, 0, 10)
   assertFiniteAbove('allowanceMm', input.allowanceMm, 0)
   assertInRange('fromMcPct', input.fromMcPct, 0, 30)
   assertInRange('toEmcPct', input.toEmcPct, 0, 30)
