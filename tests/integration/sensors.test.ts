@@ -1,3 +1,4 @@
+import { sql } from 'kysely'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { listReadings, sensorReadingsQuerySchema, typeReading } from '@/app/_server/readings'
 import { getRoom } from '@/app/_server/rooms'
@@ -53,12 +54,9 @@ describe('a sensor', () => {
     expect(credential.signInName).toBe(`${maker.siteCode}/${made.id}`)
     expect(credential.topic).toBe(`lidfast/v1/${maker.siteCode}/${made.id}/reading`)
     expect(await secretOpens(credential.secret, made.id)).toBe(true)
-    const { rows } = await database.db.executeQuery<{ everything: string }>(
-      database.db
-        .selectFrom('sensor')
-        .select((eb) => eb.cast<string>(eb.fn('to_jsonb', ['sensor']), 'text').as('everything'))
-        .compile(),
-    )
+    const { rows } = await sql<{
+      everything: string
+    }>`select to_jsonb(sensor)::text as everything from sensor`.execute(database.db)
     expect(rows.map((row) => row.everything).join()).not.toContain(credential.secret)
     expect(made.state).toBe('never-heard')
   })
