@@ -4,6 +4,7 @@ import { z } from 'zod'
 /** What a test of pages or API knows of the installation that it talks to. */
 export const runningStackSchema = z.object({
   pid: z.int(),
+  mode: z.string(),
   webUrl: z.url(),
   databaseUrl: z.string(),
   mqttUrl: z.string(),

@@ -2,9 +2,12 @@ import { mkdtemp, rm } from 'node:fs/promises'
 import os from 'node:os'
 import path from 'node:path'
 import { parseConfig } from '@/lib/config'
+import { needsBuild } from '@/workers/supervisor/build'
 import { freePort } from '@/workers/supervisor/ports'
 import { createStack, type Stack } from '@/workers/supervisor/stack'
 import { cleanEnvironment } from './env'
+import { isAlive } from './processes'
+import { readRunningStack } from './running'
 
 export const root = path.resolve(import.meta.dirname, '../..')
 
@@ -24,6 +27,7 @@ export interface TestStack {
 
 /** A whole installation of its own, with the demo: temporary folder, free ports of this machine, nothing shared but the built pages. */
 export async function startStack(options: TestStackOptions = {}): Promise<TestStack> {
+  await refuseToBuildUnderRunning()
   const folder = await mkdtemp(path.join(os.tmpdir(), 'lidfast-stack-'))
   const config = parseConfig({
     PORT: String(await freePort()),
@@ -54,4 +58,14 @@ export async function startStack(options: TestStackOptions = {}): Promise<TestSt
     throw error
   }
   return { runFile: path.join(folder, 'run.json'), stack, stop }
+}
+
+/** New pages under a server that runs would break it: it looks for files that are gone. */
+async function refuseToBuildUnderRunning(): Promise<void> {
+  const running = await readRunningStack(path.join(root, '.lidfast/run.json')).catch(() => undefined)
+  if (running?.mode !== 'start' || !isAlive(running.pid) || !(await needsBuild(root))) return
+  throw new Error(
+    `Lidfast runs from this folder, at ${running.webUrl}, and its sources have changed since. ` +
+      'Stop it first: the tests have to build the pages anew.',
+  )
 }

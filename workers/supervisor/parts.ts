@@ -1,5 +1,3 @@
-import { existsSync } from 'node:fs'
-import path from 'node:path'
 import type { Config } from '@/lib/config'
 import { portAnswers, reachable } from './ports'
 import type { Service, Task } from './supervisor'
@@ -71,6 +69,3 @@ const answersHttp = (url: string): Promise<boolean> =>
     () => true,
     () => false,
   )
-
-export const isThere = ({ args, cwd }: Service | Task): boolean =>
-  args.filter((arg) => /\.ts$/.test(arg)).every((file) => existsSync(path.join(cwd, file)))

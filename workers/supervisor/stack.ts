@@ -14,7 +14,7 @@ import {
 import * as parts from './parts'
 import { isPortFree, reachable } from './ports'
 import { migrate } from './migrate'
-import { createSupervisor, type Service, type Supervisor, type Task } from './supervisor'
+import { createSupervisor, type Supervisor } from './supervisor'
 
 export interface StackOptions {
   root: string
@@ -56,15 +56,6 @@ export async function createStack(options: StackOptions): Promise<Stack> {
   const ownDatabase = options.config.databaseUrl === undefined
   const ownMail = options.config.smtpUrl === undefined && config.smtpUrl !== undefined
 
-  const serve = async (service: Service) => {
-    if (!parts.isThere(service)) return say(`${service.name} is not there yet and is left out.`)
-    await supervisor.serve(service)
-  }
-  const run = async (task: Task) => {
-    if (!parts.isThere(task)) return say(`${task.name} is not there yet and is left out.`)
-    await supervisor.run(task)
-  }
-
   let clusterFolder: string | undefined
   async function startDatabase(): Promise<void> {
     const at = { port: ports.database, password: secrets.databasePassword }
@@ -88,16 +79,16 @@ export async function createStack(options: StackOptions): Promise<Stack> {
     if (ownDatabase) await startDatabase()
     await migrate(config.databaseUrl ?? '', say)
     await Promise.all([
-      config.demo ? run(parts.demoTask(context, options.resetDemo === true)) : undefined,
-      serve(parts.broker(context)),
-      ownMail ? serve(parts.mailTrap(context)) : undefined,
+      config.demo ? supervisor.run(parts.demoTask(context, options.resetDemo === true)) : undefined,
+      supervisor.serve(parts.broker(context)),
+      ownMail ? supervisor.serve(parts.mailTrap(context)) : undefined,
     ])
   }
 
   async function build(): Promise<void> {
     if (options.mode === 'dev' || !(await needsBuild(root))) return
     const hash = await sourcesHash(root)
-    await run(parts.buildTask(context))
+    await supervisor.run(parts.buildTask(context))
     await markBuilt(root, hash)
   }
 
@@ -110,11 +101,11 @@ export async function createStack(options: StackOptions): Promise<Stack> {
       await Promise.all([build(), startBase()])
       // Not before the demo is whole: these would act on what is half made.
       await Promise.all([
-        serve(parts.notices(context)),
-        serve(parts.delivery(context)),
-        serve(parts.web(context, options.mode)),
+        supervisor.serve(parts.notices(context)),
+        supervisor.serve(parts.delivery(context)),
+        supervisor.serve(parts.web(context, options.mode)),
       ])
-      if (config.demo) await serve(parts.fakeSensors(context))
+      if (config.demo) await supervisor.serve(parts.fakeSensors(context))
       await writeRunFile(folder, {
         pid: process.pid,
         startedAt: new Date().toISOString(),
