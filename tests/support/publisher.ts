@@ -28,6 +28,8 @@ export class StrictPublisher {
   /** Acknowledgements for what was already acknowledged: none, unless the sensor had to send twice. */
   sentAgain = 0
   connections = 0
+  /** Sent on this connection and not answered yet. */
+  underWay = 0
   private isStopped = false
   private limit = Infinity
   private goOn: () => void = () => undefined
@@ -82,6 +84,7 @@ export class StrictPublisher {
         if (index >= this.limit) return
         next += 1
         underWay.add(index)
+        this.underWay = underWay.size
         this.sendOne(client, index)
       }
     }
@@ -93,6 +96,7 @@ export class StrictPublisher {
         if (this.acknowledged.has(index)) this.sentAgain += 1
         this.acknowledged.add(index)
         underWay.delete(index)
+        this.underWay = underWay.size
         if (this.acknowledged.size === this.readings.length || this.isStopped) resolve()
         else send()
       }
