@@ -34,7 +34,7 @@ export default async function LandingPage() {
         )
       }
     >
-      <h1 className="px-4 text-[32px] leading-[40px] sm:px-0 sm:text-display">
+      <h1 className="px-4 text-[32px] leading-[40px] sm:px-0 sm:text-display sm:leading-[52px]">
         <strong className="block">Know what the air will do to a lid</strong>
         before you carry the box through the door.
       </h1>

@@ -1,12 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import { plainText } from '@/lib/format/sentence'
-import {
-  movedWords,
-  piecesHeadline as headlineParts,
-  quarterTurnWords,
-  usedWords,
-  woodWords,
-} from './wording'
+import { movedWords, piecesHeadline as headlineParts, quarterTurnWords, usedWords } from './wording'
 
 const piecesHeadline = (...of: Parameters<typeof headlineParts>) => plainText(headlineParts(...of))
 const numbers = (...of: string[]) => of.map((number) => ({ number }))
@@ -77,13 +71,5 @@ describe('the figures behind it', () => {
     expect(plainSpaces(movedWords({ ...mc, lossMm: null }, 'metric'))).toBe(
       'It stands 1.4 points damper than where its joint was cut.',
     )
-  })
-})
-
-describe('the name of a wood', () => {
-  it('comes from the table, and says when nobody knows', () => {
-    expect(woodWords('fraxinus-excelsior')).toBe('Ash, European')
-    expect(woodWords(null)).toBe('wood not known')
-    expect(woodWords('no-such-wood')).toBe('no such wood')
   })
 })

@@ -1,7 +1,6 @@
 import { formatFineLength, formatPoints } from '@/lib/format/figures'
 import { say, strong, type TextPart } from '@/lib/format/sentence'
 import type { UnitSystem } from '@/lib/sites/site'
-import { findSpecies } from '@/lib/wood/species'
 import type { FitGrade, Grain, Piece, PieceDetail, Stage, WoodKind } from './piece'
 
 export const stageWords: Readonly<Record<Stage, string>> = {
@@ -29,12 +28,6 @@ export const woodKindWords: Readonly<Record<WoodKind, string>> = {
 export const grainWords: Readonly<Record<Grain, string>> = {
   'end-grain': 'end-grain: the grain runs from base to lid',
   'side-grain': 'side-grain: the grain runs across',
-}
-
-/** What a wood is called here: "Ash, European", or what to say when nobody knows. */
-export function woodWords(slug: string | null): string {
-  if (slug === null) return 'wood not known'
-  return findSpecies(slug)?.commonName ?? slug.replaceAll('-', ' ')
 }
 
 type ListedOut = Pick<Piece, 'number'>

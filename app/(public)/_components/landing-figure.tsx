@@ -2,7 +2,8 @@
 
 import { useState } from 'react'
 import { useWidth } from '@/app/_components/charts/use-width'
-import { ControlSentence, SentenceInput, SentenceSelect } from '@/app/_components/ui/sentence-control'
+import { SentenceInput, SentenceSelect } from '@/app/_components/ui/sentence-control'
+import { FlowingSentence } from '@/app/sites/_components/flowing-sentence'
 import { steadyCarry, type SteadyCarry } from '@/lib/carry/steady-carry'
 import { formatEmc } from '@/lib/format/figures'
 import { formatDuration } from '@/lib/format/times'
@@ -114,16 +115,11 @@ export function LandingFigure() {
       </div>
       <div className="flex flex-col gap-3 px-4 sm:px-0">
         <LandingStory carry={carry} minutes={minutes} />
-        <ControlSentence>
-          <span>The house is at</span>
-          <SentenceInput label="Temperature in the house" unit="°C" {...field('houseC')} />
-          <span>and</span>
-          <SentenceInput label="Humidity in the house" unit="% RH" {...field('houseRh')} />
-          <span>, the shop at</span>
-          <SentenceInput label="Temperature in the shop" unit="°C" {...field('shopC')} />
-          <span>and</span>
-          <SentenceInput label="Humidity in the shop" unit="% RH" {...field('shopRh')} />
-          <span>, and the lid fits</span>
+        <FlowingSentence>
+          The house is at <SentenceInput label="Temperature in the house" unit="°C" {...field('houseC')} />{' '}
+          and <SentenceInput label="Humidity in the house" unit="% RH" {...field('houseRh')} />, the shop at{' '}
+          <SentenceInput label="Temperature in the shop" unit="°C" {...field('shopC')} /> and{' '}
+          <SentenceInput label="Humidity in the shop" unit="% RH" {...field('shopRh')} />, and the lid fits{' '}
           <SentenceSelect
             label="How the lid fits"
             value={typed.fit}
@@ -138,8 +134,8 @@ export function LandingFigure() {
               </option>
             ))}
           </SentenceSelect>
-          <span>.</span>
-        </ControlSentence>
+          .
+        </FlowingSentence>
         <p role="status" className="text-label text-warn empty:hidden">
           {asTyped === undefined
             ? 'Temperatures go from −10 to 50 °C and humidity from 0 to 100 % RH; the figure still shows what was typed before.'

@@ -10,6 +10,7 @@ import { RichText } from '@/app/_components/ui/rich-text'
 import { useAction } from '@/app/_components/use-action'
 import { formatFullMoment, formatMoment } from '@/lib/format/times'
 import type { Notice, Rule } from '@/lib/notices/notice'
+import { isFresh } from '@/lib/notices/rule-sentences'
 import { may } from '@/lib/sites/permissions'
 import type { Reader } from '@/lib/sites/reader'
 
@@ -49,11 +50,11 @@ export function NoticeLine({ reader, notice }: { reader: Reader; notice: Notice 
         {moment(notice.at)}
       </time>
       <div className="max-sm:col-start-2">
-        <p className={classNames('max-w-words', !notice.isSeen && 'font-semibold')}>
+        <p className={classNames('max-w-words', isFresh(notice) && 'font-semibold')}>
           <RichText parts={notice.title} />
         </p>
         {notice.body ? (
-          <p className="max-w-words">
+          <p className="max-w-words whitespace-pre-line">
             <RichText parts={notice.body} />
           </p>
         ) : null}
@@ -80,7 +81,7 @@ export function NoticeLine({ reader, notice }: { reader: Reader; notice: Notice 
             I have it in hand
           </Button>
         ) : null}
-        {!notice.isSeen ? (
+        {isFresh(notice) ? (
           <Button
             variant="link"
             pending={change.pending}

@@ -12,7 +12,7 @@ import { Sheet } from '@/app/_components/ui/sheet'
 import { EmptyState, StaleState } from '@/app/_components/ui/states'
 import { useAction } from '@/app/_components/use-action'
 import type { Notice } from '@/lib/notices/notice'
-import { noticesHeadline } from '@/lib/notices/rule-sentences'
+import { isFresh, noticesHeadline } from '@/lib/notices/rule-sentences'
 import type { Reader } from '@/lib/sites/reader'
 import type { Site } from '@/lib/sites/site'
 import { NoticeLine } from './notice-line'
@@ -46,7 +46,7 @@ export function NoticesView({ reader, site, initial, initialShow }: NoticesViewP
     invalidates: [siteKey(reader.site, 'notices'), siteKey(reader.site, 'frame')],
   })
   const items = notices.data?.pages.flatMap((page) => page.items) ?? []
-  const hasFresh = items.some((notice) => !notice.isSeen)
+  const hasFresh = items.some(isFresh)
 
   return (
     <>

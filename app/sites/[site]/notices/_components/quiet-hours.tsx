@@ -5,7 +5,8 @@ import { useRouter } from 'next/navigation'
 import { useForm } from 'react-hook-form'
 import { apiFetch } from '@/app/_components/api'
 import { Button } from '@/app/_components/ui/button'
-import { ControlSentence, SentenceInput } from '@/app/_components/ui/sentence-control'
+import { SentenceInput } from '@/app/_components/ui/sentence-control'
+import { FlowingSentence } from '@/app/sites/_components/flowing-sentence'
 import { Sheet } from '@/app/_components/ui/sheet'
 import { TextLink } from '@/app/_components/ui/text-link'
 import { useAction } from '@/app/_components/use-action'
@@ -49,17 +50,12 @@ export function QuietHours({ reader, site }: { reader: Reader; site: Site }) {
             save.act(body)
           })}
         >
-          <ControlSentence>
-            <span>From</span>
-            <SentenceInput type="time" label="Quiet hours begin" {...form.register('quietFrom')} />
-            <span>to</span>
-            <SentenceInput type="time" label="Quiet hours end" {...form.register('quietTo')} />
-            <span>
-              , hold everything except a finished box that is overdue, told once, to its maker. Lock-up is at
-            </span>
-            <SentenceInput type="time" label="Lock-up" {...form.register('lockUpAt')} />
-            <span>.</span>
-          </ControlSentence>
+          <FlowingSentence>
+            From <SentenceInput type="time" label="Quiet hours begin" {...form.register('quietFrom')} /> to{' '}
+            <SentenceInput type="time" label="Quiet hours end" {...form.register('quietTo')} />, hold
+            everything except a finished box that is overdue, told once, to its maker. Lock-up is at{' '}
+            <SentenceInput type="time" label="Lock-up" {...form.register('lockUpAt')} />.
+          </FlowingSentence>
           {message ? (
             <p role="alert" className="text-warn">
               {message}

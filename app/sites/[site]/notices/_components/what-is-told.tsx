@@ -9,8 +9,10 @@ export function WhatIsTold({ site }: { site: Site }) {
     <Sheet title="What you are told" id="rules" aside="The same for everyone here">
       <ul className="flex flex-col divide-y divide-line">
         {ruleSentences(site).map((rule) => (
-          <li key={rule.key} className="max-w-words py-3 text-[18px] leading-7">
-            <RichText parts={rule.words} />
+          <li key={rule.key} className="py-3 text-[18px] leading-7">
+            <p className="max-w-words">
+              <RichText parts={rule.words} />
+            </p>
           </li>
         ))}
       </ul>

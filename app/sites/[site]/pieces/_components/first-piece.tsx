@@ -59,7 +59,7 @@ export function FirstPiece({ reader, rooms, number, roomId }: FirstPieceProps) {
     done: (piece) => `${piece.number} is kept`,
     onDone: (piece, { isGoingOut }) => {
       const base = `/sites/${reader.site}`
-      router.push(isGoingOut ? `${base}/carry?piece=${piece.id}` : `${base}/pieces/${piece.id}`)
+      router.push(isGoingOut ? `${base}/carry?pieces=${piece.id}` : `${base}/pieces/${piece.id}`)
     },
     errors: 'inline',
   })

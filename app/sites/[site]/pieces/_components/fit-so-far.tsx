@@ -7,6 +7,9 @@ import type { UnitSystem } from '@/lib/sites/site'
 /** How the lid should turn now, in the words of the quarter turn, then the figures behind them. */
 export function FitSoFar({ piece, units }: { piece: PieceDetail; units: UnitSystem }) {
   const { mc } = piece
+  // Blanks, wild grain and stabilised wood are not reckoned; the page's sentence says so.
+  if (mc === null && (piece.stage !== 'box' || piece.woodKind === 'wild' || piece.woodKind === 'stabilised'))
+    return null
   if (mc === null) {
     return (
       <Sheet title="The fit so far" id="fit">

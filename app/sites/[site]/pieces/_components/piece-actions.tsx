@@ -22,7 +22,7 @@ export function PieceActions({ reader, piece, rooms }: PieceActionsProps) {
     <div className="flex flex-wrap gap-3 px-4 sm:px-0">
       {mayCarry ? (
         <ButtonLink
-          href={piece.isOut ? `${base}/carry` : `${base}/carry?piece=${piece.id}`}
+          href={piece.isOut ? `${base}/carry` : `${base}/carry?pieces=${piece.id}`}
           variant="filled"
           className="max-sm:w-full"
         >

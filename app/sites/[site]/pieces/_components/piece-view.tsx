@@ -9,10 +9,10 @@ import { StaleState } from '@/app/_components/ui/states'
 import { TextLink } from '@/app/_components/ui/text-link'
 import { formatLength } from '@/lib/format/figures'
 import type { PieceDetail } from '@/lib/pieces/piece'
+import { pieceOutline } from '@/lib/pieces/title'
 import type { Reader } from '@/lib/sites/reader'
 import type { RoomChoice } from './first-piece'
 import { FitSoFar } from './fit-so-far'
-import { outlineOf } from './outline-of'
 import { PieceActions } from './piece-actions'
 import { PieceFactsList } from './piece-facts-list'
 import { PiecePlaces } from './piece-places'
@@ -34,7 +34,7 @@ export function PieceView({ reader, initial, rooms }: PieceViewProps) {
     <>
       <div className="flex items-start gap-5 sm:gap-8">
         <span className="shrink-0 pl-4 sm:pl-2">
-          <PieceOutline outline={outlineOf(piece)} isOut={piece.isOut} size={84} />
+          <PieceOutline outline={pieceOutline(piece)} isOut={piece.isOut} size={84} />
         </span>
         <PageSentence
           above={

@@ -20,7 +20,7 @@ export default async function NewPiecePage({ params, searchParams }: Props) {
   const db = database()
   const [rooms, latest] = await Promise.all([
     listRooms(db, member, now),
-    listPieces(db, member, { sort: '-created', limit: 1 }),
+    listPieces(db, member, { sort: '-number', limit: 1 }),
   ])
   const { room } = await searchParams
   return (

@@ -13,6 +13,9 @@ import { roleDeeds } from '@/lib/sites/role-words'
 import type { Reader } from '@/lib/sites/reader'
 import type { Member } from '@/lib/sites/site'
 
+/** The columns of a member's line from a tablet's width up. */
+export const memberGrid = 'grid gap-x-4 sm:grid-cols-[minmax(0,4fr)_minmax(0,5fr)_10rem_minmax(0,3fr)_5.5rem]'
+
 export function MemberLine({ reader, member }: { reader: Reader; member: Member }) {
   const [isRemoving, setIsRemoving] = useState(false)
   const [wanted, setWanted] = useState<Role | null>(null)
@@ -38,7 +41,7 @@ export function MemberLine({ reader, member }: { reader: Reader; member: Member 
   const isChangeable = may(reader.role, 'members:change') && !member.isYou
 
   return (
-    <li className="grid items-center gap-x-4 gap-y-2 py-3 sm:grid-cols-[minmax(0,4fr)_minmax(0,5fr)_10rem_minmax(0,3fr)_5.5rem]">
+    <li className={`${memberGrid} items-center gap-y-2 py-3`}>
       <p className="font-semibold">
         {member.name}
         {member.isYou ? ', you' : ''}

@@ -7,7 +7,7 @@ import { may } from '@/lib/sites/permissions'
 import type { Reader } from '@/lib/sites/reader'
 import type { Member } from '@/lib/sites/site'
 import { InviteDialog } from './invite-dialog'
-import { MemberLine } from './member-line'
+import { memberGrid, MemberLine } from './member-line'
 
 export function MemberList({ reader, members }: { reader: Reader; members: readonly Member[] }) {
   const [isInviting, setIsInviting] = useState(false)
@@ -29,6 +29,15 @@ export function MemberList({ reader, members }: { reader: Reader; members: reado
         ) : null
       }
     >
+      <div
+        aria-hidden="true"
+        className={`${memberGrid} border-b border-edge pb-2 text-label font-semibold text-ink-soft max-sm:hidden`}
+      >
+        <span>Name</span>
+        <span>E-mail</span>
+        <span>Role</span>
+        <span>Last here</span>
+      </div>
       <ul className="flex flex-col divide-y divide-line">
         {members.map((member) => (
           <MemberLine key={member.id} reader={reader} member={member} />

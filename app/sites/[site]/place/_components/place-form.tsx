@@ -8,7 +8,8 @@ import { Choice } from '@/app/_components/ui/choice'
 import { Field } from '@/app/_components/ui/field'
 import { Input } from '@/app/_components/ui/input'
 import { Select } from '@/app/_components/ui/select'
-import { ControlSentence, SentenceInput } from '@/app/_components/ui/sentence-control'
+import { SentenceInput } from '@/app/_components/ui/sentence-control'
+import { FlowingSentence } from '@/app/sites/_components/flowing-sentence'
 import { Sheet } from '@/app/_components/ui/sheet'
 import { useAction } from '@/app/_components/use-action'
 import type { Reader } from '@/lib/sites/reader'
@@ -78,15 +79,12 @@ export function PlaceForm({ reader, site, timeZones }: PlaceFormProps) {
           hint="For those who have chosen none of their own."
         />
         <div>
-          <ControlSentence>
-            <span>Quiet from</span>
-            <SentenceInput type="time" label="Quiet hours begin" {...form.register('quietFrom')} />
-            <span>to</span>
-            <SentenceInput type="time" label="Quiet hours end" {...form.register('quietTo')} />
-            <span>; at</span>
-            <SentenceInput type="time" label="Lock-up" {...form.register('lockUpAt')} />
-            <span>ask what is still out.</span>
-          </ControlSentence>
+          <FlowingSentence>
+            Quiet from <SentenceInput type="time" label="Quiet hours begin" {...form.register('quietFrom')} />{' '}
+            to <SentenceInput type="time" label="Quiet hours end" {...form.register('quietTo')} />; at{' '}
+            <SentenceInput type="time" label="Lock-up" {...form.register('lockUpAt')} /> ask what is still
+            out.{' '}
+          </FlowingSentence>
           {timeError ? (
             <p role="alert" className="text-label text-warn">
               {timeError}

@@ -9,7 +9,8 @@ import { Button } from '@/app/_components/ui/button'
 import { ButtonLink } from '@/app/_components/ui/button-link'
 import { Caution } from '@/app/_components/ui/caution'
 import { PageSentence } from '@/app/_components/ui/page-sentence'
-import { ControlSentence, SentenceInput, SentenceSelect } from '@/app/_components/ui/sentence-control'
+import { SentenceInput, SentenceSelect } from '@/app/_components/ui/sentence-control'
+import { FlowingSentence } from '@/app/sites/_components/flowing-sentence'
 import { Sheet } from '@/app/_components/ui/sheet'
 import { EmptyState } from '@/app/_components/ui/states'
 import { useAction } from '@/app/_components/use-action'
@@ -97,16 +98,16 @@ export function AddSensor({ reader, rooms, roomId }: AddSensorProps) {
       >
         {made === null ? (
           <>
-            <ControlSentence>
-              <span>A sensor called</span>
+            <FlowingSentence>
+              A sensor called{' '}
               <SentenceInput
                 label="Name of the sensor"
                 placeholder="Pantry shelf"
                 aria-invalid={errorOf('name') ? true : undefined}
                 aria-describedby="new-sensor-errors"
                 {...form.register('name')}
-              />
-              <span>hangs in</span>
+              />{' '}
+              hangs in{' '}
               <SentenceSelect
                 label="Room that it hangs in"
                 aria-invalid={errorOf('roomId') ? true : undefined}
@@ -118,14 +119,15 @@ export function AddSensor({ reader, rooms, roomId }: AddSensorProps) {
                   </option>
                 ))}
               </SentenceSelect>
-              <span>,</span>
+              ,{' '}
               <SentenceInput
                 label="Where in the room"
                 placeholder="1.5 m up, away from the stove"
                 aria-invalid={errorOf('spot') ? true : undefined}
                 {...form.register('spot')}
               />
-            </ControlSentence>
+              .
+            </FlowingSentence>
             <div id="new-sensor-errors" role="alert" className="text-warn empty:hidden">
               {add.problem && messages.length === 0 ? add.problem.detail || add.problem.title : null}
               {add.error && !add.problem ? 'No answer came. Nothing was lost; press the button again.' : null}
@@ -156,13 +158,10 @@ function MadeSentence({ made, reader }: { made: SensorMade; reader: Reader }) {
   const { credential } = made
   return (
     <>
-      <ControlSentence>
-        <span>
-          A sensor called <strong>{made.name}</strong> hangs in{' '}
-          <strong>{made.room?.name ?? 'no room'}</strong>
-          {made.spot ? `, ${made.spot}` : ''}.
-        </span>
-      </ControlSentence>
+      <FlowingSentence>
+        A sensor called <strong>{made.name}</strong> hangs in <strong>{made.room?.name ?? 'no room'}</strong>
+        {made.spot ? `, ${made.spot}` : ''}.
+      </FlowingSentence>
       <CredentialSentence credential={credential} />
       <FirstReading reader={reader} sensorId={made.id} />
       <div className="flex flex-wrap gap-3">

@@ -1,6 +1,6 @@
 'use client'
 
-import { ControlSentence } from '@/app/_components/ui/sentence-control'
+import { FlowingSentence } from '@/app/sites/_components/flowing-sentence'
 import type { SensorCredential } from '@/lib/sensors/sensor'
 import { publishLine } from '@/lib/sensors/wording'
 import { CopyText } from './copy-text'
@@ -10,17 +10,12 @@ export function CredentialSentence({ credential }: { credential: SensorCredentia
   const { broker, signInName, secret, topic } = credential
   return (
     <>
-      <ControlSentence>
-        <span>It reaches</span>
-        <CopyText text={`${broker.host}:${String(broker.port)}`} what="the broker’s address" />
-        <span>, signs in as</span>
-        <CopyText text={signInName} what="the sign-in name" />
-        <span>with the secret</span>
-        <CopyText text={secret} what="the secret" />
-        <span>and publishes to</span>
-        <CopyText text={topic} what="the address to publish to" />
-        <span>.</span>
-      </ControlSentence>
+      <FlowingSentence>
+        It reaches <CopyText text={`${broker.host}:${String(broker.port)}`} what="the broker’s address" />,
+        signs in as <CopyText text={signInName} what="the sign-in name" /> with the secret{' '}
+        <CopyText text={secret} what="the secret" /> and publishes to{' '}
+        <CopyText text={topic} what="the address to publish to" />.
+      </FlowingSentence>
       <p className="text-label text-ink-soft">
         The secret is shown this once and kept only in a form that can’t be read back. Lost it? Renew it on
         the sensor’s page.

@@ -6,10 +6,11 @@ import { z } from 'zod'
 import { apiFetch } from '@/app/_components/api'
 import { siteKey } from '@/app/_components/live/site-keys'
 import { Button } from '@/app/_components/ui/button'
-import { ControlSentence, SentenceInput, SentenceSelect } from '@/app/_components/ui/sentence-control'
+import { SentenceInput, SentenceSelect } from '@/app/_components/ui/sentence-control'
+import { FlowingSentence } from '@/app/sites/_components/flowing-sentence'
 import { useAction } from '@/app/_components/use-action'
+import { instantOfLocalField } from '@/lib/format/local-time'
 import { newPlacementSchema, type NewPlacement, type SensorDetail } from '@/lib/sensors/sensor'
-import { instantOfLocalTime } from '@/lib/sites/local-time'
 import type { Reader } from '@/lib/sites/reader'
 
 type MoveSensorProps = {
@@ -46,17 +47,19 @@ export function MoveSensor({ reader, sensor, rooms }: MoveSensorProps) {
     errors: 'inline',
   })
   const submit = form.handleSubmit(({ roomId, spot, since }) => {
-    const [day = '', time = ''] = since.split('T')
-    const fromAt =
-      since === '' ? undefined : new Date(instantOfLocalTime(day, time, reader.timeZone)).toISOString()
-    move.act({ roomId, spot, ...(fromAt === undefined ? {} : { fromAt }) })
+    const from = since === '' ? undefined : instantOfLocalField(since, reader.timeZone)
+    if (since !== '' && from === undefined) {
+      form.setError('since', { message: 'That is not a day and a time.' })
+      return
+    }
+    move.act({ roomId, spot, ...(from === undefined ? {} : { fromAt: from.toISOString() }) })
   })
-  const message = move.problem?.detail ?? move.error?.message
+  const message = form.formState.errors.since?.message ?? move.problem?.detail ?? move.error?.message
 
   return (
     <form onSubmit={submit} noValidate aria-label="Move the sensor" className="mt-5 flex flex-col gap-3">
-      <ControlSentence>
-        <span>It hangs in</span>
+      <FlowingSentence>
+        It hangs in{' '}
         <SentenceSelect label="Room to move it to" {...form.register('roomId')}>
           {rooms.map((room) => (
             <option key={room.id} value={room.id}>
@@ -64,16 +67,15 @@ export function MoveSensor({ reader, sensor, rooms }: MoveSensorProps) {
             </option>
           ))}
         </SentenceSelect>
-        <span>,</span>
-        <SentenceInput label="Where in the room" placeholder="on the shelf" {...form.register('spot')} />
-        <span>, since</span>
+        , <SentenceInput label="Where in the room" placeholder="on the shelf" {...form.register('spot')} />,
+        since{' '}
         <SentenceInput
           label="Since when; empty means from now on"
           type="datetime-local"
           aria-describedby="move-note"
           {...form.register('since')}
         />
-      </ControlSentence>
+      </FlowingSentence>
       <p id="move-note" className="text-label text-ink-soft">
         Leave the time empty for “from now on”. A time in the past moves the readings taken since then to that
         room.

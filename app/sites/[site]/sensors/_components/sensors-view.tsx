@@ -148,7 +148,7 @@ function columnsFor({ site, timeZone, units, at }: Reader): Column<Sensor>[] {
         sensor.last ? (
           <span>
             {formatTemperature(sensor.last.temperatureC, units)}, {formatHumidity(sensor.last.humidityPct)},{' '}
-            <strong>{formatEmc(sensor.last.emcPct)}</strong>
+            <strong className="whitespace-nowrap">{formatEmc(sensor.last.emcPct)}</strong>
           </span>
         ) : (
           <span className="text-ink-soft">none yet</span>
@@ -160,7 +160,9 @@ function columnsFor({ site, timeZone, units, at }: Reader): Column<Sensor>[] {
       phone: 'line',
       cell: (sensor) =>
         sensor.heardAt ? (
-          <Age at={sensor.heardAt} timeZone={timeZone} now={at} />
+          <span className="whitespace-nowrap">
+            <Age at={sensor.heardAt} timeZone={timeZone} now={at} />
+          </span>
         ) : (
           <span className="text-ink-soft">never</span>
         ),
@@ -179,7 +181,7 @@ function Battery({ pct }: { pct: number | null }) {
   if (pct === null) return <span className="text-ink-soft">not told</span>
   return (
     <span className={pct < lowBatteryPct ? 'font-semibold text-warn' : undefined}>
-      {`${String(Math.round(pct))}\u00a0% left`}
+      {`${String(Math.round(pct))}\u00a0%\u00a0left`}
     </span>
   )
 }
