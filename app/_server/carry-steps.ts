@@ -11,7 +11,7 @@ import { findRoom, type RoomRecord } from '@/db/queries/rooms'
 import { inTransaction } from '@/db/queries/transaction'
 import type { Database } from '@/db/schema'
 import type { Carry } from '@/lib/carry/carry'
-import { judgePiece } from '@/lib/carry/judge'
+import { checkPiece } from '@/lib/carry/judge'
 import { byPress, namesOf } from '@/lib/carry/summary'
 import { undoBringBackMs } from '@/lib/notices/policy'
 import type { Cover } from '@/lib/pieces/piece'
@@ -86,16 +86,14 @@ async function adviceAgainst(
 ) {
   const material = await loadCarryMaterial(db, member, asked.pieceIds, [asked.room.id], now)
   const leaves = pieces.flatMap((piece) => {
-    const judged = judgePiece(material, {
+    const check = checkPiece(material, {
       pieceId: piece.id,
       toRoomId: asked.room.id,
       startsAt: asked.outAt,
       stayMinutes: asked.stayMinutes,
       cover: asked.cover,
     })
-    return judged?.check.kind === 'verdict' && judged.check.verdict === 'leave'
-      ? { piece, check: judged.check }
-      : []
+    return check?.kind === 'verdict' && check.verdict === 'leave' ? { piece, check } : []
   })
   const first = byPress(leaves)[0]
   if (first === undefined) return undefined

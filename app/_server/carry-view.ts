@@ -7,7 +7,7 @@ import { findPiecesById, type PieceRecord } from '@/db/queries/pieces'
 import type { Database } from '@/db/schema'
 import type { Carry, CarryPiece } from '@/lib/carry/carry'
 import type { PieceCheck } from '@/lib/carry/carry-check'
-import { judgePiece } from '@/lib/carry/judge'
+import { checkPiece } from '@/lib/carry/judge'
 import type { CarryMaterial } from '@/lib/carry/material'
 import { carryHeadline, worstOf } from '@/lib/carry/summary'
 import { undoBringBackMs } from '@/lib/notices/policy'
@@ -48,7 +48,7 @@ export function checkOf(
   piece: CarryPieceRecord,
 ): PieceCheck | null {
   if (!isOpen(carry) || piece.backAt !== null) return null
-  const judged = judgePiece(material, {
+  const check = checkPiece(material, {
     pieceId: piece.pieceId,
     toRoomId: carry.toRoom.roomId,
     // A plan whose hour has passed is judged as if it went now: the past can't be gone into any more.
@@ -56,7 +56,7 @@ export function checkOf(
     stayMinutes: carry.stayMinutes,
     cover: piece.cover,
   })
-  return judged?.check ?? null
+  return check ?? null
 }
 
 /** Past its early edge; where there is no edge to go by, past the stay that was planned. */

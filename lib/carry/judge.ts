@@ -8,7 +8,13 @@ export interface JudgedPiece {
   closed: CarryCheckAnswer['pieces'][number]['bagged']
 }
 
-/** Joins what was loaded with the check. Page, API and the notices' worker all judge by this. */
+/** What the check says of one piece; `undefined` for a piece that was not loaded. */
+export function checkPiece(material: CarryMaterial, asked: CarryAsked): PieceCheck | undefined {
+  const input = carryCheckInput(material, asked)
+  return input === undefined ? undefined : carryCheck(input)
+}
+
+/** As `checkPiece`, with the better cover beside it, which costs a second check. Page, API and the notices' worker all judge by this. */
 export function judgePiece(material: CarryMaterial, asked: CarryAsked): JudgedPiece | undefined {
   const input = carryCheckInput(material, asked)
   if (input === undefined) return undefined

@@ -1,5 +1,5 @@
 import { TZDate } from '@date-fns/tz'
-import { addDays, differenceInCalendarDays, format, startOfDay, subMonths } from 'date-fns'
+import { format, startOfDay } from 'date-fns'
 
 /** The instant at which a calendar day begins in a zone. Some zones have days that begin at 01:00. */
 export function startOfDayAt(dayOn: string, timeZone: string): Date {
@@ -17,18 +17,27 @@ export function startOfDayOf(at: Date, timeZone: string): Date {
   return new Date(startOfDay(new TZDate(at, timeZone)).getTime())
 }
 
-// A calendar day has no zone, so reckoning with days is done at noon UTC, far from any midnight.
-const noonOf = (dayOn: string): TZDate => new TZDate(`${dayOn}T12:00:00Z`, 'UTC')
+const dayMs = 86_400_000
 
-export const daysAfter = (dayOn: string, days: number): string =>
-  format(addDays(noonOf(dayOn), days), 'yyyy-MM-dd')
+/** A calendar day has no zone, so reckoning with days is done on the even days of UTC. */
+function countedDay(dayOn: string): number {
+  const [year = 0, month = 1, day = 1] = dayOn.split('-').map(Number)
+  return Date.UTC(year, month - 1, day) / dayMs
+}
 
-export const monthsBefore = (dayOn: string, months: number): string =>
-  format(subMonths(noonOf(dayOn), months), 'yyyy-MM-dd')
+const textOf = (counted: number): string => new Date(counted * dayMs).toISOString().slice(0, 10)
+
+export const daysAfter = (dayOn: string, days: number): string => textOf(countedDay(dayOn) + days)
+
+/** The same day of an earlier month, or its last day where it has no such day. */
+export function monthsBefore(dayOn: string, months: number): string {
+  const [year = 0, month = 1, day = 1] = dayOn.split('-').map(Number)
+  const lastDay = new Date(Date.UTC(year, month - months, 0)).getUTCDate()
+  return textOf(Date.UTC(year, month - 1 - months, Math.min(day, lastDay)) / dayMs)
+}
 
 /** Whole days from one calendar day to another. */
-export const daysFrom = (firstOn: string, lastOn: string): number =>
-  differenceInCalendarDays(noonOf(lastOn), noonOf(firstOn))
+export const daysFrom = (firstOn: string, lastOn: string): number => countedDay(lastOn) - countedDay(firstOn)
 
 /** First and last day of the month that a day is in. */
 export function monthOf(dayOn: string): { firstOn: string; nextFirstOn: string } {

@@ -33,7 +33,8 @@ export function needs(
 
 function sensorNeed(sensor: SensorForNeeds, clock: { timeZone: string; now: Date }): Need | undefined {
   const head = { id: `sensor-${sensor.id}`, link: `/sensors/${sensor.id}`, linkWords: 'Look at it' }
-  const where = sensor.roomName === null ? '' : ` in ${sensor.roomName}`
+  const isNamedForRoom = sensor.roomName?.toLowerCase() === sensor.name.toLowerCase()
+  const where = sensor.roomName === null || isNamedForRoom ? '' : ` in ${sensor.roomName}`
   if (sensor.state === 'silent' && sensor.heardAt !== null) {
     const since = formatMoment(sensor.heardAt, clock.timeZone, clock.now)
     return {

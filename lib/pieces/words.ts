@@ -1,6 +1,6 @@
 import { jointOfPiece, ringOfPiece } from '@/lib/carry/joint-defaults'
 import type { PieceFacts } from '@/lib/carry/carry-check'
-import { formatEmc, formatFineLength } from '@/lib/format/figures'
+import { formatEmc } from '@/lib/format/figures'
 import { DUST_ALWAYS, dustNote } from '@/lib/wood/dust'
 import { findSpecies } from '@/lib/wood/species'
 import type { PieceDetail } from './piece'
@@ -37,12 +37,10 @@ function boxHeadline(title: string, { mc, number }: PieceForWords, where: string
   if (mc === null) return `${title} ${number}${where}: nothing is known yet of the air that it was in.`
   const at = `at about ${formatEmc(mc.ringMcPct)}${where}`
   if (mc.usedFraction === null) return `${title} ${number} is ${at}.`
-  if (mc.usedFraction >= 1) {
-    const way = mc.ringMcPct > mc.cutMcPct ? 'tight, easy, tight, easy' : 'loose one way and snug the other'
-    return `${title} ${number}, ${at}, has moved past what its joint may lose: turn the lid and feel for ${way}. Never force it.`
-  }
-  if (mc.usedFraction >= 0.5 && mc.lossMm !== null)
-    return `${title} ${number}, ${at}, has about half of its allowance left or less (${formatFineLength(mc.lossMm)} lost): check before it goes out.`
+  if (mc.usedFraction >= 1)
+    return `${title} ${number}, ${at}, has moved past what its joint may lose. Turn the lid by quarters: tight, easy, tight, easy. Never force it.`
+  if (mc.usedFraction >= 0.5)
+    return `${title} ${number}, ${at}, has ${String(Math.round(mc.usedFraction * 20) * 5)}\u00a0% of its allowance used: check before it goes out.`
   return `${title} ${number} keeps its fit, ${at}.`
 }
 
