@@ -20,6 +20,7 @@ import { fitGradeWords, stageWords } from '@/lib/pieces/wording'
 import { may } from '@/lib/sites/permissions'
 import type { Reader } from '@/lib/sites/reader'
 import { DustNotes } from './dust-notes'
+import { FirstAnswerLine, type RoomWithAir } from './first-answer-line'
 import { LengthInput, lengthError } from './length-input'
 import { WoodSelect } from './wood-select'
 
@@ -27,7 +28,7 @@ export type RoomChoice = { id: string; name: string; mark: number }
 
 type FirstPieceProps = {
   reader: Reader
-  rooms: readonly RoomChoice[]
+  rooms: readonly RoomWithAir[]
   /** The next number in the maker's own row, offered and not imposed. */
   number: string
   roomId?: string
@@ -148,6 +149,19 @@ export function FirstPiece({ reader, rooms, number, roomId }: FirstPieceProps) {
           />
         </div>
       </Sheet>
+      {isBox ? (
+        <div className="max-w-[40rem]">
+          <FirstAnswerLine
+            answers={{
+              wood: values.wood ?? null,
+              jointDiameterMm: inRange(values.jointDiameterMm),
+              fitGrade: values.fitGrade ?? null,
+            }}
+            here={rooms.find((room) => room.id === values.roomId)}
+            rooms={rooms}
+          />
+        </div>
+      ) : null}
       <div className="flex flex-wrap gap-3 px-4 sm:px-0">
         <Button type="submit" variant="filled" pending={keep.pending} className="max-sm:grow">
           Keep it
@@ -161,6 +175,10 @@ export function FirstPiece({ reader, rooms, number, roomId }: FirstPieceProps) {
     </form>
   )
 }
+
+/** A size that the form would refuse is no size to reckon with. */
+const inRange = (diameterMm: number | null | undefined): number | null =>
+  newPieceSchema.shape.jointDiameterMm.safeParse(diameterMm).data ?? null
 
 type WhereIsItProps = {
   rooms: readonly RoomChoice[]
