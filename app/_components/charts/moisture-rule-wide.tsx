@@ -1,11 +1,12 @@
 'use client'
 
 import { useMemo } from 'react'
-import { PieceOutlineShape } from '../ui/piece-outline'
 import { RoomMarkShape } from '../ui/room-mark'
 import { RULE_HEIGHT, RuleBody } from './rule-body'
-import { placeLabels, spread, textWidth } from './rule-layout'
-import { type RuleBracket, type RuleModel, ruleDomain } from './rule-model'
+import { RuleBracketLine } from './rule-bracket-line'
+import { placeLabels, textWidth } from './rule-layout'
+import { type RuleModel, ruleDomain } from './rule-model'
+import { RuleShelf } from './rule-shelf'
 
 /** Room for the hanging hole before the scale and for the unit after it; a narrow rule has neither. */
 const ENDS = { wide: [56, 62], narrow: [16, 16] } as const
@@ -63,7 +64,7 @@ export function MoistureRuleWide({
     >
       <g aria-hidden="true">
         {model.shelf.length > 0 ? (
-          <ShelfLeaders model={model} x={x} width={width} bottom={bottom} below={below} shelfAt={shelfAt} />
+          <RuleShelf model={model} x={x} width={width} bottom={bottom} below={below} shelfAt={shelfAt} />
         ) : null}
         {model.bands.map((band) => (
           <g key={band.label}>
@@ -76,9 +77,13 @@ export function MoistureRuleWide({
               stroke="var(--heart)"
               strokeWidth="1.5"
             />
-            <text className="halo" x={x(band.highPct) + 7} y={top - 5} fill="var(--heart)">
-              {band.label}
-            </text>
+            <BandWords
+              from={x(band.lowPct)}
+              to={x(band.highPct)}
+              y={top - 5}
+              words={band.label}
+              taken={flags.map((flag) => flag.x)}
+            />
           </g>
         ))}
         <RuleBody width={width} top={top} domain={domain} x={x} isPlain={isPlain} isNarrow={width < NARROW} />
@@ -94,7 +99,13 @@ export function MoistureRuleWide({
           </g>
         ) : null}
         {model.brackets.map((bracket, row) => (
-          <Bracket key={bracket.id} bracket={bracket} x={x} width={width} y={bottom + ROW * row + 16} />
+          <RuleBracketLine
+            key={bracket.id}
+            bracket={bracket}
+            x={x}
+            width={width}
+            y={bottom + ROW * row + 16}
+          />
         ))}
         {flags.map((flag) => {
           const heart = flag.tone === 'heart'
@@ -148,6 +159,26 @@ export function MoistureRuleWide({
   )
 }
 
+type BandWordsProps = { from: number; to: number; y: number; words: string; taken: readonly number[] }
+
+/** A band's name stands after its end, or before its start where a flag hangs in the way. */
+function BandWords({ from, to, y, words, taken }: BandWordsProps) {
+  const width = textWidth(words) + 16
+  const isFree = (low: number, high: number) => low > 0 && !taken.some((at) => at > low && at < high)
+  const onLeft = !isFree(to, to + width) && isFree(from - width, from)
+  return (
+    <text
+      className="halo"
+      x={onLeft ? from - 7 : to + 7}
+      y={y}
+      textAnchor={onLeft ? 'end' : 'start'}
+      fill="var(--heart)"
+    >
+      {words}
+    </text>
+  )
+}
+
 /** The first row from which the drop's two lines of words have a free way to the right. */
 function freeRowForDrop(model: RuleModel, x: Scale): number {
   const { drop } = model
@@ -176,116 +207,5 @@ function DropWords({ model, x, width, y }: { model: RuleModel; x: Scale; width: 
         {drop.soft}
       </text>
     </>
-  )
-}
-
-function Bracket({ bracket, x, width, y }: { bracket: RuleBracket; x: Scale; width: number; y: number }) {
-  const edge = { low: 8, high: width - 8 }
-  const from = Math.max(x(bracket.lowPct), edge.low)
-  const to = Math.min(x(bracket.highPct), edge.high)
-  const endOf = (at: number, isOpen: boolean, direction: 1 | -1) =>
-    isOpen
-      ? `M${String(at + 5 * direction)} ${String(y - 5)}L${String(at)} ${String(y)}L${String(at + 5 * direction)} ${String(y + 5)}`
-      : `M${String(at)} ${String(y - 6)}v12`
-  const words = textWidth(bracket.label, true)
-  const onRight = to + 10 + words <= width
-  const dot = x(bracket.atPct)
-  return (
-    <g>
-      <path
-        d={`M${String(from)} ${String(y)}H${String(to)}${endOf(from, x(bracket.lowPct) < edge.low, 1)}${endOf(to, x(bracket.highPct) > edge.high, -1)}`}
-        stroke="var(--ink)"
-        strokeWidth="1.5"
-        fill="none"
-      />
-      {bracket.cutPct === undefined ? null : (
-        <path d={`M${String(x(bracket.cutPct))} ${String(y - 4)}v8`} stroke="var(--ink)" strokeWidth="1.5" />
-      )}
-      {bracket.leftToPct === undefined ? null : (
-        <path
-          className="moves"
-          d={`M${String(dot)} ${String(y)}H${String(Math.min(x(bracket.leftToPct), edge.high))}`}
-          stroke="var(--damp)"
-          strokeWidth="4"
-        />
-      )}
-      <circle className="moves" cx={dot} cy={y} r="4.5" fill="var(--ink)" />
-      <text
-        className="halo"
-        x={onRight ? to + 10 : from - 10}
-        y={y + 5}
-        textAnchor={onRight ? 'start' : 'end'}
-        fontWeight="600"
-        fill="var(--ink)"
-      >
-        {bracket.label}
-      </text>
-    </g>
-  )
-}
-
-type ShelfProps = {
-  model: RuleModel
-  x: Scale
-  width: number
-  bottom: number
-  below: number
-  shelfAt: number
-}
-
-/** Pieces on their shelf line, each led up to its place on the scale by a line that bends once. */
-function ShelfLeaders({ model, x, width, bottom, below, shelfAt }: ShelfProps) {
-  const items = [...model.shelf].sort((a, b) => a.mcPct - b.mcPct)
-  const middles = spread(
-    items.map((item) => ({
-      at: x(item.mcPct),
-      size: Math.max(60, textWidth(item.label, true) + 16, textWidth(item.sub) + 16),
-    })),
-    0,
-    width,
-  )
-  return (
-    <g>
-      <path d={`M0 ${String(shelfAt)}H${String(width)}`} stroke="var(--edge)" />
-      {items.map((item, index) => {
-        const at = middles[index] ?? x(item.mcPct)
-        const mc = x(item.mcPct)
-        const capTop = shelfAt - (item.outline === 'low' ? 40 : 48)
-        return (
-          <g key={item.id} className="moves" style={{ color: 'var(--ink)' }}>
-            <path
-              d={`M${mc.toFixed(1)} ${String(bottom)}V${String(below + 38)}L${at.toFixed(1)} ${String(capTop)}`}
-              stroke="var(--ink-soft)"
-              strokeWidth="1"
-              fill="none"
-            />
-            {item.count > 1 ? (
-              <g
-                transform={`translate(${String(at - 9)} ${String(shelfAt - 44)}) scale(0.9)`}
-                style={{ color: 'var(--edge)' }}
-              >
-                <PieceOutlineShape outline={item.outline} />
-              </g>
-            ) : null}
-            <g transform={`translate(${String(at - 20)} ${String(shelfAt - 48)})`}>
-              <PieceOutlineShape outline={item.outline} isOut={item.isOut} />
-            </g>
-            <text
-              className="halo"
-              x={at}
-              y={shelfAt + 19}
-              textAnchor="middle"
-              fontWeight="600"
-              fill="var(--ink)"
-            >
-              {item.label}
-            </text>
-            <text className="halo" x={at} y={shelfAt + 37} textAnchor="middle" fill="var(--ink-soft)">
-              {item.sub}
-            </text>
-          </g>
-        )
-      })}
-    </g>
   )
 }

@@ -123,7 +123,13 @@ export function TimeOutBar(props: TimeOutBarProps) {
           )}
           {ticks
             .filter((tick) => tick.label && x(tick.at) > startWidth + 16 && x(tick.at) < width - 20)
-            .filter((tick) => !hasMiddleWords || Math.abs(x(tick.at) - clampMiddle(middleX, width)) > 46)
+            .filter(
+              (tick) =>
+                !hasMiddleWords ||
+                middle === null ||
+                Math.abs(x(tick.at) - clampMiddle(middleX, width)) >
+                  (textWidth(words(middle)) + textWidth(tick.label ?? '')) / 2 + 6,
+            )
             .map((tick) => (
               <text key={tick.at} x={x(tick.at)} y="76" textAnchor="middle" fill="var(--ink-soft)">
                 {tick.label}
@@ -147,7 +153,7 @@ function barEnd(
   return from + Math.max(10 * MINUTE_MS, (last - from) * 1.13)
 }
 
-const clampMiddle = (at: number, width: number) => Math.min(Math.max(at, 18), width - 18)
+const clampMiddle = (at: number | null, width: number) => Math.min(Math.max(at ?? 0, 18), width - 32)
 
 type TopWordsProps = {
   nowX: number

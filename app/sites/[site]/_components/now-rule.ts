@@ -36,7 +36,7 @@ export function nowRule(view: NowView, clock: Clock): RuleModel {
             {
               lowPct: room.year.emcPctLow,
               highPct: room.year.emcPctHigh,
-              label: yearWords(room.name, room.year.days),
+              label: yearWords(room.year.days),
             },
           ]
         : [],
@@ -56,8 +56,7 @@ export function nowRule(view: NowView, clock: Clock): RuleModel {
   }
 }
 
-const yearWords = (name: string, days: number): string =>
-  days >= 330 ? `${name}: its year` : `${name}: ${String(days)} days`
+const yearWords = (days: number): string => (days >= 330 ? 'its year' : `its ${String(days)} days`)
 
 type Bracket = NowView['rule']['brackets'][number]
 

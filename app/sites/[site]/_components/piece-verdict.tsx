@@ -1,5 +1,6 @@
 import { Mark, Verdict } from '@/app/_components/ui/mark'
 import type { PieceCheck } from '@/lib/carry/carry-check'
+import { formatUsed } from '@/lib/format/figures'
 import { formatMoment } from '@/lib/format/times'
 import type { Mark as MarkKind } from '@/lib/notices/notice'
 
@@ -7,7 +8,8 @@ type PieceVerdictProps = {
   check: PieceCheck
   timeZone: string
   now: Date
-  /** Leaves out why. */ isShort?: boolean
+  /** One line of why, where many verdicts stand together; the carry's own page tells all. */
+  isShort?: boolean
 }
 
 /** The verdict of one piece, or the words in its place. Times told are the early edge. */
@@ -34,7 +36,9 @@ export function PieceVerdict({ check, timeZone, now, isShort = false }: PieceVer
   return (
     <div>
       <Verdict kind={check.verdict}>{verdictWords(check, timeZone, now)}</Verdict>
-      {isShort ? null : (
+      {isShort ? (
+        <p className="text-label text-ink-soft">{shortWords(check, timeZone, now)}</p>
+      ) : (
         <div className="mt-1 flex flex-col gap-1 text-label text-ink-soft">
           <p>{check.reason}</p>
           {middleWords(check, timeZone, now)}
@@ -58,6 +62,15 @@ function verdictWords(check: VerdictCheck, timeZone: string, now: Date): string 
 function middleWords(check: VerdictCheck, timeZone: string, now: Date) {
   if (check.middleAt === null || check.usedAtStart >= 1) return null
   return <p>More likely good until about {formatMoment(check.middleAt, timeZone, now)}.</p>
+}
+
+function shortWords(check: VerdictCheck, timeZone: string, now: Date): string {
+  if (check.usedAtStart >= 1) return 'It has moved past what it may lose already.'
+  if (check.verdict === 'leave' && check.earlyAt !== null)
+    return `What it may lose may be used up by ${formatMoment(check.earlyAt, timeZone, now)}.`
+  if (check.verdict === 'keep-short' && check.middleAt !== null)
+    return `More likely good until about ${formatMoment(check.middleAt, timeZone, now)}.`
+  return `About ${formatUsed(check.usedAtEnd)} by the end of the stay.`.replace('About hardly', 'Hardly')
 }
 
 /** The mark that stands for a check in a list. */

@@ -12,6 +12,7 @@ import { formatDuration, formatMoment } from '@/lib/format/times'
 import { coverWords } from '@/lib/pieces/piece'
 import { may } from '@/lib/sites/permissions'
 import type { Reader } from '@/lib/sites/reader'
+import { ChangePlan } from './change-plan'
 import { PieceVerdict } from './piece-verdict'
 import { StartCarry } from './start-carry'
 import type { CarryActions } from './use-carry-actions'
@@ -44,7 +45,7 @@ export function PlannedSheet({ carry, reader, now, actions, isOwnPage = false }:
     >
       <ul className="grid gap-x-8 sm:grid-cols-2">
         {carry.pieces.map((piece) => (
-          <li key={piece.id} className="flex gap-4 border-b border-line py-3 last:border-b-0">
+          <li key={piece.id} className="flex gap-4 border-b border-line py-3 last:border-b-0 sm:border-b-0">
             <PieceOutline outline={piece.outline} />
             <div className="min-w-0">
               <p className="text-label text-ink-soft">
@@ -53,7 +54,9 @@ export function PlannedSheet({ carry, reader, now, actions, isOwnPage = false }:
                 </TextLink>{' '}
                 {piece.title}
               </p>
-              {piece.check ? <PieceVerdict check={piece.check} timeZone={reader.timeZone} now={now} /> : null}
+              {piece.check ? (
+                <PieceVerdict check={piece.check} timeZone={reader.timeZone} now={now} isShort={!isOwnPage} />
+              ) : null}
             </div>
           </li>
         ))}
@@ -64,14 +67,20 @@ export function PlannedSheet({ carry, reader, now, actions, isOwnPage = false }:
             <StartCarry carry={carry} actions={actions} />
             {carry.worst === 'leave' && carry.cover !== 'bagged' ? (
               <Button
-                pending={actions.cover.pending}
+                variant="filled"
+                pending={actions.change.pending}
                 onClick={() => {
-                  actions.cover.act({ carryId: carry.id, cover: 'bagged' })
+                  actions.change.act({
+                    carryId: carry.id,
+                    version: carry.version,
+                    change: { cover: 'bagged' },
+                  })
                 }}
               >
                 Plan it bagged
               </Button>
             ) : null}
+            <ChangePlan carry={carry} actions={actions} timeZone={reader.timeZone} now={now} />
             <Button
               variant="link"
               onClick={() => {

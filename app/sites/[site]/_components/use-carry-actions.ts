@@ -3,9 +3,11 @@
 import { apiFetch } from '@/app/_components/api'
 import { siteKey } from '@/app/_components/live/site-keys'
 import { useAction } from '@/app/_components/use-action'
-import type { Carry } from '@/lib/carry/carry'
+import type { z } from 'zod'
+import type { Carry, carryChangeSchema } from '@/lib/carry/carry'
 import type { Cover } from '@/lib/pieces/piece'
 
+type CarryChange = z.input<typeof carryChangeSchema>
 type PiecesOf = { carryId: string; pieceIds?: string[] }
 
 /** What can be done to a carry from wherever it is shown. */
@@ -35,6 +37,16 @@ export function useCarryActions(site: string) {
       run: ({ carryId, pieceIds, cover }: PiecesOf & { cover: Cover }) =>
         post(carryId, 'cover', { pieceIds, cover }),
       invalidates,
+    }),
+    change: useAction({
+      run: ({ carryId, version, change }: { carryId: string; version: number; change: CarryChange }) =>
+        apiFetch<Carry>(`/sites/${site}/carries/${carryId}`, {
+          method: 'PATCH',
+          body: change,
+          ifMatch: version,
+        }),
+      invalidates,
+      done: 'The plan is changed',
     }),
     callOff: useAction({
       run: ({ carryId }: { carryId: string }) => post(carryId, 'call-off'),

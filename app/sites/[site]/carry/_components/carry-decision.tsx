@@ -4,6 +4,7 @@ import { apiFetch, describeError } from '@/app/_components/api'
 import { siteKey } from '@/app/_components/live/site-keys'
 import { Button } from '@/app/_components/ui/button'
 import { Callout } from '@/app/_components/ui/callout'
+import { PageActions } from '@/app/_components/ui/page-actions'
 import { useAction } from '@/app/_components/use-action'
 import { problemCodeOf } from '@/lib/api/problems'
 import type { Carry, NewCarry } from '@/lib/carry/carry'
@@ -47,8 +48,8 @@ export function CarryDecision(props: CarryDecisionProps) {
   const isBad = answer?.worst === 'leave' && !isLogged
   const goWords = mode === 'plan' ? 'Plan it' : isLogged ? 'Log it as out' : 'Take it out now'
   return (
-    <div className="flex flex-col gap-3">
-      <div className="flex flex-wrap items-center gap-3 max-sm:flex-col max-sm:items-stretch">
+    <div className="contents sm:flex sm:flex-col sm:gap-3">
+      <PageActions>
         {isBad && isBaggedBetter ? (
           <Button variant="filled" onClick={onBagged}>
             Take it bagged instead
@@ -66,7 +67,7 @@ export function CarryDecision(props: CarryDecisionProps) {
         {isBad && !isBaggedBetter ? (
           <p className="text-label text-ink-soft">Best left where it is. Nothing needs pressing for that.</p>
         ) : null}
-      </div>
+      </PageActions>
       <AgainstAdvice
         open={isAdvised}
         why={create.problem?.detail ?? answer?.headline ?? ''}

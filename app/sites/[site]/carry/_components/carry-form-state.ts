@@ -8,8 +8,6 @@ import { instantOfLocalField } from '@/lib/format/local-time'
 
 export const covers = ['open', 'lid-on', 'bagged', 'tub'] as const satisfies readonly Cover[]
 
-/** Lengths of stay to choose from, in minutes. */
-export const stays = [30, 60, 120, 180, 240, 360, 480, 720, 1440, 4320, 10_080] as const
 /** How long ago something went that was not logged then, in minutes. */
 export const sinces = [0, 10, 30, 60, 120, 240, 480] as const
 

@@ -141,7 +141,7 @@ export function CarryPageView({
         </>
       ) : null}
       {request && may(reader.role, 'carries:do') ? (
-        <div className="px-4 sm:px-0">
+        <div className="contents sm:block">
           <CarryDecision
             reader={reader}
             request={request}

@@ -8,8 +8,9 @@ import { localFieldValue, nextFullHour } from '@/lib/format/local-time'
 import { formatDuration } from '@/lib/format/times'
 import { coverWords, type Piece } from '@/lib/pieces/piece'
 import type { Room } from '@/lib/rooms/room'
+import { stays, stayWords } from '../../_components/stays'
 import { listedOutline } from './listed-outline'
-import { type CarryForm, covers, type SetCarryForm, sinces, stays } from './carry-form-state'
+import { type CarryForm, covers, type SetCarryForm, sinces } from './carry-form-state'
 
 type CarrySentenceProps = {
   form: CarryForm
@@ -157,12 +158,6 @@ export function CarrySentence({
       </div>
     </SegmentedTabs>
   )
-}
-
-function stayWords(minutes: number): string {
-  if (minutes === 1440) return 'a day'
-  if (minutes === 10_080) return 'a week'
-  return formatDuration(minutes)
 }
 
 function fromWords(chosen: readonly Piece[]): string {
