@@ -2,7 +2,7 @@ import { type Kysely, sql, type Transaction } from 'kysely'
 import { readingFigures } from '@/lib/readings/figures'
 import { toStored } from '@/lib/readings/plausible'
 import type { Database } from '../schema'
-import { updateLastValues } from './last-values'
+import { type SensorNews, updateLastValues } from './last-values'
 import { notifySite } from './live'
 import { ensurePartitions, monthOf } from './partitions'
 import { holdFiguresShared } from './rollups'
@@ -186,14 +186,29 @@ export async function insertReadings(
       )
       const outcomes = await storeReadings(trx, part)
       const stored = part.filter((_, index) => outcomes[index]?.as === 'inserted')
-      await updateLastValues(
-        trx,
-        stored.map((row) => ({ ...row, readings: [row], heardAt: row.at })),
-      )
+      await updateLastValues(trx, newsOf(stored))
       return stored.length
     })
   }
   return inserted
+}
+
+/** One piece of news for each sensor: its readings, the newest of which is when it was heard. */
+function newsOf(rows: readonly (ReadingRow & { batteryPct?: number | null })[]): SensorNews[] {
+  const bySensor = new Map<
+    string,
+    { siteId: number; sensorId: number; heardAt: Date; readings: ReadingRow[] }
+  >()
+  for (const row of rows) {
+    const key = `${row.siteId} ${row.sensorId}`
+    const news = bySensor.get(key)
+    if (news === undefined) bySensor.set(key, { ...row, heardAt: row.at, readings: [row] })
+    else {
+      news.readings.push(row)
+      if (row.at > news.heardAt) news.heardAt = row.at
+    }
+  }
+  return [...bySensor.values()]
 }
 
 /** Stores a reading that somebody typed in, for the room's own row of kind `typed`. */

@@ -17,7 +17,7 @@ export async function holdFiguresShared(
 ): Promise<void> {
   await sql`
     select set_config('synchronous_commit', 'on', true), pg_advisory_xact_lock_shared(${lockSpace}, site_id)
-    from (select distinct unnest(${siteIds}::int[]) as site_id order by 1) as sites`.execute(trx)
+    from (select unnest(${[...new Set(siteIds)]}::int[]) as site_id order by 1) as sites`.execute(trx)
 }
 
 /**
