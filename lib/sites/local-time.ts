@@ -1,15 +1,5 @@
 import { TZDate } from '@date-fns/tz'
-import { addDays, format } from 'date-fns'
-
-/** "2026-03-05": the calendar day in that zone. */
-export function localDay(at: number, timeZone: string): string {
-  return format(new TZDate(at, timeZone), 'yyyy-MM-dd')
-}
-
-/** The day that many days on (or back, when negative), by the calendar. */
-export function dayAfter(day: string, days: number): string {
-  return format(addDays(new TZDate(`${day}T12:00:00Z`, 'UTC'), days), 'yyyy-MM-dd')
-}
+import { dayOfInstant, daysAfter } from '@/lib/climate/days'
 
 /**
  * The instant at which the clocks of a zone show a time on a day, epoch ms.
@@ -33,10 +23,10 @@ export interface QuietHours {
 /** The end of the quiet hours that `at` lies in, epoch ms; null outside them. They may run over midnight. */
 export function quietUntil(at: number, { timeZone, quietFrom, quietTo }: QuietHours): number | null {
   if (quietFrom === quietTo) return null
-  const today = localDay(at, timeZone)
-  for (const startDay of [dayAfter(today, -1), today]) {
+  const today = dayOfInstant(new Date(at), timeZone)
+  for (const startDay of [daysAfter(today, -1), today]) {
     const from = instantOfLocalTime(startDay, quietFrom, timeZone)
-    const to = instantOfLocalTime(quietTo > quietFrom ? startDay : dayAfter(startDay, 1), quietTo, timeZone)
+    const to = instantOfLocalTime(quietTo > quietFrom ? startDay : daysAfter(startDay, 1), quietTo, timeZone)
     if (at >= from && at < to) return to
   }
   return null

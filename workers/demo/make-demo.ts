@@ -3,7 +3,7 @@ import { insertDemoArrivals, markDemoComplete, updateDemoSensorState } from '@/d
 import type { Database } from '@/db/schema'
 import { topicOf } from '@/lib/readings/topic'
 import type { DemoRoster } from '@/lib/sensors/demo-roster'
-import { localDay } from '@/lib/sites/local-time'
+import { dayOfInstant } from '@/lib/climate/days'
 import { insertHistory } from './history'
 import { makeNotices } from './notices'
 import { makePieces } from './make-pieces'
@@ -91,7 +91,7 @@ async function makeArrivals(db: Kysely<Database>, place: MadePlace, now: Date): 
   if (late === undefined || faulty === undefined) throw new RangeError('two sensors with a story')
   const at = new Date(now.getTime() - 190 * minuteMs)
   await insertDemoArrivals(db, place.siteId, {
-    late: { sensorId: late.id, dayOn: localDay(now.getTime(), placeTimeZone), n: 21 },
+    late: { sensorId: late.id, dayOn: dayOfInstant(now, placeTimeZone), n: 21 },
     refused: {
       sensorId: faulty.id,
       at,

@@ -8,7 +8,7 @@ import {
 } from '@/db/queries/demo-pieces'
 import { findRoomSpan } from '@/db/queries/room-figures'
 import type { Database } from '@/db/schema'
-import { dayAfter, localDay } from '@/lib/sites/local-time'
+import { dayOfInstant, daysAfter } from '@/lib/climate/days'
 import { placeCarries, type PlaceCarry } from './carries'
 import type { MadePlace } from './make-place'
 import { daysBefore, instantOf } from './moments'
@@ -124,7 +124,7 @@ async function pieceRow(
     isShared: piece.isShared ?? false,
     keepRoomId: piece.keep === undefined ? null : place.rooms[piece.keep],
     fittedRoomId: fit === undefined ? null : place.rooms[fit.room],
-    fittedOn: fittedAt === null ? null : localDay(fittedAt.getTime(), placeTimeZone),
+    fittedOn: fittedAt === null ? null : dayOfInstant(fittedAt, placeTimeZone),
     fittedAt: isOurs ? fittedAt : null,
     fitMcPct: isOurs && fit ? await restedMcPct(trx, place, place.rooms[fit.room], fittedAt) : null,
     ownerUserId: place.users[piece.owner ?? 'maker'],
@@ -140,8 +140,8 @@ async function restedMcPct(
   roomId: number,
   fittedAt: Date,
 ): Promise<number | null> {
-  const toOn = localDay(fittedAt.getTime(), placeTimeZone)
-  const span = await findRoomSpan(trx, place.siteId, roomId, dayAfter(toOn, -RESTED_DAYS), toOn)
+  const toOn = dayOfInstant(fittedAt, placeTimeZone)
+  const span = await findRoomSpan(trx, place.siteId, roomId, daysAfter(toOn, -RESTED_DAYS), toOn)
   return span?.emcPctMean ?? null
 }
 

@@ -1,4 +1,5 @@
-import { dayAfter, instantOfLocalTime, localDay } from '@/lib/sites/local-time'
+import { dayOfInstant, daysAfter } from '@/lib/climate/days'
+import { instantOfLocalTime } from '@/lib/sites/local-time'
 import type { Moment } from './carries'
 
 const minuteMs = 60_000
@@ -13,7 +14,7 @@ export function instantOf(moment: Moment, now: Date, timeZone: string): Date {
       moment.minutes > 0 ? Math.round(at / planMs) * planMs : Math.floor(at / minuteMs) * minuteMs,
     )
   }
-  const day = dayAfter(localDay(now.getTime(), timeZone), moment.days)
+  const day = daysAfter(dayOfInstant(now, timeZone), moment.days)
   return new Date(instantOfLocalTime(day, moment.time, timeZone))
 }
 

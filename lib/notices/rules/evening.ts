@@ -1,4 +1,5 @@
-import { dayAfter, instantOfLocalTime, localDay } from '@/lib/sites/local-time'
+import { dayOfInstant, daysAfter } from '@/lib/climate/days'
+import { instantOfLocalTime } from '@/lib/sites/local-time'
 import type { Episode, NewNotice, NoticeInputs, RulePart } from '../inputs'
 import type { Rule } from '../notice'
 import { houseList, mailTo, makers } from '../people'
@@ -12,9 +13,9 @@ export function evening(now: number, inputs: NoticeInputs): RulePart {
     .filter((carry) => carry.state === 'out')
     .flatMap((carry) => carry.pieces.filter((piece) => piece.outAt !== null).map((piece) => piece.number))
   if (stillOut.length === 0) return { episodes: [], notices: [] }
-  const today = localDay(now, timeZone)
+  const today = dayOfInstant(new Date(now), timeZone)
   const lockUp = instantOfLocalTime(today, lockUpAt, timeZone)
-  const midnight = instantOfLocalTime(dayAfter(today, 1), '00:00', timeZone)
+  const midnight = instantOfLocalTime(daysAfter(today, 1), '00:00', timeZone)
   const hasQuiet = quietFrom !== quietTo && quietFrom > lockUpAt
   const quiet = hasQuiet ? instantOfLocalTime(today, quietFrom, timeZone) : midnight
   if (now < lockUp || now >= quiet) return { episodes: [], notices: [] }

@@ -1,4 +1,5 @@
-import { dayAfter, instantOfLocalTime, localDay } from '@/lib/sites/local-time'
+import { dayOfInstant, daysAfter } from '@/lib/climate/days'
+import { instantOfLocalTime } from '@/lib/sites/local-time'
 import {
   type Episode,
   type NewNotice,
@@ -34,7 +35,7 @@ export function plannedCarry(
     airAt: carry.airAt,
   })
   const eveningBefore = instantOfLocalTime(
-    dayAfter(localDay(carry.plannedAt, timeZone), -1),
+    daysAfter(dayOfInstant(new Date(carry.plannedAt), timeZone), -1),
     warnEveningBefore,
     timeZone,
   )
