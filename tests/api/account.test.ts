@@ -224,6 +224,7 @@ describe('the account library', () => {
     'POST /reset-password',
   ])
   const library = betterAuth({
+    baseURL: 'http://127.0.0.1',
     secret: 'x'.repeat(32),
     plugins: [organization()],
     telemetry: { enabled: false },
