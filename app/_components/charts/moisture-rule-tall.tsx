@@ -185,14 +185,14 @@ export function MoistureRuleTall({ model, isPlain }: { model: RuleModel; isPlain
               <circle cx={at} cy={y(bracket.atPct)} r="4" fill="var(--ink)" />
               <text
                 className="halo"
-                x={at}
+                x={shortName(bracket.label).length > 5 ? at - 5 : at}
                 y={to - 5}
-                textAnchor="middle"
+                textAnchor={shortName(bracket.label).length > 5 ? 'start' : 'middle'}
                 fontWeight="600"
                 fontSize="13"
                 fill="var(--ink)"
               >
-                {bracket.label.split(/[:,]/)[0]}
+                {shortName(bracket.label)}
               </text>
             </g>
           )
@@ -235,6 +235,9 @@ export function MoistureRuleTall({ model, isPlain }: { model: RuleModel; isPlain
     </svg>
   )
 }
+
+/** "207" of "207, out: 1.0 left, back by 13:35": there is no room for the rest, which the table has. */
+const shortName = (label: string) => label.split(/[:,]/)[0] ?? label
 
 /** Squeezes a text that would run out of its place; shorter ones keep their own width. */
 function fit(text: string, space: number) {

@@ -16,7 +16,11 @@ export function SentenceSelect({
 }: ComponentProps<'select'> & { label: string }) {
   return (
     <span className="relative inline-flex max-w-full align-middle">
-      <select {...rest} aria-label={label} className={classNames(face, 'appearance-none pr-8', className)}>
+      <select
+        {...rest}
+        aria-label={label}
+        className={classNames(face, 'field-sizing-content appearance-none pr-8', className)}
+      >
         {children}
       </select>
       <ChevronDown

@@ -43,6 +43,7 @@ export function requestOf(
   room: Room | undefined,
   timeZone: string,
   now: Date,
+  defaultAt: string,
 ): CarryCheckRequest | null {
   if (!room || chosen.length === 0) return null
   const stayMinutes = Math.min(43_200, Math.max(1, form.stay))
@@ -56,6 +57,6 @@ export function requestOf(
     if (form.since <= 0) return common
     return { ...common, startsAt: new Date(now.getTime() - form.since * 60_000).toISOString() }
   }
-  const at = form.at === null ? undefined : instantOfLocalField(form.at, timeZone)
+  const at = instantOfLocalField(form.at ?? defaultAt, timeZone)
   return at === undefined ? null : { ...common, startsAt: at.toISOString() }
 }

@@ -10,6 +10,7 @@ import { Sheet } from '@/app/_components/ui/sheet'
 import { EmptyState, ErrorState } from '@/app/_components/ui/states'
 import { useNow } from '@/app/_components/ui/use-now'
 import type { Carry } from '@/lib/carry/carry'
+import { localFieldValue, nextFullHour } from '@/lib/format/local-time'
 import type { Piece } from '@/lib/pieces/piece'
 import type { Room } from '@/lib/rooms/room'
 import { may } from '@/lib/sites/permissions'
@@ -60,10 +61,11 @@ export function CarryPageView({
   const [form, setForm] = useCarryForm()
   const chosen = form.pieces.flatMap((id) => pieces.items.find((piece) => piece.id === id) ?? [])
   const room = roomOf(rooms.items, form.to)
-  const request = requestOf(form, chosen, room, reader.timeZone, now)
+  const defaultAt = localFieldValue(nextFullHour(new Date(reader.at), reader.timeZone), reader.timeZone)
+  const request = requestOf(form, chosen, room, reader.timeZone, now, defaultAt)
   const check = useCarryCheck(
     site,
-    [form.pieces, room?.id, form.mode, form.at, form.since, form.stay, form.cover],
+    [form.pieces, room?.id, form.mode, form.at ?? defaultAt, form.since, form.stay, form.cover],
     request,
   )
   const answer = request === null ? undefined : check.data
@@ -89,18 +91,28 @@ export function CarryPageView({
       <PageSentence>
         {answer ? answer.headline : 'Choose what goes and where, and see whether its fit will hold.'}
       </PageSentence>
-      <Sheet id="carry">
-        <CarrySentence
-          form={form}
-          setForm={setForm}
-          pieces={pieces.items}
-          chosen={chosen}
-          rooms={rooms.items}
-          room={room}
-          timeZone={reader.timeZone}
-          now={now}
-        />
-      </Sheet>
+      <div className={`flex flex-col gap-7 ${answer ? 'max-sm:flex-col-reverse' : ''}`}>
+        <Sheet id="carry">
+          <CarrySentence
+            form={form}
+            setForm={setForm}
+            pieces={pieces.items}
+            chosen={chosen}
+            rooms={rooms.items}
+            room={room}
+            defaultAt={defaultAt}
+          />
+        </Sheet>
+        {answer && !check.isError ? (
+          <CheckPieces
+            answer={answer}
+            pieces={pieces.items}
+            reader={reader}
+            now={now}
+            isOld={check.isPlaceholderData}
+          />
+        ) : null}
+      </div>
       {check.isError && request ? (
         <Sheet>
           <ErrorState
@@ -119,26 +131,20 @@ export function CarryPageView({
           Working it out.
         </p>
       ) : null}
-      {answer && !check.isError ? (
-        <>
-          <CheckPieces
-            answer={answer}
-            pieces={pieces.items}
-            reader={reader}
-            now={now}
-            isOld={check.isPlaceholderData}
-          />
-          {answer.pieces.some((piece) => piece.bagged !== null) &&
-          (form.cover === 'open' || form.cover === 'lid-on') ? (
-            <WaysSheet
-              answer={answer}
-              reader={reader}
-              now={now}
-              isBaggedBetter={isBaggedBetter}
-              onBagged={takeBagged}
-            />
-          ) : null}
-        </>
+      <p role="status" className="sr-only">
+        {answer && !check.isPlaceholderData ? answer.headline : ''}
+      </p>
+      {answer &&
+      !check.isError &&
+      answer.pieces.some((piece) => piece.bagged !== null) &&
+      (form.cover === 'open' || form.cover === 'lid-on') ? (
+        <WaysSheet
+          answer={answer}
+          reader={reader}
+          now={now}
+          isBaggedBetter={isBaggedBetter}
+          onBagged={takeBagged}
+        />
       ) : null}
       {request && may(reader.role, 'carries:do') ? (
         <div className="contents sm:block">
@@ -151,7 +157,6 @@ export function CarryPageView({
             isBaggedBetter={isBaggedBetter && (form.cover === 'open' || form.cover === 'lid-on')}
             onBagged={takeBagged}
             onDone={(carry) => {
-              void setForm(null)
               router.push(`/sites/${site}/carry/${carry.id}`)
             }}
           />

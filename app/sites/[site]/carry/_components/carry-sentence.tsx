@@ -4,7 +4,6 @@ import { X } from 'lucide-react'
 import { PieceOutline } from '@/app/_components/ui/piece-outline'
 import { SegmentedTabs } from '@/app/_components/ui/segmented-tabs'
 import { ControlSentence, SentenceInput, SentenceSelect } from '@/app/_components/ui/sentence-control'
-import { localFieldValue, nextFullHour } from '@/lib/format/local-time'
 import { formatDuration } from '@/lib/format/times'
 import { coverWords, type Piece } from '@/lib/pieces/piece'
 import type { Room } from '@/lib/rooms/room'
@@ -19,21 +18,12 @@ type CarrySentenceProps = {
   chosen: readonly Piece[]
   rooms: readonly Room[]
   room: Room | undefined
-  timeZone: string
-  now: Date
+  /** The planned time until another is typed. */
+  defaultAt: string
 }
 
 /** A carry as a sentence, whose words are the controls. */
-export function CarrySentence({
-  form,
-  setForm,
-  pieces,
-  chosen,
-  rooms,
-  room,
-  timeZone,
-  now,
-}: CarrySentenceProps) {
+export function CarrySentence({ form, setForm, pieces, chosen, rooms, room, defaultAt }: CarrySentenceProps) {
   const isNow = form.mode === 'now'
   return (
     <SegmentedTabs
@@ -42,7 +32,6 @@ export function CarrySentence({
       onValueChange={(mode) => {
         void setForm({
           mode: mode === 'plan' ? 'plan' : 'now',
-          at: form.at ?? localFieldValue(nextFullHour(now, timeZone), timeZone),
         })
       }}
       segments={[
@@ -117,7 +106,7 @@ export function CarrySentence({
               <SentenceInput
                 label="When it is to go"
                 type="datetime-local"
-                value={form.at ?? ''}
+                value={form.at ?? defaultAt}
                 onChange={(event) => {
                   void setForm({ at: event.target.value })
                 }}

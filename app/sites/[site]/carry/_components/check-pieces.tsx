@@ -1,5 +1,7 @@
 'use client'
 
+import { ChevronDown } from 'lucide-react'
+import type { ReactNode } from 'react'
 import { UsedChart } from '@/app/_components/charts/used-chart'
 import { PieceOutline } from '@/app/_components/ui/piece-outline'
 import { Sheet } from '@/app/_components/ui/sheet'
@@ -43,19 +45,37 @@ export function CheckPieces({ answer, pieces, reader, now, isOld }: CheckPiecesP
                 </div>
               </div>
               {item.check.kind === 'verdict' ? (
-                <UsedChart
-                  number={item.number}
-                  check={item.check}
-                  startsAt={answer.startsAt}
-                  stayMinutes={answer.stayMinutes}
-                  timeZone={reader.timeZone}
-                  now={now}
-                />
+                <Graph number={item.number}>
+                  <UsedChart
+                    number={item.number}
+                    check={item.check}
+                    startsAt={answer.startsAt}
+                    stayMinutes={answer.stayMinutes}
+                    timeZone={reader.timeZone}
+                    now={now}
+                  />
+                </Graph>
               ) : null}
             </li>
           )
         })}
       </ul>
     </Sheet>
+  )
+}
+
+/** In sight on a desk, folded on a phone, where the verdicts come first. */
+function Graph({ number, children }: { number: string; children: ReactNode }) {
+  return (
+    <>
+      <div className="min-w-0 max-sm:hidden">{children}</div>
+      <details className="group sm:hidden">
+        <summary className="flex min-h-11 items-center justify-between font-semibold text-heart">
+          Graph of {number}
+          <ChevronDown aria-hidden="true" size={20} strokeWidth={1.5} className="group-open:rotate-180" />
+        </summary>
+        {children}
+      </details>
+    </>
   )
 }

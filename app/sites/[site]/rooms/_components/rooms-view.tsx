@@ -90,7 +90,9 @@ function columns(reader: Reader, now: Date): Column<Room>[] {
           <TextLink href={`/sites/${reader.site}/rooms/${room.id}`} className="font-semibold">
             {room.name}
           </TextLink>
-          <span className="text-label font-normal text-ink-soft">{roomKindWords[room.kind]}</span>
+          {room.name.toLowerCase().includes(roomKindWords[room.kind]) ? null : (
+            <span className="text-label font-normal text-ink-soft">{roomKindWords[room.kind]}</span>
+          )}
         </span>
       ),
     },

@@ -52,7 +52,7 @@ export function RoomView({ reader, initial, initialSeries }: RoomViewProps) {
         above={
           <>
             <RoomMark mark={room.mark} />
-            {room.name}, {roomKindWords[room.kind]}
+            {roomNameAndKind(room)}
             {room.isShared ? ', shared with onlookers' : ''}
           </>
         }
@@ -101,6 +101,12 @@ export function RoomView({ reader, initial, initialSeries }: RoomViewProps) {
       </div>
     </>
   )
+}
+
+/** "Landing cupboard, cupboard in the house"; just "Shop" where its kind would say the same again. */
+function roomNameAndKind({ name, kind }: RoomDetail): string {
+  const words = roomKindWords[kind]
+  return name.toLowerCase().includes(words) ? name : `${name}, ${words}`
 }
 
 function AirNow({ room, reader, now }: { room: RoomDetail; reader: Reader; now: Date }) {
