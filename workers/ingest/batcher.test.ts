@@ -10,6 +10,7 @@ const options = (part: Partial<BatcherOptions<number>>): BatcherOptions<number> 
   batchRows: 10,
   pendingRows: 100,
   isTheirFault: (error) => error instanceof BadItem,
+  onUnstorable: () => undefined,
   onAway: () => undefined,
   onBack: () => undefined,
   ...part,
@@ -65,8 +66,10 @@ describe('a batcher', () => {
 
   it('stores the good beside one that can never be stored', async () => {
     const stored: number[] = []
+    const unstorable: number[] = []
     const batcher = createBatcher(
       options({
+        onUnstorable: (_, item) => unstorable.push(item),
         write: async (items) => {
           if (items.includes(7)) throw new BadItem()
           stored.push(...items)
@@ -77,6 +80,7 @@ describe('a batcher', () => {
     expect(stored.sort()).toEqual([0, 1, 2, 3, 4, 5, 6, 8, 9])
     expect(outcomes.filter((outcome) => outcome === 'unstorable')).toHaveLength(1)
     expect(outcomes[7]).toBe('unstorable')
+    expect(unstorable).toEqual([7])
   })
 
   it('holds no more than it may, and lets go of what nobody waits for', async () => {

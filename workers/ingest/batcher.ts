@@ -13,6 +13,8 @@ export interface BatcherOptions<T> {
   pendingRows: number
   /** Whether a failure lies in what was written, so that trying again can't help. */
   isTheirFault: (error: unknown) => boolean
+  /** Told of an item that can never be written. */
+  onUnstorable: (error: unknown, item: T) => void
   /** Told when writing begins to fail, and at each further try. */
   onAway: (error: unknown, tries: number) => void
   onBack: () => void
@@ -106,7 +108,7 @@ export function createBatcher<T>(options: BatcherOptions<T>): Batcher<T> {
         for (const entry of left) settle(entry, 'stored')
         return
       } catch (error) {
-        if (options.isTheirFault(error)) return writeApart(left)
+        if (options.isTheirFault(error)) return writeApart(left, error)
         options.onAway(error, tries)
         left = await pause(left, tries)
       }
@@ -114,9 +116,12 @@ export function createBatcher<T>(options: BatcherOptions<T>): Batcher<T> {
   }
 
   /** Finds the items that can't be written by halving, so that they cost the others nothing. */
-  async function writeApart(entries: readonly Entry<T>[]): Promise<void> {
+  async function writeApart(entries: readonly Entry<T>[], error: unknown): Promise<void> {
     const [first] = entries
-    if (entries.length === 1 && first) return settle(first, 'unstorable')
+    if (entries.length === 1 && first) {
+      options.onUnstorable(error, first.item)
+      return settle(first, 'unstorable')
+    }
     const middle = Math.ceil(entries.length / 2)
     await writeAll(entries.slice(0, middle))
     await writeAll(entries.slice(middle))

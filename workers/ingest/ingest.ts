@@ -48,6 +48,8 @@ export function createIngest(options: IngestOptions): Ingest {
     pendingRows,
     sizeOf: (message) => Math.max(1, message.readings.length + message.refusals.length),
     isTheirFault: isFaultOfData,
+    onUnstorable: (error, { siteId, sensorId, topic, headHex }) =>
+      logger.error({ err: error, siteId, sensorId, topic, headHex }, 'a message that can not be stored'),
     onAway(error, tries) {
       if (isMissingMonth(error)) months.clear()
       // Once when it begins and then every minute or so: the log must not fill while the database is away.
