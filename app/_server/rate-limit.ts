@@ -48,7 +48,8 @@ export function doorLimits(request: Request, kind: 'sign-in' | 'mail', email: st
   const scope = device === undefined ? `${kind}:account:${account}` : `${kind}:device:${device}`
   const limits = [
     { key: scope, most: authRateLimit, windowS: 10 },
-    { key: scope, most: authRateLimit * 10, windowS: 3_600 },
+    // Six mails an hour are plenty for somebody who waits for one, and few for somebody who gets them unasked.
+    { key: scope, most: authRateLimit * (kind === 'mail' ? 2 : 10), windowS: 3_600 },
   ]
   if (device === undefined) limits.push({ key: `${kind}:all`, most: authRateLimit * 20, windowS: 10 })
   const peer = peerAddressHeader === undefined ? null : request.headers.get(peerAddressHeader)

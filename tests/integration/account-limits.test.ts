@@ -169,6 +169,13 @@ it('sends one address only so many mails, whether or not it has an account', asy
     for (let n = 0; n < 4; n += 1) statuses.push((await ask('request-password-reset', { email })).status)
     expect(statuses).toEqual([200, 200, 200, 429])
   }
+  vi.setSystemTime(Math.ceil(Date.now() / 3_600_000) * 3_600_000)
+  for (let n = 0; n < 6; n += 1) {
+    expect((await ask('request-password-reset', { email: known })).status).toBe(200)
+    if (n === 2) vi.setSystemTime(Date.now() + 10_000)
+  }
+  vi.setSystemTime(Date.now() + 10_000)
+  expect((await ask('request-password-reset', { email: known })).status).toBe(429)
 })
 
 it('stores no address of a person in its counts', async () => {

@@ -2,6 +2,7 @@ import { sql } from 'kysely'
 import { afterAll, afterEach, beforeAll, describe, expect, it, vi } from 'vitest'
 import { newTextId } from '@/db/queries/sites'
 import { createTestDatabase, type TestDatabase } from '../support/database'
+import { eventually } from '../support/eventually'
 import { freePort } from '@/workers/supervisor/ports'
 import { forgetServer, serverEnvironment } from '../support/server-modules'
 import { storePerson } from '../support/session'
@@ -67,17 +68,13 @@ describe('a route that makes something', () => {
     )
     const key = { cookie, 'idempotency-key': newTextId() }
     const first = route(post('/x', {}, key), context)
-    await vi.waitFor(() => expect(begun).toHaveBeenCalledTimes(1))
+    await eventually('the first has begun', () => begun.mock.calls.length === 1)
     const second = route(post('/x', {}, key), context)
     // The second is held at the key until the first has committed: the database shows it waiting.
-    await vi.waitFor(async () => {
-      const { rows } = await sql<{ n: number }>`select count(*)::int as n from pg_locks
-        where not granted and database = (select oid from pg_database where datname = current_database())`.execute(
-        database.db,
-      )
-      const waiting = await sql<{ n: number }>`select count(*)::int as n from pg_stat_activity
+    await eventually('the second waits', async () => {
+      const { rows } = await sql<{ n: number }>`select count(*)::int as n from pg_stat_activity
         where datname = current_database() and wait_event_type = 'Lock'`.execute(database.db)
-      expect((rows[0]?.n ?? 0) + (waiting.rows[0]?.n ?? 0)).toBeGreaterThan(0)
+      return (rows[0]?.n ?? 0) > 0
     })
     release()
     const replies = await Promise.all([first, second])
