@@ -2,7 +2,8 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { type Browser, launchBrowser, type Visit, visit } from '../support/browser'
 import { mailWith, siteOf } from './steps'
 
-const EMAIL = 'newcomer@example.org'
+/** An address of its own each time, so that an installation may go on running between two runs. */
+const EMAIL = `newcomer-${Date.now().toString(36)}@example.org`
 const PASSWORD = 'a box and its lid'
 
 let browser: Browser
@@ -11,6 +12,7 @@ let newcomer: Visit
 beforeAll(async () => {
   browser = await launchBrowser()
   newcomer = await visit(browser, { width: 390 })
+  newcomer.page.setDefaultTimeout(60_000)
 })
 afterAll(async () => {
   await browser.close()

@@ -6,6 +6,7 @@ let stranger: Visit
 beforeAll(async () => {
   browser = await launchBrowser()
   stranger = await visit(browser)
+  stranger.page.setDefaultTimeout(60_000)
 })
 afterAll(async () => {
   await browser.close()

@@ -7,8 +7,13 @@ import { demoAccounts } from '../support/sign-in'
 import { mailWith, runLine, signInByForm, siteOf, withReading } from './steps'
 
 const IN_VIEW_WITHIN_MS = 2_000
-const ROOM = 'Lean-to shop'
-const PIECE = 'J-1'
+/** A busy machine may take its time; only what the product promises is held to the clock. */
+const SLOW_MS = 60_000
+/** So that the story can be told again to an installation that goes on running. */
+const run = Date.now().toString(36).slice(-5)
+const ROOM = `Lean-to ${run}`
+const SENSOR = `Lean-to wall ${run}`
+const PIECE = `J-${run}`
 
 let browser: Browser
 let maker: Visit
@@ -16,6 +21,7 @@ let maker: Visit
 beforeAll(async () => {
   browser = await launchBrowser()
   maker = await visit(browser)
+  maker.page.setDefaultTimeout(SLOW_MS)
 })
 afterAll(async () => {
   await browser.close()
@@ -41,14 +47,14 @@ describe('the main job', () => {
     await dialog.waitFor({ state: 'hidden' })
 
     await page.goto(`/sites/${site}/sensors/add`)
-    await page.getByLabel('Name of the sensor').fill('Lean-to wall')
+    await page.getByLabel('Name of the sensor').fill(SENSOR)
     await page.getByLabel('Room that it hangs in').selectOption({ label: ROOM })
     await page.getByRole('button', { name: 'Make it known' }).click()
     line = await page.locator('code', { hasText: 'mosquitto_pub' }).innerText()
     expect(line).toContain(`lidfast/v1/${site}/`)
 
     await runLine(line)
-    await page.getByText('It was first heard at').waitFor({ timeout: 10_000 })
+    await page.getByText('It was first heard at').waitFor()
     await page
       .getByText(formatEmc(emcPct(20.4, 53)))
       .first()
@@ -58,9 +64,9 @@ describe('the main job', () => {
   it('shows a reading on an open page within two seconds of its publish', { timeout: 60_000 }, async () => {
     const { page } = maker
     await page.goto(`/sites/${site}/rooms`)
-    await page.getByRole('link', { name: ROOM }).first().click()
-    await page.getByRole('heading', { level: 1 }).filter({ hasText: /./ }).waitFor()
-    await page.waitForURL(/\/rooms\/[a-z0-9]{10}$/)
+    const room = await page.getByRole('link', { name: ROOM, exact: true }).first().getAttribute('href')
+    await page.goto(room ?? '')
+    await page.getByRole('heading', { level: 1 }).waitFor()
     const damp = formatEmc(emcPct(9, 86))
     expect(await page.getByText(damp).count()).toBe(0)
     await runLine(withReading(line, 9, 86))
@@ -77,7 +83,7 @@ describe('the main job', () => {
       await page.getByLabel('Its wood').selectOption({ label: 'Ash, European' })
       await page.getByLabel(/^Joint/).fill('88')
       await page.getByText('Snug', { exact: true }).click()
-      await page.getByText('Landing cupboard', { exact: true }).click()
+      await page.getByLabel('Where is it now?').selectOption({ label: 'Landing cupboard' })
       await page.getByRole('button', { name: 'Keep it' }).click()
       await page.waitForURL(/\/pieces\/[a-z0-9]{10}$/)
 
@@ -90,7 +96,7 @@ describe('the main job', () => {
       }
       const soon = new Date(Date.now() + 25 * 60_000)
       await page.getByLabel('When it is to go').fill(localFieldValue(soon, timeZone))
-      await page.getByText('Leave it where it is').first().waitFor({ timeout: 20_000 })
+      await page.getByText('Leave it where it is').first().waitFor()
       await page.getByRole('button', { name: 'Plan it', exact: true }).click()
       await page.waitForURL(/\/carry\/[a-z0-9]{10}$/)
 
