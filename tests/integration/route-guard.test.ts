@@ -19,7 +19,8 @@ beforeAll(async () => {
     .getSetCookie()
     .map((set) => set.split(';')[0])
     .join('; ')
-})
+  // The account library is large, and a machine at work on other tests takes its time to load it.
+}, 120_000)
 afterEach(forgetServer)
 afterAll(() => database.drop())
 
