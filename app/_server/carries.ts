@@ -19,7 +19,7 @@ import {
 import { namesOf } from '@/lib/carry/summary'
 import { ok } from '@/lib/result'
 import { findPiecesAndRoom } from './carry-check'
-import { mayStart, setOut } from './carry-steps'
+import { mayStart, setOut } from './carry-start'
 import { viewCarries } from './carry-view'
 import { decodeCursor, listQueryShape, type Page, pageOf } from './list'
 import { fail, failField, notThere, type Outcome } from './problem'
