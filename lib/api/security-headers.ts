@@ -33,8 +33,7 @@ export function securityHeaders({ isHttps }: Pick<PolicyOptions, 'isHttps'>): Re
     'x-content-type-options': 'nosniff',
     'x-frame-options': 'DENY',
     'referrer-policy': 'strict-origin-when-cross-origin',
-    'permissions-policy':
-      'camera=(), microphone=(), geolocation=(), payment=(), usb=(), serial=()',
+    'permissions-policy': 'camera=(), microphone=(), geolocation=(), payment=(), usb=(), serial=()',
     'cross-origin-opener-policy': 'same-origin',
     'cross-origin-resource-policy': 'same-origin',
     ...(isHttps ? { 'strict-transport-security': 'max-age=31536000' } : {}),
