@@ -5,7 +5,7 @@ import { noTellingDifferencePct } from '@/lib/notices/policy'
 /** What the figure says, in a sentence that a maker could act on. */
 export function LandingStory({ carry, minutes }: { carry: SteadyCarry; minutes: number | undefined }) {
   return (
-    <p aria-live="polite" className="text-[19px] leading-7 sm:text-[22px] sm:leading-8">
+    <p className="text-[19px] leading-7 sm:text-[22px] sm:leading-8">
       {minutes === undefined ? (
         <>Weeks in this shop bring it here. </>
       ) : minutes < 1 ? (
@@ -16,7 +16,10 @@ export function LandingStory({ carry, minutes }: { carry: SteadyCarry; minutes: 
           {minutes < 1.5 ? 'bring' : 'brings'} it here.{' '}
         </>
       )}
-      <Advice carry={carry} minutes={minutes} />
+      {/* Only this is read out when it changes: the time follows every step of the handle. */}
+      <span aria-live="polite">
+        <Advice carry={carry} minutes={minutes} />
+      </span>
     </p>
   )
 }

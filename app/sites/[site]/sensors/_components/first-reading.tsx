@@ -26,12 +26,14 @@ export function FirstReading({ reader, sensorId }: { reader: Reader; sensorId: s
   const first = heard[0]
 
   return (
-    <div role="status" className="flex flex-col gap-3 text-[18px] leading-7 sm:text-[19px]">
+    <div className="flex flex-col gap-3 text-[18px] leading-7 sm:text-[19px]">
       {first === undefined ? (
-        <p className="text-ink-soft">Waiting to hear from it. This page shows its first reading by itself.</p>
+        <p role="status" className="text-ink-soft">
+          Waiting to hear from it. This page shows its first reading by itself.
+        </p>
       ) : (
         <>
-          <p>
+          <p role="status">
             It was first heard at <strong>{formatClockSeconds(first.heardAt, reader.timeZone)}</strong> and
             says{' '}
             <strong>

@@ -4,6 +4,7 @@ import { parseAsStringLiteral, useQueryState } from 'nuqs'
 import { useSiteQuery } from '@/app/_components/live/use-site-query'
 import { Age } from '@/app/_components/ui/age'
 import { ButtonLink } from '@/app/_components/ui/button-link'
+import { Caution } from '@/app/_components/ui/caution'
 import { type Column, DataTable } from '@/app/_components/ui/data-table'
 import { PageSentence } from '@/app/_components/ui/page-sentence'
 import { RoomMark } from '@/app/_components/ui/room-mark'
@@ -12,10 +13,11 @@ import { Sheet } from '@/app/_components/ui/sheet'
 import { EmptyState, StaleState } from '@/app/_components/ui/states'
 import { TextLink } from '@/app/_components/ui/text-link'
 import { formatEmc, formatHumidity, formatTemperature } from '@/lib/format/figures'
-import type { Sensor } from '@/lib/sensors/sensor'
-import { sensorsHeadline } from '@/lib/sensors/wording'
+import type { Refused, Sensor } from '@/lib/sensors/sensor'
+import { coinCellCaution, sensorsHeadline } from '@/lib/sensors/wording'
 import { may } from '@/lib/sites/permissions'
 import type { Reader } from '@/lib/sites/reader'
+import { RefusedMessages } from './refused-messages'
 import { SensorState } from './sensor-state'
 
 const shows = ['all', 'trouble', 'retired'] as const
@@ -24,7 +26,13 @@ const isShow = (value: string): value is Show => shows.some((show) => show === v
 
 type SensorList = { items: Sensor[] }
 
-export function SensorsView({ reader, initial }: { reader: Reader; initial: SensorList }) {
+type SensorsViewProps = {
+  reader: Reader
+  initial: SensorList
+  refused: { items: Refused[]; nextCursor: string | null }
+}
+
+export function SensorsView({ reader, initial, refused }: SensorsViewProps) {
   const { data, isError } = useSiteQuery<SensorList>({
     site: reader.site,
     area: 'sensors',
@@ -87,6 +95,14 @@ export function SensorsView({ reader, initial }: { reader: Reader; initial: Sens
           </SegmentedTabs>
         </Sheet>
       )}
+      {refused.items.length > 0 ? (
+        <Sheet title="Messages that could not be used" id="refused" aside="The latest 20 at most">
+          <RefusedMessages reader={reader} initial={refused} />
+        </Sheet>
+      ) : null}
+      <div className="px-4 sm:px-0">
+        <Caution>{coinCellCaution}</Caution>
+      </div>
     </>
   )
 }
