@@ -22,7 +22,7 @@ export function NeedsSheet({ needs, base }: { needs: NowView['needs']; base: str
             </div>
             <ButtonLink href={base + need.link} className="max-sm:ml-9">
               {need.linkWords}
-              <span className="sr-only">: {need.title}</span>
+              <span className="sr-only"> {need.title}</span>
             </ButtonLink>
           </li>
         ))}

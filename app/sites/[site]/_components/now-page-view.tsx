@@ -71,12 +71,11 @@ export function NowPageView({ reader, initial }: { reader: Reader; initial: NowV
           pieces={due}
           reader={reader}
           now={now}
-          actions={actions}
           isUrgent
         />
       ) : null}
       {near.map((carry) => (
-        <PlannedSheet key={carry.id} carry={carry} reader={reader} now={now} actions={actions} />
+        <PlannedSheet key={carry.id} carry={carry} reader={reader} now={now} />
       ))}
       {isRead ? (
         <MoistureRule
@@ -103,13 +102,7 @@ export function NowPageView({ reader, initial }: { reader: Reader; initial: NowV
         <NoReadings reader={reader} rooms={view.rule.rooms} />
       )}
       {otherOut.length > 0 ? (
-        <OutSheet
-          title={due.length > 0 ? 'Also out' : 'Out'}
-          pieces={otherOut}
-          reader={reader}
-          now={now}
-          actions={actions}
-        />
+        <OutSheet title={due.length > 0 ? 'Also out' : 'Out'} pieces={otherOut} reader={reader} now={now} />
       ) : null}
       {justBack.length > 0 ? (
         <div className="flex flex-col gap-3 max-sm:px-4">
@@ -135,7 +128,7 @@ export function NowPageView({ reader, initial }: { reader: Reader; initial: NowV
         </div>
       ) : null}
       {later.map((carry) => (
-        <PlannedSheet key={carry.id} carry={carry} reader={reader} now={now} actions={actions} />
+        <PlannedSheet key={carry.id} carry={carry} reader={reader} now={now} />
       ))}
       {view.needs.length > 0 ? <NeedsSheet needs={view.needs} base={base} /> : null}
       {query.isError && !isRead ? (

@@ -10,20 +10,21 @@ import { formatDuration, formatMoment } from '@/lib/format/times'
 import { coverWords } from '@/lib/pieces/piece'
 import { may } from '@/lib/sites/permissions'
 import type { Reader } from '@/lib/sites/reader'
-import type { CarryActions } from './use-carry-actions'
+import { useCarryActions } from './use-carry-actions'
 
 type OutPieceProps = {
   carry: Carry
   piece: CarryPiece
   reader: Reader
   now: Date
-  actions: CarryActions
   /** The most urgent of the page has the filled button. */
   isFirst?: boolean
 }
 
 /** One piece that is out: what to do, by when, the bar, and the two things that can be done about it. */
-export function OutPiece({ carry, piece, reader, now, actions, isFirst = false }: OutPieceProps) {
+export function OutPiece({ carry, piece, reader, now, isFirst = false }: OutPieceProps) {
+  // Each piece has its own, so that one that is being brought in holds up no other.
+  const actions = useCarryActions(reader.site)
   const { check } = piece
   const outAt = piece.outAt ?? carry.startedAt ?? carry.plannedAt
   const isVerdict = check?.kind === 'verdict'
@@ -80,7 +81,7 @@ export function OutPiece({ carry, piece, reader, now, actions, isFirst = false }
             }}
           >
             {home ? `Back in ${home}` : 'It is back'}
-            <span className="sr-only">, {piece.number}</span>
+            <span className="sr-only"> {piece.number}</span>
           </Button>
           <Button
             pending={actions.cover.pending}
@@ -93,7 +94,7 @@ export function OutPiece({ carry, piece, reader, now, actions, isFirst = false }
             }}
           >
             {isShut ? 'Open again' : 'Bagged, still out'}
-            <span className="sr-only">, {piece.number}</span>
+            <span className="sr-only"> {piece.number}</span>
           </Button>
         </div>
       ) : null}

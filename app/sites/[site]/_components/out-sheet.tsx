@@ -5,7 +5,6 @@ import type { Carry, CarryPiece } from '@/lib/carry/carry'
 import { formatCount } from '@/lib/format/figures'
 import type { Reader } from '@/lib/sites/reader'
 import { OutPiece } from './out-piece'
-import type { CarryActions } from './use-carry-actions'
 
 export type PieceOut = { carry: Carry; piece: CarryPiece }
 
@@ -14,12 +13,11 @@ type OutSheetProps = {
   pieces: readonly PieceOut[]
   reader: Reader
   now: Date
-  actions: CarryActions
   isUrgent?: boolean
 }
 
 /** Pieces that are out, the most urgent first. */
-export function OutSheet({ title, pieces, reader, now, actions, isUrgent = false }: OutSheetProps) {
+export function OutSheet({ title, pieces, reader, now, isUrgent = false }: OutSheetProps) {
   const rooms = [...new Set(pieces.map(({ carry }) => carry.toRoom.name))]
   return (
     <Sheet
@@ -36,7 +34,6 @@ export function OutSheet({ title, pieces, reader, now, actions, isUrgent = false
             piece={piece}
             reader={reader}
             now={now}
-            actions={actions}
             isFirst={isUrgent && index === 0}
           />
         ))}

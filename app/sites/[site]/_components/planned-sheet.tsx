@@ -15,19 +15,19 @@ import type { Reader } from '@/lib/sites/reader'
 import { ChangePlan } from './change-plan'
 import { PieceVerdict } from './piece-verdict'
 import { StartCarry } from './start-carry'
-import type { CarryActions } from './use-carry-actions'
+import { useCarryActions } from './use-carry-actions'
 
 type PlannedSheetProps = {
   carry: Carry
   reader: Reader
   now: Date
-  actions: CarryActions
   /** The page of the carry itself has no link to it. */
   isOwnPage?: boolean
 }
 
 /** A carry that is down to go: its pieces with their verdicts, and what can be done about it. */
-export function PlannedSheet({ carry, reader, now, actions, isOwnPage = false }: PlannedSheetProps) {
+export function PlannedSheet({ carry, reader, now, isOwnPage = false }: PlannedSheetProps) {
+  const actions = useCarryActions(reader.site)
   const [asking, setAsking] = useState(false)
   const minutes = (new Date(carry.plannedAt).getTime() - now.getTime()) / 60_000
   const when =
@@ -64,7 +64,7 @@ export function PlannedSheet({ carry, reader, now, actions, isOwnPage = false }:
       <div className="mt-4 flex flex-wrap items-center gap-3">
         {mayDo ? (
           <>
-            <StartCarry carry={carry} actions={actions} />
+            <StartCarry carry={carry} start={actions.start} />
             {carry.worst === 'leave' && carry.cover !== 'bagged' ? (
               <Button
                 variant="filled"

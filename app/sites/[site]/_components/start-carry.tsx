@@ -9,8 +9,7 @@ import { AgainstAdvice } from './against-advice'
 import type { CarryActions } from './use-carry-actions'
 
 /** Takes a planned carry out. Against the advice it asks again, and says why. */
-export function StartCarry({ carry, actions }: { carry: Carry; actions: CarryActions }) {
-  const { start } = actions
+export function StartCarry({ carry, start }: { carry: Carry; start: CarryActions['start'] }) {
   const isAdvised = start.problem !== null && problemCodeOf(start.problem) === 'advised-against'
   const isBest = carry.worst === 'fine' || carry.worst === 'keep-short' || carry.worst === 'words'
   return (

@@ -11,14 +11,12 @@ import { coverWords } from '@/lib/pieces/piece'
 import type { Reader } from '@/lib/sites/reader'
 import { OutSheet, piecesOut } from '../../_components/out-sheet'
 import { PlannedSheet } from '../../_components/planned-sheet'
-import { useCarryActions } from '../../_components/use-carry-actions'
 import type { Page } from './carry-page-view'
 
 type CarryListsProps = { reader: Reader; now: Date; open: Page<Carry>; ended: Page<Carry> }
 
 /** What is out, what is planned, and the last ones that ended. */
 export function CarryLists({ reader, now, open: initialOpen, ended: initialEnded }: CarryListsProps) {
-  const actions = useCarryActions(reader.site)
   const { data: open = initialOpen } = useSiteQuery<Page<Carry>>({
     site: reader.site,
     area: 'carries',
@@ -37,11 +35,9 @@ export function CarryLists({ reader, now, open: initialOpen, ended: initialEnded
   const planned = open.items.filter((carry) => carry.state === 'planned')
   return (
     <>
-      {out.length > 0 ? (
-        <OutSheet title="Out now" pieces={out} reader={reader} now={now} actions={actions} />
-      ) : null}
+      {out.length > 0 ? <OutSheet title="Out now" pieces={out} reader={reader} now={now} /> : null}
       {planned.map((carry) => (
-        <PlannedSheet key={carry.id} carry={carry} reader={reader} now={now} actions={actions} />
+        <PlannedSheet key={carry.id} carry={carry} reader={reader} now={now} />
       ))}
       {ended.items.length > 0 ? (
         <Sheet id="ended" title="Lately">

@@ -41,16 +41,13 @@ export function OneCarryView({ reader, initial }: { reader: Reader; initial: Car
   return (
     <>
       <PageSentence above={stateWords[carry.state]}>{carry.headline}</PageSentence>
-      {carry.state === 'planned' ? (
-        <PlannedSheet carry={carry} reader={reader} now={now} actions={actions} isOwnPage />
-      ) : null}
+      {carry.state === 'planned' ? <PlannedSheet carry={carry} reader={reader} now={now} isOwnPage /> : null}
       {out.length > 0 ? (
         <OutSheet
           title={`Out in ${carry.toRoom.name}`}
           pieces={out}
           reader={reader}
           now={now}
-          actions={actions}
           isUrgent={out.some(({ piece }) => piece.isOverdue)}
         />
       ) : null}
