@@ -36,6 +36,11 @@ export async function isAnySiteThere(db: Kysely<Database>): Promise<boolean> {
   return (await db.selectFrom('site').select('id').limit(1).executeTakeFirst()) !== undefined
 }
 
+/** Whether a site was here once: a place that its owner took away must not come back by itself. */
+export async function wasAnySiteThere(db: Kysely<Database>): Promise<boolean> {
+  return (await db.selectFrom('retired_code').select('code').limit(1).executeTakeFirst()) !== undefined
+}
+
 export async function markDemoComplete(
   db: Kysely<Database>,
   siteId: number,

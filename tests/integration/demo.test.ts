@@ -276,6 +276,15 @@ describe('looking after the demo', () => {
     expect(await database.db.selectFrom('site').where('is_demo', '=', true).selectAll().execute()).toEqual([])
   })
 
+  test('does not bring back a demo that its owner took away, until it is asked to', async () => {
+    const { db } = database
+    await db.deleteFrom('organization').where('id', '=', 'other').execute()
+    await lookAfter()
+    expect(await db.selectFrom('site').selectAll().execute()).toEqual([])
+    await lookAfter(true)
+    expect((await site()).is_demo).toBe(true)
+  })
+
   const byEmail = (a: { email: string }, b: { email: string }) => a.email.localeCompare(b.email)
   async function userOf(email: string): Promise<string> {
     const row = await database.db

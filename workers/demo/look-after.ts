@@ -1,6 +1,6 @@
 import { access } from 'node:fs/promises'
 import type { Kysely } from 'kysely'
-import { isAnySiteThere, listDemoSites } from '@/db/queries/demo'
+import { isAnySiteThere, listDemoSites, wasAnySiteThere } from '@/db/queries/demo'
 import { deleteSite, deleteUsersWithoutSite } from '@/db/queries/sites'
 import type { Database } from '@/db/schema'
 import { demoAccounts } from '@/lib/sites/demo'
@@ -21,7 +21,8 @@ export interface LookAfterOptions extends Omit<DemoOptions, 'keepRoster'> {
 export async function lookAfterDemo(db: Kysely<Database>, options: LookAfterOptions): Promise<void> {
   const { dataDir, isReset, now, say } = options
   const demos = await listDemoSites(db)
-  for (const demo of demos.filter((one) => isReset || !one.isComplete)) {
+  const toRemove = demos.filter((one) => isReset || !one.isComplete)
+  for (const demo of toRemove) {
     say(isReset ? 'Removing the demo' : 'Removing a demo that was not finished')
     await removeDemo(db, demo.id, now)
     await removeRoster(dataDir)
@@ -32,6 +33,8 @@ export async function lookAfterDemo(db: Kysely<Database>, options: LookAfterOpti
     return say('The demo is there.')
   }
   if (!isReset && (await isAnySiteThere(db))) return say('There are sites already, so no demo is made.')
+  if (!isReset && toRemove.length === 0 && (await wasAnySiteThere(db)))
+    return say('The demo was taken away. `npm start -- --reset-demo` makes it anew.')
   const began = performance.now()
   await makeDemo(db, { ...options, keepRoster: (roster) => writeRoster(dataDir, roster) })
   say(`The demo is made, in ${((performance.now() - began) / 1000).toFixed(1)} s.`)
