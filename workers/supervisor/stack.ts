@@ -53,6 +53,7 @@ export async function createStack(options: StackOptions): Promise<Stack> {
   const env = { ...options.inherited, ...environmentOf(config), NEXT_TELEMETRY_DISABLED: '1' }
   const context: parts.PartContext = { root, config, env }
   const supervisor = createSupervisor({ logFolder: folder.logs, say })
+  const isReset = options.resetDemo === true
   const ownDatabase = options.config.databaseUrl === undefined
   const ownMail = options.config.smtpUrl === undefined && config.smtpUrl !== undefined
 
@@ -75,14 +76,9 @@ export async function createStack(options: StackOptions): Promise<Stack> {
     await createMissingDatabase(prepared.adminUrl, databaseName)
   }
 
-  async function startBase(): Promise<void> {
+  async function openDatabase(): Promise<void> {
     if (ownDatabase) await startDatabase()
     await migrate(config.databaseUrl ?? '', say)
-    await Promise.all([
-      config.demo ? supervisor.run(parts.demoTask(context, options.resetDemo === true)) : undefined,
-      supervisor.serve(parts.broker(context)),
-      ownMail ? supervisor.serve(parts.mailTrap(context)) : undefined,
-    ])
   }
 
   async function build(): Promise<void> {
@@ -97,14 +93,18 @@ export async function createStack(options: StackOptions): Promise<Stack> {
     env,
     supervisor,
     async start() {
-      // The first to fail stops the start; the other is ended by `stop` and its own failure is no news.
-      await Promise.all([build(), startBase()])
-      // Not before the demo is whole: these would act on what is half made.
+      // The first to fail stops the start; the others are ended by `stop`, and their own failures are no news.
+      const opened = openDatabase()
+      const pages = Promise.all([build(), opened])
       await Promise.all([
-        supervisor.serve(parts.notices(context)),
-        supervisor.serve(parts.delivery(context)),
-        supervisor.serve(parts.web(context, options.mode)),
+        pages.then(() => supervisor.serve(parts.web(context, options.mode))),
+        opened.then(() => supervisor.serve(parts.broker(context))),
+        ownMail ? opened.then(() => supervisor.serve(parts.mailTrap(context))) : undefined,
+        config.demo ? opened.then(() => supervisor.run(parts.demoTask(context, isReset))) : undefined,
       ])
+      // Not before the demo is whole: these would act on what is half made.
+      await supervisor.serve(parts.notices(context))
+      await supervisor.serve(parts.delivery(context))
       if (config.demo) await supervisor.serve(parts.fakeSensors(context))
       await writeRunFile(folder, {
         pid: process.pid,
