@@ -1,6 +1,6 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { type Browser, launchBrowser, type Visit, visit } from '../support/browser'
-import { mailWith, siteOf } from './steps'
+import { answering, mailWith, siteOf } from './steps'
 
 /** An address of its own each time, so that an installation may go on running between two runs. */
 const EMAIL = `newcomer-${Date.now().toString(36)}@example.org`
@@ -22,6 +22,7 @@ describe('the first run, on a phone', () => {
   it('goes from an address to two rooms on the rule', { timeout: 180_000 }, async () => {
     const { page } = newcomer
     await page.goto('/sign-up')
+    await answering(page)
     await page.getByRole('button', { name: 'Make an account' }).click()
     await page.getByText('10 letters or more', { exact: true }).waitFor()
 
@@ -39,6 +40,8 @@ describe('the first run, on a phone', () => {
     await page.getByRole('link', { name: 'Go on' }).click()
 
     await page.getByRole('link', { name: 'Make your site' }).click()
+    await page.waitForURL('**/sites/new')
+    await answering(page)
     await page.getByLabel('What it is called').fill('Corner bench')
     await page.getByLabel('Where finished boxes are kept').fill('Hall press')
     await page.getByLabel('Where you turn').fill('Hall press')
@@ -61,6 +64,7 @@ describe('the first run, on a phone', () => {
     const { page } = newcomer
     await page.context().clearCookies()
     await page.goto('/sign-in')
+    await answering(page)
     const words: string[] = []
     for (const email of [EMAIL, 'nobody@example.org']) {
       await page.getByLabel('E-mail').fill(email)
@@ -75,6 +79,7 @@ describe('the first run, on a phone', () => {
   it('comes back to the page that was asked for, and to no other site', async () => {
     const { page } = newcomer
     await page.goto('/sign-in?next=//evil.example/x')
+    await answering(page)
     await page.getByLabel('E-mail').fill(EMAIL)
     await page.getByLabel('Password', { exact: true }).fill(PASSWORD)
     await page.getByRole('button', { name: 'Sign in' }).click()

@@ -1,5 +1,6 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { type Browser, launchBrowser, type Visit, visit } from '../support/browser'
+import { answering } from './steps'
 
 let browser: Browser
 let stranger: Visit
@@ -19,6 +20,7 @@ describe('the landing page', () => {
   it('moves the box by the arrow keys and says what that takes', async () => {
     const { page } = stranger
     await page.goto('/')
+    await answering(page)
     await page.getByText('The lid should still turn').waitFor()
     const before = await valueNow()
     await box().focus()

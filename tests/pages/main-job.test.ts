@@ -4,7 +4,7 @@ import { localFieldValue } from '@/lib/format/local-time'
 import { emcPct } from '@/lib/wood/emc'
 import { type Browser, launchBrowser, type Visit, visit } from '../support/browser'
 import { demoAccounts } from '../support/sign-in'
-import { mailWith, runLine, signInByForm, siteOf, withReading } from './steps'
+import { answering, mailWith, runLine, signInByForm, siteOf, withReading } from './steps'
 
 const IN_VIEW_WITHIN_MS = 2_000
 /** A busy machine may take its time; only what the product promises is held to the clock. */
@@ -39,6 +39,7 @@ describe('the main job', () => {
     site = siteOf(page)
 
     await page.goto(`/sites/${site}/rooms`)
+    await answering(page)
     await page.getByRole('button', { name: 'Add a room' }).click()
     const dialog = page.getByRole('dialog', { name: 'A new room' })
     await dialog.getByLabel('Its name').fill(ROOM)
@@ -47,6 +48,7 @@ describe('the main job', () => {
     await dialog.waitFor({ state: 'hidden' })
 
     await page.goto(`/sites/${site}/sensors/add`)
+    await answering(page)
     await page.getByLabel('Name of the sensor').fill(SENSOR)
     await page.getByLabel('Room that it hangs in').selectOption({ label: ROOM })
     await page.getByRole('button', { name: 'Make it known' }).click()
@@ -79,6 +81,7 @@ describe('the main job', () => {
     async () => {
       const { page } = maker
       await page.goto(`/sites/${site}/pieces/new`)
+      await answering(page)
       await page.getByLabel('Its number').fill(PIECE)
       await page.getByLabel('Its wood').selectOption({ label: 'Ash, European' })
       await page.getByLabel(/^Joint/).fill('88')
@@ -88,6 +91,8 @@ describe('the main job', () => {
       await page.waitForURL(/\/pieces\/[a-z0-9]{10}$/)
 
       await page.getByRole('link', { name: 'Check a carry' }).click()
+      await page.waitForURL(/\/carry\?/)
+      await answering(page)
       await page.getByRole('tab', { name: 'Plan' }).click()
       await page.getByLabel('The room it goes to').selectOption({ label: ROOM })
       await page.getByLabel('How long it stays').selectOption({ label: '12\u00a0h' })
@@ -116,6 +121,7 @@ describe('the main job', () => {
   it('asks again before it starts against the advice, and brings it back', { timeout: 120_000 }, async () => {
     const { page } = maker
     await page.goto(`/sites/${site}`)
+    await answering(page)
     const planned = page.locator('section', { hasText: `${PIECE} is down to go to ${ROOM}` })
     await planned.getByRole('button', { name: 'Take it out now' }).click()
     const advice = page.getByRole('alertdialog')
@@ -133,6 +139,8 @@ describe('the main job', () => {
   })
 
   it('leaves the console empty and asks nobody outside', () => {
-    expect(maker.complaints).toEqual([])
+    // The browser notes the refusal that makes the page ask again; nothing else.
+    const others = maker.complaints.filter((complaint) => !/409.*\/carries\/\w+\/start/.test(complaint))
+    expect(others).toEqual([])
   })
 })

@@ -6,6 +6,17 @@ import type { Page } from '../support/browser'
 
 const run = promisify(execFile)
 
+/** Waits until the page's controls answer: what is typed before that is lost to the form. */
+export async function answering(page: Page): Promise<void> {
+  await page.waitForFunction(() => {
+    const controls = [...document.querySelectorAll('main input, main select, main button')]
+    return (
+      controls.length > 0 &&
+      controls.every((one) => Object.keys(one).some((key) => key.startsWith('__reactProps')))
+    )
+  })
+}
+
 /** Signs in as a person does, and ends on the page that leads to the sites. */
 export async function signInByForm(
   page: Page,
@@ -13,6 +24,7 @@ export async function signInByForm(
   password: string = demoPassword,
 ): Promise<void> {
   await page.goto('/sign-in')
+  await answering(page)
   const form = page.getByRole('form', { name: 'Sign in' })
   await form.getByLabel('E-mail').fill(email)
   await form.getByLabel('Password', { exact: true }).fill(password)
