@@ -78,7 +78,7 @@ describe('another name of this machine', () => {
     async (path) => {
       const { port, origin } = new URL(inject('stack').webUrl)
       const { location, refresh } = (await askAs(`localhost:${port}`, path)).headers
-      const target = location ?? refresh?.replace('0; url=', '')
+      const target = location ?? refresh?.toString().replace('0; url=', '')
       if (target !== undefined) expect(new URL(target, origin).origin).toBe(origin)
     },
   )
