@@ -34,6 +34,9 @@ export function createPool(url: string, options: ClientOptions = {}): Pool {
   })
   // Without a listener, a database restart would end the process through an idle connection.
   pool.on('error', (error) => options.onIdleError?.(error))
+  // The pool listens to idle connections only. One that is lost between two statements of a transaction would end the
+  // process too; its next statement fails and says so.
+  pool.on('connect', (client) => client.on('error', () => undefined))
   return pool
 }
 
