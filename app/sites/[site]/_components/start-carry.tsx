@@ -1,5 +1,6 @@
 'use client'
 
+import { useState } from 'react'
 import { problemCodeOf } from '@/lib/api/problems'
 import type { Carry } from '@/lib/carry/carry'
 import { describeError } from '@/app/_components/api'
@@ -8,9 +9,13 @@ import { Callout } from '@/app/_components/ui/callout'
 import { AgainstAdvice } from './against-advice'
 import type { CarryActions } from './use-carry-actions'
 
-/** Takes a planned carry out. Against the advice it asks again, and says why. */
+/**
+ * Takes a planned carry out. Against the advice it asks again, and says why: at once where the verdict on the page
+ * says so, and after the server's own check where that has changed meanwhile.
+ */
 export function StartCarry({ carry, start }: { carry: Carry; start: CarryActions['start'] }) {
   const isAdvised = start.problem !== null && problemCodeOf(start.problem) === 'advised-against'
+  const [asking, setAsking] = useState(false)
   const isBest = carry.worst === 'fine' || carry.worst === 'keep-short' || carry.worst === 'words'
   return (
     <>
@@ -18,17 +23,22 @@ export function StartCarry({ carry, start }: { carry: Carry; start: CarryActions
         variant={isBest ? 'filled' : 'second'}
         pending={start.pending}
         onClick={() => {
-          start.act({ carryId: carry.id, againstAdvice: false })
+          if (carry.worst === 'leave') setAsking(true)
+          else start.act({ carryId: carry.id, againstAdvice: false })
         }}
       >
         Take it out now
       </Button>
       <AgainstAdvice
-        open={isAdvised}
-        why={start.problem?.detail ?? ''}
+        open={asking || isAdvised}
+        why={start.problem?.detail ?? carry.headline}
         pending={start.pending}
-        onCancel={start.reset}
+        onCancel={() => {
+          setAsking(false)
+          start.reset()
+        }}
         onConfirm={() => {
+          setAsking(false)
           start.act({ carryId: carry.id, againstAdvice: true })
         }}
       />

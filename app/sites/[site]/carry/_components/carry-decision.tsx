@@ -1,5 +1,6 @@
 'use client'
 
+import { useState } from 'react'
 import { apiFetch, describeError } from '@/app/_components/api'
 import { siteKey } from '@/app/_components/live/site-keys'
 import { Button } from '@/app/_components/ui/button'
@@ -44,6 +45,7 @@ export function CarryDecision(props: CarryDecisionProps) {
     errors: 'inline',
     onDone,
   })
+  const [asking, setAsking] = useState(false)
   const isAdvised = create.problem !== null && problemCodeOf(create.problem) === 'advised-against'
   const isBad = answer?.worst === 'leave' && !isLogged
   const goWords = mode === 'plan' ? 'Plan it' : isLogged ? 'Log it as out' : 'Take it out now'
@@ -59,7 +61,8 @@ export function CarryDecision(props: CarryDecisionProps) {
           variant={isBad ? 'second' : 'filled'}
           pending={create.pending}
           onClick={() => {
-            create.act(bodyOf(request, mode, false))
+            if (isBad && mode === 'now') setAsking(true)
+            else create.act(bodyOf(request, mode, false))
           }}
         >
           {goWords}
@@ -69,11 +72,15 @@ export function CarryDecision(props: CarryDecisionProps) {
         ) : null}
       </PageActions>
       <AgainstAdvice
-        open={isAdvised}
-        why={create.problem?.detail ?? answer?.headline ?? ''}
+        open={asking || isAdvised}
+        why={create.problem?.detail ?? whyNot(answer)}
         pending={create.pending}
-        onCancel={create.reset}
+        onCancel={() => {
+          setAsking(false)
+          create.reset()
+        }}
         onConfirm={() => {
+          setAsking(false)
           create.act(bodyOf(request, mode, true))
         }}
       />
@@ -84,6 +91,14 @@ export function CarryDecision(props: CarryDecisionProps) {
       ) : null}
     </div>
   )
+}
+
+/** The verdict against it and its reason, for each piece that should stay. */
+function whyNot(answer: CarryCheckAnswer | undefined): string {
+  const reasons = (answer?.pieces ?? []).flatMap(({ number, check }) =>
+    check.kind === 'verdict' && check.verdict === 'leave' ? [`${number}: ${check.reason}`] : [],
+  )
+  return reasons.join(' ')
 }
 
 function bodyOf(request: CarryCheckRequest, mode: 'now' | 'plan', againstAdvice: boolean): Partial<NewCarry> {
