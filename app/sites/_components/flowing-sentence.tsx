@@ -6,7 +6,10 @@ export function FlowingSentence({ className, ...rest }: ComponentProps<'div'>) {
   return (
     <div
       {...rest}
-      className={classNames('text-[18px] leading-[3.25rem] sm:text-[19px] sm:leading-[3rem]', className)}
+      className={classNames(
+        'text-[18px] leading-[3.25rem] sm:text-[19px] sm:leading-[3rem] [&_input]:leading-6 [&_input]:placeholder:text-ink-soft [&_select]:leading-6',
+        className,
+      )}
     />
   )
 }

@@ -18,7 +18,7 @@ export function RoleTable({ role: own }: { role: Role }) {
               <th
                 key={role}
                 scope="col"
-                className={`px-1 py-2 text-center text-label font-semibold ${role === own ? 'text-heart' : 'text-ink-soft'}`}
+                className={`py-2 text-center text-small font-semibold sm:text-label ${role === own ? 'text-heart' : 'text-ink-soft'}`}
               >
                 {roleWords[role]}
                 {role === own ? <span className="block">yours</span> : null}
@@ -33,7 +33,7 @@ export function RoleTable({ role: own }: { role: Role }) {
                 {line.words}
               </th>
               {line.may.map((yes, index) => (
-                <td key={roles[index]} className="w-16 px-1 text-center sm:w-24">
+                <td key={roles[index]} className="w-[54px] text-center sm:w-24">
                   {yes ? (
                     <Check aria-hidden="true" size={18} strokeWidth={2.5} className="mx-auto text-good" />
                   ) : (
