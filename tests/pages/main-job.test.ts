@@ -141,7 +141,7 @@ describe('the main job', () => {
     await advice.getByText(/never force it/).waitFor()
     await advice.getByRole('button', { name: 'Take it out all the same' }).click()
 
-    const back = page.getByRole('button', { name: `Back in Landing cupboard, ${PIECE}` })
+    const back = page.getByRole('button', { name: new RegExp(`^Back in Landing cupboard,? ${PIECE}$`) })
     await back.click()
     await back.waitFor({ state: 'hidden' })
     await page.getByText(`${PIECE} is back in`).waitFor()
