@@ -2,7 +2,7 @@
 
 import { useId, useMemo, useState } from 'react'
 import { formatEmc, formatHumidity, formatTemperature } from '@/lib/format/figures'
-import { formatClock, formatMoment } from '@/lib/format/times'
+import { formatClock, formatDay, formatMoment } from '@/lib/format/times'
 import type { RoomSeries } from '@/lib/rooms/room'
 import type { UnitSystem } from '@/lib/sites/site'
 import { fahrenheitFromCelsius } from '@/lib/units'
@@ -38,7 +38,7 @@ export function SeriesChart({ series, title, tableName, timeZone, units, now }: 
   const point = read[index]
   const moment = (at: number) =>
     series.grain === 'day'
-      ? formatMoment(new Date(at), timeZone, now).replace(/[, ]*\d\d:\d\d$/, '')
+      ? formatDay(new Date(at), timeZone, now)
       : formatMoment(new Date(at), timeZone, now)
 
   const shownTemperature = (temperatureC: number | null) =>

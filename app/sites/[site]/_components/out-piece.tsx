@@ -30,8 +30,9 @@ export function OutPiece({ carry, piece, reader, now, isFirst = false }: OutPiec
   const isVerdict = check?.kind === 'verdict'
   const isUnknown = check?.kind === 'unknown'
   const mayDo = may(reader.role, 'carries:do')
-  const home = piece.fromRoom?.name
+  const backWords = piece.fromRoom ? `Back in ${piece.fromRoom.name}` : 'It is back'
   const isShut = piece.cover === 'bagged' || piece.cover === 'tub'
+  const coverVerb = isShut ? 'Open again' : 'Bagged, still out'
   return (
     <li className="grid gap-x-6 gap-y-3 border-b border-line py-4 first:pt-0 last:border-b-0 last:pb-0 lg:grid-cols-[minmax(0,1fr)_minmax(0,340px)_auto] lg:items-start">
       <div className="flex gap-4">
@@ -74,16 +75,17 @@ export function OutPiece({ carry, piece, reader, now, isFirst = false }: OutPiec
         <div className="flex gap-3 lg:w-56 lg:flex-col">
           <Button
             variant={isFirst ? 'filled' : 'second'}
+            aria-label={`${backWords}, ${piece.number}`}
             className="grow"
             pending={actions.bringBack.pending}
             onClick={() => {
               actions.bringBack.act({ carryId: carry.id, pieceIds: [piece.id] })
             }}
           >
-            {home ? `Back in ${home}` : 'It is back'}
-            <span className="sr-only"> {piece.number}</span>
+            {backWords}
           </Button>
           <Button
+            aria-label={`${coverVerb}, ${piece.number}`}
             pending={actions.cover.pending}
             onClick={() => {
               actions.cover.act({
@@ -93,8 +95,7 @@ export function OutPiece({ carry, piece, reader, now, isFirst = false }: OutPiec
               })
             }}
           >
-            {isShut ? 'Open again' : 'Bagged, still out'}
-            <span className="sr-only"> {piece.number}</span>
+            {coverVerb}
           </Button>
         </div>
       ) : null}
