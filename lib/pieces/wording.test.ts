@@ -67,6 +67,10 @@ describe('the figures behind it', () => {
     expect(plainSpaces(movedWords({ ...mc, ringMcPct: 8.2 }, 'imperial'))).toContain('1.0 point drier')
     expect(plainSpaces(movedWords(mc, 'imperial'))).toContain('0.004 in')
   })
+  it('gives no figure for what is too little to tell', () => {
+    const words = movedWords({ ...mc, ringMcPct: 9.3, lossMm: 0.01 }, 'metric')
+    expect(plainSpaces(words)).toContain('which takes next to nothing of the 0.20 mm')
+  })
   it('leaves the millimetres out when they aren’t known', () => {
     expect(plainSpaces(movedWords({ ...mc, lossMm: null }, 'metric'))).toBe(
       'It stands 1.4 points damper than where its joint was cut.',

@@ -64,7 +64,7 @@ export function quarterTurnWords(mc: Pick<Moved, 'usedFraction'>): string {
 
 /** "a quarter of its allowance", in the words of the carry check: none, a quarter, half, all. */
 export function usedWords(used: number): string {
-  if (used < 0.05) return 'none of its allowance is used'
+  if (used < 0.13) return 'next to none of its allowance is used'
   if (used < 0.35) return 'about a quarter of its allowance is used'
   if (used < 0.65) return 'about half of its allowance is used'
   if (used < 0.9) return 'about three quarters of its allowance is used'
@@ -81,7 +81,13 @@ export function movedWords(mc: Moved, units: UnitSystem): string {
       : `It stands ${formatPoints(change)} ${change > 0 ? 'damper' : 'drier'} than where its joint was cut`
   if (mc.lossMm === null || mc.allowanceMm === null) return `${moved}.`
   return (
-    `${moved}, which takes about ${formatFineLength(mc.lossMm, units)} ` +
+    `${moved}, which takes ${lossWords(mc.lossMm, units)} ` +
     `of the ${formatFineLength(mc.allowanceMm, units)} that it may lose at a quarter turn.`
   )
 }
+
+/** Less than half of the least step told is not worth a figure. */
+const TOLD_FROM_MM = 0.025
+
+const lossWords = (lossMm: number, units: UnitSystem): string =>
+  lossMm < TOLD_FROM_MM ? 'next to nothing' : `about ${formatFineLength(lossMm, units)}`
