@@ -17,8 +17,8 @@ export function DemoBanner({ site }: { site: Site }) {
     },
   })
   return (
-    <div
-      role="note"
+    <aside
+      aria-label="Demo"
       className="flex flex-wrap items-center gap-x-4 border-b border-edge bg-steel px-4 py-1 text-label lg:px-10"
     >
       <p>
@@ -51,6 +51,6 @@ export function DemoBanner({ site }: { site: Site }) {
           Lidfast with <code>--reset-demo</code> makes it anew.
         </p>
       </ConfirmDialog>
-    </div>
+    </aside>
   )
 }

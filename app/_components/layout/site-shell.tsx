@@ -42,7 +42,7 @@ export function SiteShell({ frame: initial, children }: { frame: SiteFrame; chil
       <Live site={site.id} />
       {site.isDemo ? <DemoBanner site={site} /> : null}
       <div className="lg:grid lg:min-h-dvh lg:grid-cols-[240px_minmax(0,1fr)]">
-        <div className="border-r border-line max-lg:hidden">
+        <header className="border-r border-line max-lg:hidden">
           <div className="sticky top-0 flex max-h-dvh flex-col overflow-y-auto py-5">
             <Link href={base} className="flex min-h-11 items-center gap-3 px-6 text-[21px] font-semibold">
               <Logo />
@@ -58,7 +58,7 @@ export function SiteShell({ frame: initial, children }: { frame: SiteFrame; chil
               <FrameFoot frame={frame} />
             </div>
           </div>
-        </div>
+        </header>
         <div className="min-w-0">
           <PhoneHeader base={base} frame={frame} />
           <main
