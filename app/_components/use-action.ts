@@ -4,6 +4,7 @@ import { useMutation, useQueryClient } from '@tanstack/react-query'
 import { useRef } from 'react'
 import { toast } from 'sonner'
 import { ApiProblem, describeError } from './api'
+import { retryKey } from './retry-key'
 
 type ActionOptions<Input, Answer> = {
   run: (input: Input, idempotencyKey: string) => Promise<Answer>
@@ -27,7 +28,7 @@ export function useAction<Input, Answer>(options: ActionOptions<Input, Answer>) 
   const mutation = useMutation<Answer, Error, Input>({
     mutationFn: (input) => {
       const text = JSON.stringify(input) ?? ''
-      if (open.current?.input !== text) open.current = { input: text, key: crypto.randomUUID() }
+      if (open.current?.input !== text) open.current = { input: text, key: retryKey() }
       return options.run(input, open.current.key)
     },
     onSuccess: async (answer, input) => {
