@@ -1,4 +1,5 @@
 import type { ColumnType, Generated, GeneratedAlways, JSONColumnType } from 'kysely'
+import type { WoodTables } from './schema-wood'
 
 /** The shape of the database, as the migrations leave it. Rows are turned into `lib/` types before they leave `db/`. */
 
@@ -85,6 +86,7 @@ interface SiteTable {
   quiet_to: TimeOfDay
   lock_up_at: TimeOfDay
   is_demo: Generated<boolean>
+  scale_step_g: number | null
   version: Generated<number>
   created_at: InstantDefault
 }
@@ -96,7 +98,8 @@ interface RetiredCodeTable {
 
 interface SiteCounterTable {
   site_id: number
-  kind: 'room' | 'sensor' | 'piece' | 'carry' | 'notice' | 'episode'
+  kind:
+    'room' | 'sensor' | 'piece' | 'carry' | 'notice' | 'episode' | 'wood' | 'event' | 'weighing' | 'outcome'
   last_id: Generated<number>
 }
 
@@ -264,6 +267,12 @@ interface PieceTable {
   fitted_on: ColumnType<string | null, string | null | undefined, string | null>
   fitted_at: Instant | null
   fit_mc_pct: number | null
+  fit_lid_mc_pct: number | null
+  lid_wall_mm: number | null
+  blank_diameter_mm: number | null
+  ends_sealed: Generated<boolean>
+  roughed_on: ColumnType<string | null, string | null | undefined, string | null>
+  ready_by_weight: Generated<boolean>
   note: Generated<string>
   owner_user_id: string | null
   is_private: Generated<boolean>
@@ -394,7 +403,7 @@ interface DemoMailTable {
   html_body: string
 }
 
-export interface Database {
+export interface Database extends WoodTables {
   user: UserTable
   session: SessionTable
   account: AccountTable
