@@ -1,4 +1,5 @@
 import type { ColumnType, Generated, GeneratedAlways, JSONColumnType } from 'kysely'
+import type { AccountTables } from './schema-accounts'
 import type { WoodTables } from './schema-wood'
 
 /** The shape of the database, as the migrations leave it. Rows are turned into `lib/` types before they leave `db/`. */
@@ -8,72 +9,6 @@ type InstantDefault = ColumnType<Date, Date | string | undefined, Date | string>
 /** A calendar day or a time of day comes back as text: a Date would drag in a time zone. */
 type Day = ColumnType<string, string, string>
 type TimeOfDay = ColumnType<string, string | undefined, string>
-
-interface UserTable {
-  id: string
-  name: string
-  email: string
-  emailVerified: boolean
-  image: string | null
-  createdAt: InstantDefault
-  updatedAt: InstantDefault
-}
-
-interface SessionTable {
-  id: string
-  expiresAt: Instant
-  token: string
-  createdAt: InstantDefault
-  updatedAt: Instant
-  ipAddress: string | null
-  userAgent: string | null
-  userId: string
-  activeOrganizationId: string | null
-}
-
-interface AccountTable {
-  id: string
-  accountId: string
-  providerId: string
-  userId: string
-  accessToken: string | null
-  refreshToken: string | null
-  idToken: string | null
-  accessTokenExpiresAt: Instant | null
-  refreshTokenExpiresAt: Instant | null
-  scope: string | null
-  password: string | null
-  createdAt: InstantDefault
-  updatedAt: Instant
-}
-
-interface OrganizationTable {
-  id: string
-  name: string
-  slug: string
-  logo: string | null
-  createdAt: Instant
-  metadata: string | null
-}
-
-interface MemberTable {
-  id: string
-  organizationId: string
-  userId: string
-  role: string
-  createdAt: Instant
-}
-
-interface InvitationTable {
-  id: string
-  organizationId: string
-  email: string
-  role: string | null
-  status: string
-  expiresAt: Instant
-  createdAt: InstantDefault
-  inviterId: string
-}
 
 interface SiteTable {
   id: GeneratedAlways<number>
@@ -403,13 +338,7 @@ interface DemoMailTable {
   html_body: string
 }
 
-export interface Database extends WoodTables {
-  user: UserTable
-  session: SessionTable
-  account: AccountTable
-  organization: OrganizationTable
-  member: MemberTable
-  invitation: InvitationTable
+export interface Database extends AccountTables, WoodTables {
   site: SiteTable
   retired_code: RetiredCodeTable
   site_counter: SiteCounterTable
