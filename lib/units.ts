@@ -15,3 +15,14 @@ export const mmFromInches = (lengthIn: number): number => lengthIn * MM_PER_INCH
 
 export const ouncesFromGrams = (massG: number): number => massG / GRAMS_PER_OUNCE
 export const gramsFromOunces = (massOz: number): number => massOz * GRAMS_PER_OUNCE
+
+/** Exact by definition: the cube of the foot of 1959. */
+export const CUBIC_METRES_PER_CUBIC_FOOT = 0.028316846592
+/** Exact by definition: international avoirdupois pound, 1959. */
+export const KILOGRAMS_PER_POUND = 0.45359237
+
+export const cubicFeetFromCubicMetres = (volumeM3: number): number => volumeM3 / CUBIC_METRES_PER_CUBIC_FOOT
+export const cubicMetresFromCubicFeet = (volumeFt3: number): number => volumeFt3 * CUBIC_METRES_PER_CUBIC_FOOT
+
+export const poundsFromKilograms = (massKg: number): number => massKg / KILOGRAMS_PER_POUND
+export const kilogramsFromPounds = (massLb: number): number => massLb * KILOGRAMS_PER_POUND
