@@ -1,4 +1,5 @@
-import { findSpecies, type MovementClass, type SpeciesStatus } from './species'
+import type { ResolvedWood, WoodStatus } from './site-wood'
+import { findSpecies, type MovementClass } from './species'
 
 export type ClassMovement = {
   /** Medians of the class, fraction per % MC. */
@@ -34,7 +35,7 @@ export type WoodMovement = {
   readonly movementDoubt: number
   /** What was not known of this wood and was taken from its class or as a middling figure. */
   readonly assumed: readonly ('wood' | 'movement' | 'density')[]
-  readonly status: SpeciesStatus | 'derived'
+  readonly status: WoodStatus | 'derived'
 }
 
 /** Keeps the mean movement of the class, and opens its two directions to the difference that a warning counts with. */
@@ -50,16 +51,21 @@ function movementForWarnings(
   }
 }
 
+/** What the movement of a wood is worked out from; a species of the table has all of it, and so has a site's own wood. */
+export type WoodFigures = Pick<
+  ResolvedWood,
+  'radialPerPct' | 'tangentialPerPct' | 'densityKgM3' | 'movementClass' | 'status'
+>
+
 /**
  * What a wood does with moisture, with everything unknown filled in and named.
- * @param slug Latin name in lower case with hyphens; undefined or a wood without a row counts as unknown
+ * @param wood a species of the table, or a site's wood as `resolveWood` gives it; undefined counts as unknown
  * @returns fractions per % MC and density in kg/m³ at 12 % MC
  *
- * Source: the species table (each row names its own); else medians by class, status derived.
+ * Source: the wood's own row (each names its own); else medians by class, status derived.
  */
-export function woodMovement(slug: string | undefined): WoodMovement {
-  const species = slug === undefined ? undefined : findSpecies(slug)
-  if (species === undefined) {
+export function movementOfWood(wood: WoodFigures | undefined): WoodMovement {
+  if (wood === undefined) {
     return {
       ...movementForWarnings(UNKNOWN_WOOD_CLASS),
       densityKgM3: UNKNOWN_DENSITY_KG_M3,
@@ -68,7 +74,7 @@ export function woodMovement(slug: string | undefined): WoodMovement {
       status: 'derived',
     }
   }
-  const { radialPerPct, tangentialPerPct, densityKgM3, movementClass, status } = species
+  const { radialPerPct, tangentialPerPct, densityKgM3, movementClass, status } = wood
   const known = radialPerPct !== undefined && tangentialPerPct !== undefined
   return {
     ...(known
@@ -83,3 +89,10 @@ export function woodMovement(slug: string | undefined): WoodMovement {
     status,
   }
 }
+
+/**
+ * The same for a wood of the table by its name, where no site's own woods come in.
+ * @param slug Latin name in lower case with hyphens; undefined or a wood without a row counts as unknown
+ */
+export const woodMovement = (slug: string | undefined): WoodMovement =>
+  movementOfWood(slug === undefined ? undefined : findSpecies(slug))

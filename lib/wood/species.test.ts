@@ -3,7 +3,7 @@ import { referenceRows, type ReferenceRow } from '@/tests/support/reference'
 import { DUST_TABLE, dustNote } from './dust'
 import { CLASS_MOVEMENT, UNKNOWN_DENSITY_KG_M3, woodMovement } from './movement-class'
 import { findSpecies, SPECIES, speciesSlug } from './species'
-import { OILY_SPECIES, SPECIES_NOTES } from './species-table'
+import { DENSITY_FROM_MEMORY, OILY_SPECIES, OTHER_NAMES, SPECIES_NOTES } from './species-notes'
 
 const printed = referenceRows('species.csv')
 const numberOrUndefined = (row: ReferenceRow, column: string): number | undefined =>
@@ -21,6 +21,22 @@ describe('species, against species.csv', () => {
     expect(species?.densityKgM3).toBe(numberOrUndefined(row, 'density_12_kg_m3'))
     expect(species?.radialPerPct).toBe(numberOrUndefined(row, 'cr_per_pct'))
     expect(species?.tangentialPerPct).toBe(numberOrUndefined(row, 'ct_per_pct'))
+    const isRecalled = /density from memory/.test(`${row.text('source')} ${row.text('note')}`)
+    const densityStatus = isRecalled ? 'from memory' : row.text('status')
+    expect(species?.densityStatus).toBe(species?.densityKgM3 === undefined ? undefined : densityStatus)
+    expect(species?.source).not.toBe('')
+  })
+
+  it.each(
+    printed
+      .map((row) => [row.text('latin_name'), row.text('note')] as const)
+      .map(
+        ([name, note]) =>
+          [name, note.replace(/density from memory( \(.*?\))?/, '').replace(/^\W+/, '')] as const,
+      )
+      .filter(([, note]) => note !== '' && !/^(use )?class (small|medium|large)$/.test(note)),
+  )('tells what the file notes of %s: %s', (latinName) => {
+    expect(findSpecies(speciesSlug(latinName))?.note).toBeDefined()
   })
 
   it('holds no wood that the file does not, and each slug once', () => {
@@ -28,10 +44,14 @@ describe('species, against species.csv', () => {
     expect(new Set(SPECIES.map((species) => species.slug)).size).toBe(printed.length)
   })
 
-  it('notes and oily marks belong to woods that exist', () => {
-    for (const slug of [...Object.keys(SPECIES_NOTES), ...OILY_SPECIES]) {
-      expect(findSpecies(slug), slug).toBeDefined()
-    }
+  it('keeps notes, marks and other names only for woods that exist', () => {
+    const slugs = [
+      ...Object.keys(SPECIES_NOTES),
+      ...Object.keys(OTHER_NAMES),
+      ...OILY_SPECIES,
+      ...DENSITY_FROM_MEMORY,
+    ]
+    for (const slug of slugs) expect(findSpecies(slug), slug).toBeDefined()
   })
 
   it('writes slugs as Latin names in lower case with hyphens', () => {

@@ -1,4 +1,5 @@
-import { OILY_SPECIES, SPECIES_NOTES, SPECIES_SOURCES, SPECIES_TABLE, type SpeciesRow } from './species-table'
+import { DENSITY_FROM_MEMORY, OILY_SPECIES, SPECIES_NOTES } from './species-notes'
+import { SPECIES_SOURCES, SPECIES_TABLE, type SpeciesRow } from './species-table'
 
 export type MovementClass = 'small' | 'medium' | 'large'
 
@@ -13,6 +14,8 @@ export type Species = {
   readonly latinName: string
   /** At 12 % MC; absent where none was found. */
   readonly densityKgM3?: number
+  /** How the density was come by, where there is one; often worse known than the movement. */
+  readonly densityStatus?: SpeciesStatus
   /** Fraction per % MC; absent where no shrinkage is published. */
   readonly radialPerPct?: number
   readonly tangentialPerPct?: number
@@ -38,7 +41,9 @@ function speciesOfRow(row: SpeciesRow): Species {
     slug,
     commonName,
     latinName,
-    ...(densityKgM3 === null ? {} : { densityKgM3 }),
+    ...(densityKgM3 === null
+      ? {}
+      : { densityKgM3, densityStatus: DENSITY_FROM_MEMORY.has(slug) ? ('from memory' as const) : status }),
     ...(radialPerPct === null || tangentialPerPct === null ? {} : { radialPerPct, tangentialPerPct }),
     movementClass,
     status,
