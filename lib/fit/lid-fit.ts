@@ -56,36 +56,53 @@ export function clearanceFirstOrderMm(joint: Joint, angleDeg: number): number {
   return clearanceMm + diameterMm * (swell(socket) - swell(spigot)) - diameterMm * apart
 }
 
-const caliperWidthMm = (oval: Oval, direction: number): number =>
-  Math.hypot(oval.tangentialDiameterMm * Math.cos(direction), oval.radialDiameterMm * Math.sin(direction))
+const caliperWidthMm = (oval: Oval, direction: number): number => {
+  const alongMm = oval.tangentialDiameterMm * Math.cos(direction)
+  const acrossMm = oval.radialDiameterMm * Math.sin(direction)
+  return Math.sqrt(alongMm * alongMm + acrossMm * acrossMm)
+}
 
-const DIRECTIONS = 360
+/** Both widths go up and down twice in a turn, smoothly: every other degree brackets the least. */
+const DIRECTIONS = 90
 const GOLDEN = (Math.sqrt(5) - 1) / 2
 const DIRECTION_TOLERANCE = 1e-7
 
+/** Where a lid is closest to its base. */
+export type ClosestPlace = {
+  /** Diametral clearance there, mm; below 0 the lid binds by that much. */
+  readonly clearanceMm: number
+  /** From the socket's direction along the rings towards the way the spigot is turned, degrees, 0 to below 180. */
+  readonly directionDeg: number
+}
+
 /**
- * The tightest clearance all round, from the ovals themselves.
+ * The tightest clearance all round and where it is, from the ovals themselves.
  * @param joint as for the first order
- * @param angleDeg turn of the lid from where the grain lines up, degrees, -360 to 360
- * @returns diametral clearance, mm; below 0 the lid binds by that much
+ * @param angleDeg turn of the two parts from where the grain lines up, degrees, -360 to 360
+ * @returns diametral clearance in mm, and the direction in which the two are closest: there and half a turn on
  * @throws RangeError for an input out of range or NaN
  *
  * The least difference of the two caliper widths over all directions (to 1e-6 mm). Both ovals are convex and
- * centrally symmetric, so shifting the lid sideways cannot help.
+ * centrally symmetric, so shifting the lid sideways cannot help. Which of the two parts is turned makes no difference.
  * Source: derived (widths of an ellipse).
  */
-export function clearanceExactMm(joint: Joint, angleDeg: number): number {
+export function closestExact(joint: Joint, angleDeg: number): ClosestPlace {
   assertJoint(joint, angleDeg)
   const { diameterMm, clearanceMm, spigot, socket } = joint
   const inner = ovalOfJoint(diameterMm, spigot, spigot.mcChangePct)
   const outer = ovalOfJoint(diameterMm + clearanceMm, socket, socket.mcChangePct)
   const turn = radians(angleDeg % 180)
   const gapMm = (direction: number): number =>
-    caliperWidthMm(outer, direction - turn) - caliperWidthMm(inner, direction)
+    caliperWidthMm(outer, direction) - caliperWidthMm(inner, direction - turn)
   const step = Math.PI / DIRECTIONS
   let tightest = 0
+  let leastMm = gapMm(0)
   for (let n = 1; n < DIRECTIONS; n += 1) {
-    if (gapMm(n * step) < gapMm(tightest)) tightest = n * step
+    const hereMm = gapMm(n * step)
+    if (hereMm < leastMm) {
+      leastMm = hereMm
+      tightest = n * step
+    }
   }
   let low = tightest - step
   let high = tightest + step
@@ -95,8 +112,21 @@ export function clearanceExactMm(joint: Joint, angleDeg: number): number {
     if (gapMm(nearLow) < gapMm(nearHigh)) high = nearHigh
     else low = nearLow
   }
-  return gapMm((low + high) / 2)
+  const direction = (low + high) / 2
+  return { clearanceMm: gapMm(direction), directionDeg: ((((direction * 180) / Math.PI) % 180) + 180) % 180 }
 }
+
+/**
+ * The tightest clearance all round, from the ovals themselves.
+ * @param joint as for the first order
+ * @param angleDeg turn of the lid from where the grain lines up, degrees, -360 to 360
+ * @returns diametral clearance, mm; below 0 the lid binds by that much
+ * @throws RangeError for an input out of range or NaN
+ *
+ * Source: derived, `closestExact`.
+ */
+export const clearanceExactMm = (joint: Joint, angleDeg: number): number =>
+  closestExact(joint, angleDeg).clearanceMm
 
 /**
  * How much clearance a joint loses a quarter turn on, for each % MC that both parts change alike.
