@@ -5,22 +5,23 @@ import { changedFields, insertChange } from '@/db/queries/changes'
 import { takeIds } from '@/db/queries/counters'
 import { notifySite } from '@/db/queries/live'
 import type { SiteMember } from '@/db/queries/members'
+import { findPiece, type PieceRecord } from '@/db/queries/pieces'
 import {
-  findPiece,
   insertPiece,
   isNumberTaken,
   lockPieces,
-  type PieceRecord,
   type PieceRooms,
   updatePiece,
-} from '@/db/queries/pieces'
+} from '@/db/queries/piece-writes'
 import { movePiece } from '@/db/queries/places'
 import { findRoom } from '@/db/queries/rooms'
+import { findSiteWood } from '@/db/queries/site-woods'
 import { inTransaction } from '@/db/queries/transaction'
 import type { Database } from '@/db/schema'
 import { formatMoment } from '@/lib/format/times'
 import type { NewPiece, PieceChange, PieceDetail } from '@/lib/pieces/piece'
 import { ok } from '@/lib/result'
+import { ownWoodCode } from '@/lib/wood/site-wood'
 import { findSpecies } from '@/lib/wood/species'
 import { bringBack } from './carry-steps'
 import { viewerOf } from './piece-view'
@@ -49,10 +50,22 @@ async function roomsOf(
   return ok(rooms)
 }
 
-const refusedWood = (wood: string | null | undefined) =>
-  typeof wood === 'string' && findSpecies(wood) === undefined
-    ? failField('not-possible', 'wood', 'not in the list of woods: choose one, or leave it unknown')
-    : undefined
+/** A wood must be in the table, or one of the site's own that is offered still; a piece may keep one that was put away. */
+async function refusedWood(
+  db: Kysely<Database>,
+  siteId: number,
+  wood: string | null | undefined,
+  before: string | null = null,
+) {
+  if (wood === null || wood === undefined || wood === before) return undefined
+  const isThere =
+    ownWoodCode(wood) === undefined
+      ? findSpecies(wood) !== undefined
+      : (await findSiteWood(db, siteId, wood)) !== undefined
+  return isThere
+    ? undefined
+    : failField('not-possible', 'wood', 'not in the list of woods: choose one, or leave it unknown')
+}
 
 const numberTaken = () => failField('name-taken', 'number', 'another piece has this number')
 
@@ -63,7 +76,7 @@ export async function createPiece(
   now: Date,
 ): Promise<Outcome<PieceDetail>> {
   return inTransaction(db, async (trx) => {
-    const refusal = refusedWood(input.wood)
+    const refusal = await refusedWood(trx, member.siteId, input.wood)
     if (refusal !== undefined) return refusal
     const room = await findRoom(trx, member.siteId, input.roomId)
     if (room === undefined) return notThere()
@@ -112,7 +125,7 @@ export async function changePiece(
     if (piece.version !== version) return changedMeanwhile(trx, member, piece, now)
     if (change.isPrivate === true && !piece.isPrivate && piece.ownerUserId !== member.userId)
       return fail('not-yours-to-do', 'Only its own maker can make a piece private.')
-    const refusal = refusedWood(change.wood)
+    const refusal = await refusedWood(trx, member.siteId, change.wood, piece.wood)
     if (refusal !== undefined) return refusal
     const rooms = await roomsOf(trx, member, change)
     if (!rooms.ok) return rooms

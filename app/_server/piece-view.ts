@@ -44,7 +44,7 @@ export function pieceView(piece: PieceRecord, member: SiteMember): Piece {
     ...seen,
     stage: piece.stage,
     wood: piece.wood,
-    woodName: woodName(piece.wood),
+    woodName: woodName(piece),
     woodKind: piece.woodKind,
     jointDiameterMm: piece.jointDiameterMm,
     fitGrade: piece.fitGrade,

@@ -115,7 +115,7 @@ async function openDetail(
       cover: place.cover,
       by: place.by,
     })),
-    dust: pieceDust(piece.wood),
+    dust: pieceDust(piece),
     cautions: pieceCautions(piece),
   }
 }

@@ -25,7 +25,7 @@ export interface PieceCursor {
 const speciesSlugs = SPECIES.map((species) => species.slug)
 const speciesNames = SPECIES.map((species) => species.commonName.toLowerCase())
 
-const woodNameSql = sql<string>`coalesce(
+const woodNameSql = sql<string>`coalesce(lower(own_wood.common_name),
   (select names.name from unnest(${speciesSlugs}::text[], ${speciesNames}::text[]) as names (slug, name)
     where names.slug = piece.wood), '')`
 
@@ -66,7 +66,7 @@ export async function listPieceRecords(
     const like = `%${literally(asked.q)}%`
     query = query.where(
       sql<boolean>`(piece.number ilike ${like}
-        or (${isOpen} and (replace(coalesce(piece.wood, ''), '-', ' ') ilike ${like} or ${woodNameSql} ilike ${like})))`,
+        or (${isOpen} and (replace(coalesce(own_wood.latin_name, piece.wood, ''), '-', ' ') ilike ${like} or ${woodNameSql} ilike ${like})))`,
     )
   }
   if (asked.stage !== undefined)

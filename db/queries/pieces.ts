@@ -3,8 +3,6 @@ import {
   fitGradeSchema,
   grainSchema,
   lidFormSchema,
-  type NewPiece,
-  type PieceChange,
   placeCoverSchema,
   type PlaceCover,
   spigotOnSchema,
@@ -12,8 +10,8 @@ import {
   woodKindSchema,
 } from '@/lib/pieces/piece'
 import type { PieceFacts } from '@/lib/carry/carry-check'
+import { ownWoodId } from '@/lib/wood/site-wood'
 import type { Database } from '../schema'
-import { newCode, takeIds } from './counters'
 
 /** Who looks: what a private piece shows, and which pieces an onlooker sees at all, follow from it. */
 export interface Viewer {
@@ -33,6 +31,8 @@ interface RoomOfPiece {
 export interface PieceRecord extends PieceFacts {
   id: number
   code: string
+  /** The names of a wood of the site's own, put away or not; null for one of the table, or not known. */
+  ownWood: { commonName: string; latinName: string } | null
   finish: string
   keepRoom: RoomOfPiece | null
   fittedRoomId: number | null
@@ -76,6 +76,12 @@ export function pieceQuery(db: Kysely<Database>, siteId: number, viewer: Viewer)
     )
     .leftJoin('room as fitted', (join) =>
       join.onRef('fitted.site_id', '=', 'piece.site_id').onRef('fitted.id', '=', 'piece.fitted_room_id'),
+    )
+    .leftJoin('site_wood as own_wood', (join) =>
+      join
+        .onRef('own_wood.site_id', '=', 'piece.site_id')
+        .on('own_wood.overrides', 'is', null)
+        .on(sql<boolean>`${sql.lit(ownWoodId(''))} || own_wood.code = piece.wood`),
     )
     .where('piece.site_id', '=', siteId)
     .$if(viewer.role === 'onlooker', (query) =>
@@ -124,6 +130,8 @@ export function pieceQuery(db: Kysely<Database>, siteId: number, viewer: Viewer)
       'keep.mark as keep_mark',
       'keep.is_shared as keep_is_shared',
       'fitted.code as fitted_code',
+      'own_wood.common_name as own_wood_name',
+      'own_wood.latin_name as own_wood_latin_name',
     ])
     .select(isOut)
     .select(isOpenTo(viewer).as('is_open'))
@@ -167,6 +175,10 @@ export function pieceOf(row: Row): PieceRecord {
     number: row.number,
     stage: stageSchema.parse(row.stage),
     wood: row.wood,
+    ownWood:
+      row.own_wood_name === null
+        ? null
+        : { commonName: row.own_wood_name, latinName: row.own_wood_latin_name ?? '' },
     woodKind: woodKindSchema.parse(row.wood_kind),
     grain: grainSchema.parse(row.grain),
     spigotOn: spigotOnSchema.parse(row.spigot_on),
@@ -273,138 +285,4 @@ export async function listStandingPieces(
     .limit(standingMax)
     .execute()
   return rows.map(pieceOf)
-}
-
-/**
- * Locks pieces for the rest of the transaction, always in the same order, so that two people who carry the same pieces
- * wait for one another instead of both going on, and never for ever.
- */
-export async function lockPieces(
-  db: Kysely<Database>,
-  siteId: number,
-  pieceIds: readonly number[],
-): Promise<void> {
-  if (pieceIds.length === 0) return
-  await db
-    .selectFrom('piece')
-    .where('site_id', '=', siteId)
-    .where('id', 'in', [...pieceIds])
-    .select('id')
-    .orderBy('id')
-    .forUpdate()
-    .execute()
-}
-
-/** Whether another piece in use has the number, in whatever letters. */
-export async function isNumberTaken(
-  db: Kysely<Database>,
-  siteId: number,
-  number: string,
-  butFor = 0,
-): Promise<boolean> {
-  const row = await db
-    .selectFrom('piece')
-    .where('site_id', '=', siteId)
-    .where('archived_at', 'is', null)
-    .where(sql<boolean>`lower(number) = lower(${number})`)
-    .where('id', '<>', butFor)
-    .select('id')
-    .executeTakeFirst()
-  return row !== undefined
-}
-
-/** The rooms of a request by their inner numbers; `undefined` leaves a room as it is. */
-export interface PieceRooms {
-  keepRoomId?: number | null
-  fittedRoomId?: number | null
-}
-
-type Facts = Omit<PieceChange, 'keepRoomId' | 'fittedRoomId'>
-
-const columnsOf = (facts: Facts, rooms: PieceRooms) => ({
-  number: facts.number,
-  stage: facts.stage,
-  wood: facts.wood,
-  wood_kind: facts.woodKind,
-  grain: facts.grain,
-  spigot_on: facts.spigotOn,
-  lid_form: facts.lidForm,
-  joint_diameter_mm: facts.jointDiameterMm,
-  wall_mm: facts.wallMm,
-  spigot_mm: facts.spigotMm,
-  lid_mm: facts.lidMm,
-  body_wall_mm: facts.bodyWallMm,
-  fit_grade: facts.fitGrade,
-  clearance_mm: facts.clearanceMm,
-  allowance_mm: facts.allowanceMm,
-  finish: facts.finish,
-  keep_room_id: rooms.keepRoomId,
-  fitted_room_id: rooms.fittedRoomId,
-  fitted_on: facts.fittedOn,
-  note: facts.note,
-  is_private: facts.isPrivate,
-  is_shared: facts.isShared,
-})
-
-export async function insertPiece(
-  db: Kysely<Database>,
-  siteId: number,
-  piece: NewPiece,
-  rooms: PieceRooms,
-  ownerUserId: string,
-  now: Date,
-): Promise<{ id: number; code: string }> {
-  const id = await takeIds(db, siteId, 'piece')
-  return db
-    .insertInto('piece')
-    .values({
-      ...columnsOf(piece, rooms),
-      number: piece.number,
-      stage: piece.stage,
-      site_id: siteId,
-      id,
-      code: newCode(),
-      wood: piece.wood,
-      joint_diameter_mm: piece.jointDiameterMm,
-      wall_mm: piece.wallMm,
-      spigot_mm: piece.spigotMm,
-      lid_mm: piece.lidMm,
-      body_wall_mm: piece.bodyWallMm,
-      fit_grade: piece.fitGrade,
-      clearance_mm: piece.clearanceMm,
-      allowance_mm: piece.allowanceMm,
-      keep_room_id: rooms.keepRoomId ?? null,
-      fitted_room_id: rooms.fittedRoomId ?? null,
-      fitted_at: null,
-      fit_mc_pct: null,
-      owner_user_id: ownerUserId,
-      created_at: now,
-      archived_at: null,
-    })
-    .returning(['id', 'code'])
-    .executeTakeFirstOrThrow()
-}
-
-/** Changes a piece that is still at the version that the writer saw; false when it has moved on. */
-export async function updatePiece(
-  db: Kysely<Database>,
-  siteId: number,
-  pieceId: number,
-  version: number,
-  facts: Facts,
-  rooms: PieceRooms & { archivedAt?: Date | null } = {},
-): Promise<boolean> {
-  const row = await db
-    .updateTable('piece')
-    .set((eb) => ({
-      ...columnsOf(facts, rooms),
-      archived_at: rooms.archivedAt,
-      version: eb('version', '+', 1),
-    }))
-    .where('site_id', '=', siteId)
-    .where('id', '=', pieceId)
-    .where('version', '=', version)
-    .returning('id')
-    .executeTakeFirst()
-  return row !== undefined
 }

@@ -2,13 +2,15 @@ import { jointOfPiece, ringOfPiece } from '@/lib/carry/joint-defaults'
 import type { PieceFacts } from '@/lib/carry/carry-check'
 import { formatEmc } from '@/lib/format/figures'
 import { DUST_ALWAYS, dustNote } from '@/lib/wood/dust'
-import { findSpecies } from '@/lib/wood/species'
+import { protectedNote, protectedWords } from '@/lib/wood/protected'
+import { isOilyWood } from '@/lib/wood/site-wood'
 import type { PieceDetail } from './piece'
-import { pieceTitle } from './title'
+import { latinSlugOfPiece, type NamedWood, pieceTitle } from './title'
 
 export type McNow = NonNullable<PieceDetail['mc']>
 
 export interface PieceForWords extends PieceFacts {
+  ownWood?: NamedWood['ownWood']
   roomName: string | null
   isOut: boolean
   archivedAt: Date | null
@@ -60,14 +62,16 @@ export function assumedWords(
 }
 
 /** Dust and allergy notes; the general line stands first and always. */
-export function pieceDust(wood: string | null): PieceDetail['dust'] {
+export function pieceDust(piece: NamedWood): PieceDetail['dust'] {
+  const wood = latinSlugOfPiece(piece)
   const always = { text: DUST_ALWAYS, source: "HSE Woodworking Sheet WIS30 'Toxic woods', general text" }
   const note = wood === null ? undefined : dustNote(wood)
   if (note === undefined) return [always]
   return [always, { text: `${note.kind}: ${note.effect}`, source: `${note.source} (${note.status})` }]
 }
 
-export function pieceCautions(piece: { wood: string | null; finish: string; stage: string }): string[] {
+export function pieceCautions(piece: NamedWood & { finish: string; stage: string }): string[] {
+  const wood = latinSlugOfPiece(piece)
   const cautions: string[] = []
   if (piece.stage === 'box')
     cautions.push(
@@ -77,7 +81,9 @@ export function pieceCautions(piece: { wood: string | null; finish: string; stag
     cautions.push(
       'Oily rags can catch fire by themselves: lay them flat outside, or under water (NFPA, HSE; local rules come first).',
     )
-  if (piece.wood !== null && findSpecies(piece.wood)?.oily === true)
+  if (wood !== null && isOilyWood(wood))
     cautions.push('An oily wood: its own moisture may differ from the curve for all woods.')
+  const listing = wood === null ? undefined : protectedNote(wood)
+  if (listing !== undefined) cautions.push(protectedWords(listing))
   return cautions
 }

@@ -1,7 +1,16 @@
 import { z } from 'zod'
 
 /** What the database says to those who listen: only that something changed, never what it is now. */
-export const liveKindSchema = z.enum(['reading', 'carry', 'piece', 'room', 'sensor', 'notice', 'site'])
+export const liveKindSchema = z.enum([
+  'reading',
+  'carry',
+  'piece',
+  'room',
+  'sensor',
+  'wood',
+  'notice',
+  'site',
+])
 export type LiveKind = z.infer<typeof liveKindSchema>
 
 /** The channel of LISTEN and NOTIFY. */

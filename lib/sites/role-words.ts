@@ -3,7 +3,7 @@ import { type Action, may, type Role } from './permissions'
 /** What a role is for, told to the person who gets it. */
 export const roleDeeds: Readonly<Record<Role, string>> = {
   owner: 'An owner runs the site: members and roles, the place’s settings, and everything that a maker does.',
-  maker: 'A maker turns and finishes: rooms, sensors and their secrets, pieces and carries.',
+  maker: 'A maker turns and finishes: rooms, sensors and their secrets, pieces, woods and carries.',
   hand: 'A hand sees all, plans and starts carries, brings pieces back, moves them, and hears “bring it in”.',
   onlooker: 'An onlooker sees what is shared, rooms by the day only, and changes nothing.',
 }
@@ -14,12 +14,18 @@ const deeds: readonly { words: string; actions: readonly Action[] }[] = [
     words: 'See what is shared; rooms by the day only for onlookers',
     actions: ['now:see', 'rooms:see', 'pieces:see'],
   },
-  { words: 'See members, sensors and notices', actions: ['members:see', 'sensors:see', 'notices:see'] },
+  {
+    words: 'See members, sensors, woods and notices',
+    actions: ['members:see', 'sensors:see', 'woods:see', 'notices:see'],
+  },
   {
     words: 'Plan, start and bring back carries; move pieces; type readings; acknowledge notices',
     actions: ['carries:do', 'pieces:move', 'readings:type', 'notices:acknowledge'],
   },
-  { words: 'Change rooms, sensors and pieces', actions: ['rooms:change', 'sensors:change', 'pieces:change'] },
+  {
+    words: 'Change rooms, sensors, pieces and woods',
+    actions: ['rooms:change', 'sensors:change', 'pieces:change', 'woods:change'],
+  },
   {
     words: 'Change the place, its members and invitations; delete the site',
     actions: ['site:change', 'members:change', 'invitations:change', 'site:delete'],

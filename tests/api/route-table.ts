@@ -199,7 +199,27 @@ export const routeTable: Record<string, Row> = {
   },
   'POST /api/v1/sites/[site]/carries/[carry]/call-off': { action: 'carries:do' },
 
-  'GET /api/v1/sites/[site]/species': { action: 'pieces:see' },
+  'GET /api/v1/sites/[site]/species': {
+    action: 'woods:see',
+    query: () => ({ q: 'walnut burl', away: 'no', sort: 'best', limit: '10' }),
+  },
+  'POST /api/v1/sites/[site]/species': {
+    action: 'woods:change',
+    body: () => ({ commonName: 'Field maple', latinName: 'Acer campestre', densityKgM3: 690 }),
+    status: 201,
+  },
+  'GET /api/v1/sites/[site]/species/[wood]': { action: 'woods:see' },
+  'PATCH /api/v1/sites/[site]/species/[wood]': {
+    action: 'woods:change',
+    body: () => ({ movementClass: 'large', note: 'from the hedge' }),
+    ifMatch: true,
+  },
+  'DELETE /api/v1/sites/[site]/species/[wood]': { action: 'woods:change', ifMatch: true, status: 204 },
+  'POST /api/v1/sites/[site]/species/[wood]/restore': {
+    action: 'woods:change',
+    prepare: ({ db, site: { siteId } }) =>
+      db.updateTable('site_wood').set({ archived_at: new Date() }).where('site_id', '=', siteId).execute(),
+  },
   'GET /api/v1/sites/[site]/pieces': {
     action: 'pieces:see',
     query: ({ room }) => ({ room, sort: '-created' }),
@@ -220,7 +240,7 @@ export const routeTable: Record<string, Row> = {
   'GET /api/v1/sites/[site]/pieces/[piece]': { action: 'pieces:see' },
   'PATCH /api/v1/sites/[site]/pieces/[piece]': {
     action: 'pieces:change',
-    body: ({ room, shop }) => ({ finish: 'wax', keepRoomId: room, fittedRoomId: shop }),
+    body: ({ room, shop, wood }) => ({ finish: 'wax', wood, keepRoomId: room, fittedRoomId: shop }),
     ifMatch: true,
   },
   'DELETE /api/v1/sites/[site]/pieces/[piece]': {

@@ -2,9 +2,11 @@ import { randomBytes } from 'node:crypto'
 import { type Kysely, sql } from 'kysely'
 import { newCode, takeIds } from '@/db/queries/counters'
 import { insertRoom } from '@/db/queries/rooms'
+import { insertSiteWood } from '@/db/queries/site-woods'
 import { insertSite, newTextId } from '@/db/queries/sites'
 import type { Database } from '@/db/schema'
 import type { Role } from '@/lib/sites/permissions'
+import { ownWoodId } from '@/lib/wood/site-wood'
 
 /** The ids, as seen from outside, of one of each thing of a site. */
 export interface Things {
@@ -15,6 +17,8 @@ export interface Things {
   sensor: string
   piece: string
   carry: string
+  /** A wood of the site's own. */
+  wood: string
   notice: string
   /** The membership of a maker. */
   member: string
@@ -65,6 +69,7 @@ export async function makeSite(db: Kysely<Database>, team: Team): Promise<WorldS
     const sensor = await makeSensor(trx, siteId, room.id)
     const piece = await makePiece(trx, siteId, room.id)
     const carry = await makeCarry(trx, siteId, { from: room.id, to: shop.id, piece: piece.id })
+    const wood = await makeWood(trx, siteId)
     const notice = await makeNotice(trx, siteId)
     const invitation = newTextId()
     await trx
@@ -91,6 +96,7 @@ export async function makeSite(db: Kysely<Database>, team: Team): Promise<WorldS
         sensor,
         piece: piece.code,
         carry,
+        wood,
         notice,
         member: others[0]?.id ?? '',
         invitation,
@@ -189,6 +195,20 @@ async function makeCarry(
   return code
 }
 
+async function makeWood(db: Kysely<Database>, siteId: number): Promise<string> {
+  const wood = await insertSiteWood(
+    db,
+    siteId,
+    {
+      ...{ overrides: null, commonName: 'Hedge ash', latinName: 'Fraxinus excelsior' },
+      ...{ movementClass: 'medium', radialPerPct: 0.0018, tangentialPerPct: 0.003, densityKgM3: null },
+      ...{ source: '', note: '' },
+    },
+    new Date(),
+  )
+  return ownWoodId(wood.code)
+}
+
 async function makeNotice(db: Kysely<Database>, siteId: number): Promise<string> {
   const id = await takeIds(db, siteId, 'notice')
   const code = newCode()
@@ -212,7 +232,7 @@ async function makeNotice(db: Kysely<Database>, siteId: number): Promise<string>
 // What requests may change of a site. That somebody was here is noted by reading, so it does not count.
 const tables = [
   ...['room', 'sensor', 'placement', 'piece', 'piece_place', 'carry', 'carry_piece', 'notice', 'notice_seen'],
-  ...['episode', 'delivery', 'change', 'reading', 'room_hour', 'room_day', 'refused'],
+  ...['episode', 'delivery', 'change', 'site_wood', 'reading', 'room_hour', 'room_day', 'refused'],
 ]
 
 /** Everything of a site in one text: equal before and after means that nothing was changed. */

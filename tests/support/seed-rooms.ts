@@ -1,6 +1,6 @@
 import type { Kysely } from 'kysely'
 import { newCode, takeIds } from '@/db/queries/counters'
-import { insertPiece } from '@/db/queries/pieces'
+import { insertPiece } from '@/db/queries/piece-writes'
 import { movePiece } from '@/db/queries/places'
 import { insertReadings } from '@/db/queries/readings'
 import { insertRoom } from '@/db/queries/rooms'

@@ -6,6 +6,10 @@ describe('what a change has fetched again', () => {
     expect(areasOf.reading).toEqual(expect.arrayContaining(['now', 'rooms', 'carries', 'sensors']))
   })
 
+  it('fetches verdicts again when the figures of a wood change', () => {
+    expect(areasOf.wood).toEqual(expect.arrayContaining(['woods', 'now', 'carries', 'pieces']))
+  })
+
   it('knows its own kinds and nothing that an object happens to have', () => {
     expect(isLiveKind('carry')).toBe(true)
     expect(isLiveKind('toString')).toBe(false)

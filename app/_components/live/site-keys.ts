@@ -1,12 +1,12 @@
 /** Parts of a site that pages read; the first words of their query keys. */
 export type Area =
-  'frame' | 'now' | 'rooms' | 'sensors' | 'pieces' | 'carries' | 'notices' | 'members' | 'refused'
+  'frame' | 'now' | 'rooms' | 'sensors' | 'pieces' | 'woods' | 'carries' | 'notices' | 'members' | 'refused'
 
 /** `['site', site, area, …]`: what a query is filed under, so that a change can have it fetched again. */
 export const siteKey = (site: string, area: Area, ...rest: readonly unknown[]) =>
   ['site', site, area, ...rest] as const
 
-export type LiveKind = 'reading' | 'carry' | 'piece' | 'room' | 'sensor' | 'notice' | 'site'
+export type LiveKind = 'reading' | 'carry' | 'piece' | 'room' | 'sensor' | 'wood' | 'notice' | 'site'
 
 /** Which areas a change of each kind may show in. */
 export const areasOf: Record<LiveKind, readonly Area[] | 'all'> = {
@@ -15,6 +15,8 @@ export const areasOf: Record<LiveKind, readonly Area[] | 'all'> = {
   piece: ['now', 'carries', 'pieces', 'rooms', 'frame'],
   room: ['now', 'rooms', 'sensors', 'pieces', 'carries', 'frame'],
   sensor: ['now', 'rooms', 'sensors', 'refused', 'frame'],
+  // Other figures for a wood give other verdicts.
+  wood: ['woods', 'now', 'carries', 'pieces'],
   notice: ['now', 'notices', 'frame'],
   site: 'all',
 }
