@@ -51,7 +51,7 @@ export function SentenceInput({
       {unit ? (
         <span
           aria-hidden="true"
-          className="flex min-h-11 items-center border-b-2 border-heart bg-wash pr-2 font-semibold sm:min-h-9"
+          className="flex min-h-11 items-center border-b-2 border-heart bg-wash pr-2 leading-6 font-semibold sm:min-h-9"
         >
           {unit}
         </span>

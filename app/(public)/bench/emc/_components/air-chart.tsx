@@ -29,8 +29,11 @@ type AirChartProps = {
   onStep: (warmer: number, damper: number) => void
 }
 
-const HEIGHT = 340
-const PLOT = { top: 12, bottom: 296, left: 40, right: 68 }
+const HEIGHT = 388
+const PLOT = { top: 12, bottom: 360, left: 40, right: 68 }
+
+/** Server and browser differ in the last digits of an exponential, and a figure must not. */
+const tenths = (px: number) => Math.round(px * 10) / 10
 
 /** The air as a chart: temperature to the right, humidity upwards, and lines where wood ends at one moisture content. */
 export function AirChart({ air, words, warmed, units, onPlace, onStep }: AirChartProps) {
@@ -43,10 +46,11 @@ export function AirChart({ air, words, warmed, units, onPlace, onStep }: AirChar
     [low, high],
   )
   const right = width - PLOT.right
-  const x = (temperatureC: number) => PLOT.left + ((temperatureC - low) / (high - low)) * (right - PLOT.left)
-  const y = (humidityPct: number) => PLOT.bottom - (humidityPct / 100) * (PLOT.bottom - PLOT.top)
+  const x = (temperatureC: number) =>
+    tenths(PLOT.left + ((temperatureC - low) / (high - low)) * (right - PLOT.left))
+  const y = (humidityPct: number) => tenths(PLOT.bottom - (humidityPct / 100) * (PLOT.bottom - PLOT.top))
   const path = (points: readonly AirPoint[]) =>
-    points.map((point) => `${x(point.temperatureC).toFixed(1)} ${y(point.humidityPct).toFixed(1)}`).join('L')
+    points.map((point) => `${String(x(point.temperatureC))} ${String(y(point.humidityPct))}`).join('L')
   const airAt = (event: { clientX: number; clientY: number }): AirPoint | undefined => {
     const box = svg.current?.getBoundingClientRect()
     if (!box || box.width === 0) return undefined
@@ -102,13 +106,13 @@ export function AirChart({ air, words, warmed, units, onPlace, onStep }: AirChar
             ))}
             {ticks.map(({ temperatureC, text }) => (
               <g key={text}>
-                <path d={`M${x(temperatureC).toFixed(1)} ${String(PLOT.bottom)}v6`} stroke="var(--edge)" />
+                <path d={`M${String(x(temperatureC))} ${String(PLOT.bottom)}v6`} stroke="var(--edge)" />
                 <text x={x(temperatureC)} y={PLOT.bottom + 22} textAnchor="middle" fill="var(--ink-soft)">
                   {text}
                 </text>
               </g>
             ))}
-            <text x={right} y={HEIGHT - 4} textAnchor="end" fill="var(--ink-soft)">
+            <text x={right + 16} y={PLOT.bottom + 22} fill="var(--ink-soft)">
               {units === 'metric' ? '°C' : '°F'}
             </text>
             <text className="halo" x={PLOT.left + 4} y={PLOT.top + 18} fill="var(--ink-soft)">

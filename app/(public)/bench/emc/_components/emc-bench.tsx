@@ -8,7 +8,6 @@ import { FlowingSentence } from '@/app/sites/_components/flowing-sentence'
 import { emcAnswer } from '@/lib/bench/emc'
 import { emcFlagWords, emcSentence, humiditySentence } from '@/lib/bench/emc-words'
 import { formatEmc, formatHumidity, formatTemperature } from '@/lib/format/figures'
-import { ApiTwin } from '../../_components/api-twin'
 import { BenchFoot } from '../../_components/bench-foot'
 import { BenchSentence } from '../../_components/bench-sentence'
 import { Facts } from '../../_components/facts'
@@ -18,7 +17,7 @@ import { useLastGood } from '../../_components/use-last-good'
 import { useUnits } from '../../_components/use-units'
 import { AirChart } from './air-chart'
 import type { AirPoint } from './air-chart-model'
-import { airOf, type BenchAir, type EmcField, emcFields, factsOf, within } from './emc-model'
+import { airOf, type EmcField, emcFields, factsOf, twinsOf, within } from './emc-model'
 
 const asks = ['emc', 'humidity'] as const
 const askParser = parseAsStringLiteral(asks).withDefault('emc')
@@ -121,26 +120,7 @@ export function EmcBench() {
           </Sheet>
         </div>
       )}
-      <BenchFoot method="emc">
-        {shown === undefined || isOld ? null : <Twins air={shown} isEmc={isEmc} />}
-      </BenchFoot>
-    </>
-  )
-}
-
-function Twins({ air, isEmc }: { air: BenchAir; isEmc: boolean }) {
-  const { temperatureC, emcPct, toC } = air
-  // Found from a moisture content, it has more decimals than anybody wants to read.
-  const humidityPct = Math.round(air.humidityPct * 100) / 100
-  return (
-    <>
-      {isEmc ? (
-        <ApiTwin path="/bench/emc" query={{ temperatureC, humidityPct }} />
-      ) : (
-        <ApiTwin path="/bench/humidity" query={{ temperatureC, emcPct }} />
-      )}
-      <ApiTwin path="/bench/warming" query={{ fromC: temperatureC, fromHumidityPct: humidityPct, toC }} />
-      <ApiTwin path="/bench/air" query={{ temperatureC, humidityPct }} />
+      <BenchFoot method="emc" twins={shown === undefined || isOld ? [] : twinsOf(shown, isEmc)} />
     </>
   )
 }

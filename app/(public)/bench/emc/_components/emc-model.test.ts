@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import { emcQuerySchema, humidityQuerySchema } from '@/lib/bench/emc'
-import { warmingQuerySchema } from '@/lib/bench/air'
-import { airOf, emcFields, factsOf, within } from './emc-model'
+import { airQuerySchema, warmingQuerySchema } from '@/lib/bench/air'
+import { airOf, emcFields, factsOf, twinsOf, within } from './emc-model'
 
 const values = { temperatureC: 8, humidityPct: 85, emcPct: 9, toC: 15 }
 const bare = (text: unknown) => String(text).replaceAll('\u00a0', ' ')
@@ -59,5 +59,22 @@ describe('the EMC bench', () => {
       [max + 0.01, false],
     ] as const)
       expect(schema.safeParse({ ...query, [key]: String(value) }).success).toBe(isGood)
+  })
+
+  it('names queries that the API takes', () => {
+    const schemas = {
+      '/bench/emc': emcQuerySchema,
+      '/bench/humidity': humidityQuerySchema,
+      '/bench/warming': warmingQuerySchema,
+      '/bench/air': airQuerySchema,
+    }
+    for (const isEmc of [true, false]) {
+      const air = airOf(values, isEmc)
+      if (!air.ok) throw new Error(air.error)
+      for (const { path, query } of twinsOf(air.value, isEmc)) {
+        const asked = Object.fromEntries(Object.entries(query).map(([key, value]) => [key, String(value)]))
+        expect(schemas[path as keyof typeof schemas].safeParse(asked).success).toBe(true)
+      }
+    }
   })
 })

@@ -6,6 +6,7 @@ import { formatEmc, formatHumidity, formatTemperature } from '@/lib/format/figur
 import { err, ok, type Result } from '@/lib/result'
 import type { UnitSystem } from '@/lib/sites/site'
 import type { EmcFlag } from '@/lib/wood/emc'
+import type { Twin } from '../../_components/api-twin'
 import type { Fact } from '../../_components/facts'
 
 /** The page opens with a cool, damp shop, and what warming it would do. */
@@ -93,3 +94,17 @@ function dewPointFact({ more }: BenchAir, units: UnitSystem): Fact {
 
 /** Within a field's range, for a point that was dragged or stepped past its end. */
 export const within = ({ min, max }: Field, value: number): number => Math.min(max, Math.max(min, value))
+
+/** The questions of this page as the API takes them. */
+export function twinsOf(air: BenchAir, isEmc: boolean): Twin[] {
+  const { temperatureC, emcPct, toC } = air
+  // Found from a moisture content, it has more decimals than anybody wants to read.
+  const humidityPct = Math.round(air.humidityPct * 100) / 100
+  return [
+    isEmc
+      ? { path: '/bench/emc', query: { temperatureC, humidityPct } }
+      : { path: '/bench/humidity', query: { temperatureC, emcPct } },
+    { path: '/bench/warming', query: { fromC: temperatureC, fromHumidityPct: humidityPct, toC } },
+    { path: '/bench/air', query: { temperatureC, humidityPct } },
+  ]
+}
