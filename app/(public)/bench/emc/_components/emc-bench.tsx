@@ -30,7 +30,7 @@ export function EmcBench() {
   const form = useFields<EmcField>(emcFields, [isEmc ? 'emcPct' : 'humidityPct'])
   const asked = form.values === undefined ? undefined : airOf(form.values, isEmc)
   const key = JSON.stringify([form.texts, ask])
-  const { shown, isOld } = useLastGood(key, asked?.ok === true ? asked.value : undefined)
+  const { shown, isOld } = useLastGood(key, () => (asked?.ok === true ? asked.value : undefined))
   const refused = asked?.ok === false ? [asked.error] : []
 
   const place = ({ temperatureC, humidityPct }: AirPoint) => {

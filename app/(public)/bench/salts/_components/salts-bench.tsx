@@ -23,8 +23,7 @@ import {
 /** What wet salts hold in a sealed box at the temperature asked. */
 export function SaltsBench() {
   const form = useFields<keyof typeof saltsFields>(saltsFields)
-  const { shown, isOld } = useLastGood(
-    form.texts.temperatureC,
+  const { shown, isOld } = useLastGood(form.texts.temperatureC, () =>
     form.values === undefined ? undefined : saltItems(form.values.temperatureC),
   )
   return (
