@@ -15,7 +15,7 @@ import {
   ownWoodCode,
 } from '@/lib/wood/site-wood'
 import { SPECIES } from '@/lib/wood/species'
-import { type Wood, woodView } from '@/lib/wood/wood'
+import { type Wood, type WoodChoice, woodChoice, woodView } from '@/lib/wood/wood'
 import { decodeCursor, listQueryShape, type Page, pageOf } from './list'
 import { failField, notThere, type Outcome } from './problem'
 
@@ -32,6 +32,18 @@ const cursorSchema = z.strictObject({ slug: z.string().max(60) })
 /** Every wood that can be chosen at a site: the table's, with the site's figures where it has them, and its own. */
 export async function offeredWoods(db: Kysely<Database>, siteId: number): Promise<Wood[]> {
   return woodsOf(await listSiteWoods(db, siteId), false)
+}
+
+/** The same as the field for a piece's wood needs them, with the one that the piece has, even when it was put away. */
+export async function woodChoices(
+  db: Kysely<Database>,
+  siteId: number,
+  current: string | null = null,
+): Promise<WoodChoice[]> {
+  const rows = await listSiteWoods(db, siteId)
+  const offered = woodsOf(rows, false)
+  const own = offered.some((wood) => wood.slug === current) ? undefined : resolveWood(current, rows)
+  return [...offered, ...(own === undefined ? [] : [woodView(own, undefined)])].map(woodChoice)
 }
 
 function woodsOf(rows: readonly SiteWood[], away: boolean): Wood[] {

@@ -1,5 +1,5 @@
 import { z } from 'zod'
-import { movementOfWood } from './movement-class'
+import { movementOfWood, type WoodFigures } from './movement-class'
 import { hazardsOfWood, movementClassSchema, ownWoodCode, type ResolvedWood } from './site-wood'
 
 /** How the figures of a wood were come by, in words for a list. */
@@ -64,6 +64,19 @@ export const woodSchema = z.object({
   version: z.int(),
 })
 export type Wood = z.infer<typeof woodSchema>
+
+/** As much of a wood as a field for choosing one shows, and as `movementOfWood` needs. */
+export type WoodChoice = WoodFigures &
+  Pick<Wood, 'slug' | 'commonName' | 'latinName' | 'isOwn' | 'dust' | 'protection' | 'oily'>
+
+export function woodChoice(wood: Wood): WoodChoice {
+  const { slug, commonName, latinName, isOwn, dust, protection, oily } = wood
+  const { radialPerPct, tangentialPerPct, densityKgM3, movementClass, status } = wood
+  return {
+    ...{ slug, commonName, latinName, isOwn, dust, protection, oily },
+    ...{ radialPerPct, tangentialPerPct, densityKgM3, movementClass, status },
+  }
+}
 
 /** A resolved wood as shown, with its fallback named and its cautions beside it. */
 export function woodView(

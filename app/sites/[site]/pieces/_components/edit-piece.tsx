@@ -13,16 +13,22 @@ import { Sheet } from '@/app/_components/ui/sheet'
 import { useAction } from '@/app/_components/use-action'
 import { type PieceChange, pieceChangeSchema, type PieceDetail } from '@/lib/pieces/piece'
 import type { Reader } from '@/lib/sites/reader'
+import type { WoodChoice } from '@/lib/wood/wood'
 import { changeOf, factsOf } from './edit-facts'
 import { FitFields } from './fit-fields'
 import type { RoomChoice } from './first-piece'
 import { RestFields } from './rest-fields'
 import { WoodFields } from './wood-fields'
 
-type EditPieceProps = { reader: Reader; piece: PieceDetail; rooms: readonly RoomChoice[] }
+type EditPieceProps = {
+  reader: Reader
+  piece: PieceDetail
+  rooms: readonly RoomChoice[]
+  woods: readonly WoodChoice[]
+}
 
 /** Every fact of a piece. Only what was changed is sent, against the version that was read. */
-export function EditPiece({ reader, piece, rooms }: EditPieceProps) {
+export function EditPiece({ reader, piece, rooms, woods }: EditPieceProps) {
   const router = useRouter()
   const back = `/sites/${reader.site}/pieces/${piece.id}`
   const form = useForm<PieceChange>({
@@ -89,7 +95,7 @@ export function EditPiece({ reader, piece, rooms }: EditPieceProps) {
           </Callout>
         ) : null}
         <Sheet title="What it is" id="what">
-          <WoodFields {...fields} />
+          <WoodFields {...fields} woods={woods} />
         </Sheet>
         <Sheet title="Its joint and fit" id="joint">
           <FitFields {...fields} />

@@ -19,16 +19,18 @@ import { fitGradeSchema, newPieceSchema, type NewPiece, type Piece, stageSchema 
 import { fitGradeWords, stageWords } from '@/lib/pieces/wording'
 import { may } from '@/lib/sites/permissions'
 import type { Reader } from '@/lib/sites/reader'
-import { DustNotes } from './dust-notes'
+import type { WoodChoice } from '@/lib/wood/wood'
 import { FirstAnswerLine, type RoomWithAir } from './first-answer-line'
 import { LengthInput, lengthError } from './length-input'
-import { WoodSelect } from './wood-select'
+import { WoodCare } from './wood-care'
+import { WoodField } from './wood-field'
 
 export type RoomChoice = { id: string; name: string; mark: number }
 
 type FirstPieceProps = {
   reader: Reader
   rooms: readonly RoomWithAir[]
+  woods: readonly WoodChoice[]
   /** The next number in the maker's own row, offered and not imposed. */
   number: string
   roomId?: string
@@ -38,13 +40,14 @@ const grades = fitGradeSchema.options.map((value) => ({ value, label: fitGradeWo
 const stages = stageSchema.options.map((value) => ({ value, label: stageWords[value] })).reverse()
 
 /** Five answers make a piece; all else is taken as usual, shown as assumed, and can be put right later. */
-export function FirstPiece({ reader, rooms, number, roomId }: FirstPieceProps) {
+export function FirstPiece({ reader, rooms, woods, number, roomId }: FirstPieceProps) {
   const router = useRouter()
   const form = useForm({
     resolver: zodResolver(newPieceSchema),
     defaultValues: {
       number,
       wood: null as string | null,
+      woodKind: 'plain' as NewPiece['woodKind'],
       jointDiameterMm: null as number | null,
       fitGrade: null as NewPiece['fitGrade'],
       roomId: roomId ?? rooms[0]?.id ?? '',
@@ -53,6 +56,8 @@ export function FirstPiece({ reader, rooms, number, roomId }: FirstPieceProps) {
   })
   const values = useWatch({ control: form.control })
   const isBox = values.stage === 'box'
+  // Wild grain moves its own way, and stabilised wood isn't worked out to move: no time out is told for either.
+  const isReckoned = values.woodKind !== 'wild' && values.woodKind !== 'stabilised'
   const keep = useAction<{ body: NewPiece; isGoingOut: boolean }, Piece>({
     run: ({ body }, idempotencyKey) =>
       apiFetch(`/sites/${reader.site}/pieces`, { method: 'POST', body, idempotencyKey }),
@@ -93,19 +98,21 @@ export function FirstPiece({ reader, rooms, number, roomId }: FirstPieceProps) {
           <Field label="Its number" error={errorOf('number')} hint="Pencil it inside the base.">
             <Input autoComplete="off" maxLength={12} {...form.register('number')} />
           </Field>
-          <Field
+          <WoodField
             label="Its wood"
             error={errorOf('wood')}
-            hint="Not sure? Say so: the doubt gets wider, that’s all."
-          >
-            <WoodSelect
-              value={values.wood ?? null}
-              onChange={(wood) => {
-                form.setValue('wood', wood, { shouldDirty: true })
-              }}
-            />
-          </Field>
-          {values.wood ? <DustNotes wood={values.wood} /> : null}
+            hint="Common or Latin name. Not sure? Say so: the doubt gets wider, that’s all."
+            woods={woods}
+            value={values.wood ?? null}
+            onChange={(wood) => {
+              form.setValue('wood', wood, { shouldDirty: true })
+            }}
+            kind={values.woodKind ?? 'plain'}
+            onKindChange={(kind) => {
+              form.setValue('woodKind', kind, { shouldDirty: true })
+            }}
+          />
+          {values.wood ? <WoodCare wood={woods.find((wood) => wood.slug === values.wood)} /> : null}
           <Field
             label={isBox ? 'Joint, outside of the spigot, straight across' : 'Diameter, straight across'}
             error={lengthError(values.jointDiameterMm, errorOf('jointDiameterMm'))}
@@ -149,7 +156,7 @@ export function FirstPiece({ reader, rooms, number, roomId }: FirstPieceProps) {
           />
         </div>
       </Sheet>
-      {isBox ? (
+      {isBox && isReckoned ? (
         <div className="max-w-[40rem]">
           <FirstAnswerLine
             answers={{

@@ -4,14 +4,15 @@ import { Controller, useFormContext, useWatch } from 'react-hook-form'
 import { Field } from '@/app/_components/ui/field'
 import { Input } from '@/app/_components/ui/input'
 import type { PieceChange } from '@/lib/pieces/piece'
+import type { WoodChoice } from '@/lib/wood/wood'
 import { grainWords, stageWords, woodKindWords } from '@/lib/pieces/wording'
-import { DustNotes } from './dust-notes'
 import { type EditFieldsProps, LengthField, ListField } from './edit-fields'
-import { WoodSelect } from './wood-select'
+import { WoodCare } from './wood-care'
+import { WoodField } from './wood-field'
 
-export function WoodFields({ reader, problem }: EditFieldsProps) {
-  const { control, register, formState } = useFormContext<PieceChange>()
-  const wood = useWatch({ control, name: 'wood' })
+export function WoodFields({ reader, problem, woods }: EditFieldsProps & { woods: readonly WoodChoice[] }) {
+  const { control, register, formState, setValue } = useFormContext<PieceChange>()
+  const [wood, woodKind] = useWatch({ control, name: ['wood', 'woodKind'] })
   return (
     <div className="grid gap-5 md:grid-cols-2">
       <Field label="Number" error={formState.errors.number?.message ?? problem?.errorOf('number')}>
@@ -22,9 +23,18 @@ export function WoodFields({ reader, problem }: EditFieldsProps) {
         control={control}
         name="wood"
         render={({ field, fieldState }) => (
-          <Field label="Wood" error={fieldState.error?.message ?? problem?.errorOf('wood')}>
-            <WoodSelect value={field.value ?? null} onChange={field.onChange} onBlur={field.onBlur} />
-          </Field>
+          <WoodField
+            label="Wood"
+            error={fieldState.error?.message ?? problem?.errorOf('wood')}
+            woods={woods}
+            value={field.value ?? null}
+            onChange={field.onChange}
+            onBlur={field.onBlur}
+            kind={woodKind ?? 'plain'}
+            onKindChange={(kind) => {
+              setValue('woodKind', kind, { shouldDirty: true })
+            }}
+          />
         )}
       />
       <ListField
@@ -36,7 +46,7 @@ export function WoodFields({ reader, problem }: EditFieldsProps) {
       <ListField name="grain" label="Grain" options={grainWords} />
       <LengthField name="bodyWallMm" label="Body wall" problem={problem} reader={reader} />
       <div className="md:col-span-2">
-        <DustNotes wood={wood ?? null} />
+        <WoodCare wood={woods.find((one) => one.slug === wood)} />
       </div>
     </div>
   )

@@ -3,6 +3,7 @@ import { database } from '@/app/_server/database'
 import { listPieces } from '@/app/_server/pieces'
 import { listRooms } from '@/app/_server/rooms'
 import { requireMember } from '@/app/_server/session'
+import { woodChoices } from '@/app/_server/woods'
 import { nextNumber } from '@/lib/pieces/next-number'
 import type { RoomAir } from '@/lib/rooms/room'
 import { readerOf } from '@/lib/sites/reader'
@@ -20,8 +21,9 @@ export default async function NewPiecePage({ params, searchParams }: Props) {
   const member = await requireMember((await params).site, 'pieces:change')
   const now = new Date()
   const db = database()
-  const [rooms, latest] = await Promise.all([
+  const [rooms, woods, latest] = await Promise.all([
     listRooms(db, member, now),
+    woodChoices(db, member.siteId),
     listPieces(db, member, { sort: '-number', limit: 1 }),
   ])
   const { room } = await searchParams
@@ -29,6 +31,7 @@ export default async function NewPiecePage({ params, searchParams }: Props) {
     <FirstPiece
       reader={readerOf(member, now)}
       rooms={rooms.map(({ id, name, mark, kind, air }) => ({ id, name, mark, kind, air: freshAir(air) }))}
+      woods={woods}
       number={nextNumber(latest.ok ? latest.value.items[0]?.number : undefined)}
       roomId={rooms.find(({ id }) => id === room)?.id}
     />

@@ -4,6 +4,7 @@ import { database } from '@/app/_server/database'
 import { getPiece } from '@/app/_server/pieces'
 import { listRooms } from '@/app/_server/rooms'
 import { requireMember } from '@/app/_server/session'
+import { woodChoices } from '@/app/_server/woods'
 import { readerOf } from '@/lib/sites/reader'
 import { EditPiece } from '../../_components/edit-piece'
 
@@ -24,6 +25,7 @@ export default async function EditPiecePage({ params }: Props) {
       key={piece.value.version}
       reader={readerOf(member, now)}
       piece={piece.value}
+      woods={await woodChoices(db, member.siteId, piece.value.wood)}
       rooms={rooms.map(({ id, name, mark }) => ({ id, name, mark }))}
     />
   )
