@@ -1,5 +1,13 @@
 import { z } from 'zod'
-import { allowedChange, clearanceExactMm, clearanceFirstOrderMm, type Joint } from '@/lib/fit/lid-fit'
+import { feelOf, feelWords, quarterTurnWords } from '@/lib/fit/feel'
+import { gradeCourses, type GradeCourse } from '@/lib/fit/grade-course'
+import {
+  allowedChange,
+  allowedChangeAnyAngle,
+  clearanceExactMm,
+  clearanceFirstOrderMm,
+  type Joint,
+} from '@/lib/fit/lid-fit'
 import { ovalOfJoint, type InPlaneMovement } from '@/lib/fit/ovality'
 import { formatFineLength, formatPoints } from '@/lib/format/figures'
 import { woodMovement } from '@/lib/wood/movement-class'
@@ -42,6 +50,14 @@ export type FitAnswer = {
   outOfRoundMm: number
   limited: boolean
   allowedMcChangePct?: number
+  /** The same however the lid is turned. */
+  limitedAnyAngle: boolean
+  allowedAnyAngleMcChangePct?: number
+  /** How it feels there, and by the quarter turn: "easy, tight, easy, tight: ...". */
+  feel: string
+  quarterTurn: string
+  /** Grade by grade, for a joint of one wood whose parts change alike. */
+  grades?: readonly GradeCourse[]
   words: string
   assumed: readonly string[]
 }
@@ -73,13 +89,20 @@ export function fitAnswer(query: FitQuery): FitAnswer {
     socket: { ...socketMovement, mcChangePct: query.lidMcChangePct ?? query.mcChangePct },
   }
   const clearanceMm = clearanceExactMm(joint, query.angleDeg)
-  const allowed = allowedChange(joint, query.angleDeg, query.keepMm ?? 0)
+  const keepMm = query.keepMm ?? 0
+  const allowed = allowedChange(joint, query.angleDeg, keepMm)
+  const allowedAnyAngle = allowedChangeAnyAngle(joint, keepMm)
   return {
     clearanceMm,
     clearanceFirstOrderMm: clearanceFirstOrderMm(joint, query.angleDeg),
     ...ovalOfJoint(joint.diameterMm, movement, query.mcChangePct),
     limited: allowed !== undefined,
     ...(allowed === undefined ? {} : { allowedMcChangePct: allowed }),
+    limitedAnyAngle: allowedAnyAngle !== undefined,
+    ...(allowedAnyAngle === undefined ? {} : { allowedAnyAngleMcChangePct: allowedAnyAngle }),
+    feel: feelWords[feelOf(clearanceMm)],
+    quarterTurn: quarterTurnWords(clearanceExactMm(joint, 0), clearanceExactMm(joint, 90)),
+    ...(socketMovement === movement ? { grades: gradeCourses(query.diameterMm, movement) } : {}),
     words: fitWords(clearanceMm, query.angleDeg, allowed),
     assumed: movement.assumed,
   }

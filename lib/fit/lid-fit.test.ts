@@ -4,6 +4,8 @@ import { z } from 'zod'
 import { referenceJson } from '@/tests/support/reference'
 import { LONGITUDINAL_PER_PCT } from '@/lib/wood/movement'
 import {
+  allowedChange,
+  allowedChangeAnyAngle,
   allowedMcChangePct,
   clearanceExactMm,
   clearanceFirstOrderMm,
@@ -210,6 +212,32 @@ describe('lid fit, properties', () => {
     expect(allowedMcChangePct(60, 0.2, maple, 0)).toBeUndefined()
     expect(allowedMcChangePct(60, 0.2, maple, 180)).toBeUndefined()
     expect(allowedMcChangePct(60, 0.2, maple, 90, 0.3)).toBe(0)
+  })
+
+  it('what is allowed however it is turned is allowed at every angle, and no more would be', () => {
+    fc.assert(
+      fc.property(diameter, clearance, wood, wood, change, change, (d, c, base, lid, m, n) => {
+        const case_: Joint = {
+          diameterMm: d,
+          clearanceMm: c,
+          spigot: { ...base, mcChangePct: m },
+          socket: { ...lid, mcChangePct: n },
+        }
+        const any = allowedChangeAnyAngle(case_, 0) ?? Infinity
+        const each = Array.from({ length: 19 }, (_, n) => allowedChange(case_, n * 5, 0) ?? Infinity)
+        expect(any).toBeLessThanOrEqual(Math.min(...each) + 1e-9)
+        expect(each).toContain(any)
+      }),
+    )
+    // Derived example: hard maple, 60 mm, 0.2 mm, any angle: 1.77 % MC.
+    expect(allowedChangeAnyAngle(jointOfOneWood(60, 0.2, 0.00353, 0.00165, 4), 0)).toBeCloseTo(1.773, 3)
+    expect(() => allowedChangeAnyAngle(jointOfOneWood(60, 0.2, 0.00353, 0.00165, 4), NaN)).toThrow(/keepMm/)
+  })
+
+  it('a change too small to have a proportion counts as none', () => {
+    const case_ = jointOfOneWood(60, 0.2, 0.00353, 0.00165, 0)
+    const hardly: Joint = { ...case_, socket: { ...case_.socket, mcChangePct: -5e-324 } }
+    expect(allowedChange(hardly, 90, 0)).toBe(allowedChange(case_, 90, 0))
   })
 
   it('parts that changed oppositely still have a clearance at every angle', () => {

@@ -171,6 +171,8 @@ export function allowedMcChangePct(
   return Math.max(0, clearanceMm - keepMm) / lossMmPerPct
 }
 
+/** A change smaller than this is none, % MC: its proportion would be rounding. */
+const NO_CHANGE_PCT = 1e-9
 /** Losses smaller than this for each % MC are rounding, mm. */
 const NO_LOSS_MM = 1e-12
 
@@ -196,7 +198,7 @@ export function allowedChange(joint: Joint, angleDeg: number, keepMm: number): n
   assertInRange('keepMm', keepMm, -CLEARANCE_MAX_MM, CLEARANCE_MAX_MM)
   const most = Math.max(Math.abs(joint.spigot.mcChangePct), Math.abs(joint.socket.mcChangePct))
   const lossesMm =
-    most > 0
+    most > NO_CHANGE_PCT
       ? [joint.clearanceMm - clearanceFirstOrderMm(scaled(joint, 1 / most), angleDeg)]
       : [1, -1].map((mcChangePct) => {
           const unit = {
@@ -209,4 +211,19 @@ export function allowedChange(joint: Joint, angleDeg: number, keepMm: number): n
   const lossMmPerPct = Math.max(...lossesMm)
   if (lossMmPerPct < NO_LOSS_MM) return undefined
   return Math.max(0, joint.clearanceMm - keepMm) / lossMmPerPct
+}
+
+/**
+ * The largest change at which a clearance is left however the lid is turned.
+ * @param joint as for `allowedChange`
+ * @param keepMm clearance to be left, mm
+ * @returns as for `allowedChange`; undefined where nothing is lost at any angle
+ * @throws RangeError for an input out of range or NaN
+ *
+ * What is lost grows or shrinks steadily from the grain lined up to a quarter turn, so the worst is at one of the two.
+ * Source: derived, `clearanceFirstOrderMm`.
+ */
+export function allowedChangeAnyAngle(joint: Joint, keepMm: number): number | undefined {
+  const limits = [0, 90].flatMap((angleDeg) => allowedChange(joint, angleDeg, keepMm) ?? [])
+  return limits.length === 0 ? undefined : Math.min(...limits)
 }
