@@ -24,6 +24,7 @@ export function FieldWord<Key extends string>({
       label={label}
       unit={unitOf(kind, units)}
       inputMode="decimal"
+      className="pr-1.5 text-right"
       value={shown}
       aria-invalid={refusals[name] === undefined ? undefined : true}
       onChange={(event) => {
