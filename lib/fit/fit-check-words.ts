@@ -1,10 +1,18 @@
-import { formatCount, formatEmc, formatEmcFigure, formatFineLength, formatPoints } from '@/lib/format/figures'
+import {
+  formatCount,
+  formatEmc,
+  formatEmcFigure,
+  formatFineLength,
+  formatLength,
+  formatPoints,
+} from '@/lib/format/figures'
 import { say, strong, type TextPart } from '@/lib/format/sentence'
 import { noTellingDifferencePct } from '@/lib/notices/policy'
 import type { FitGrade } from '@/lib/pieces/piece'
 import type { UnitSystem } from '@/lib/sites/site'
 import type { FitCheck, FitCheckInput, TargetYear } from './fit-check'
 import { GRADE_FIGURES } from './grades'
+import { formatWorkedLength } from './worked-figures'
 
 export type FitCheckWords = {
   /** Verb first; the strong part is the verdict. */
@@ -115,7 +123,7 @@ function headlineOf(
 function secondOf(input: FitCheckInput, check: FitCheck & { kind: 'verdict' }, units: UnitSystem): string {
   const loss = formatFineLength(check.lossMm, units)
   const high = formatFineLength(check.lossHighMm, units)
-  const allowed = formatHundredth(check.allowanceMm, units)
+  const allowed = formatWorkedLength(check.allowanceMm, units)
   const oneInTen = high === loss ? '' : `, 1 in 10 like it ${high} or more`
   const takes = `Cut now, the joint may lose about ${loss} at a quarter turn in a year${oneInTen}; ${article(input.grade).toLowerCase()} lid may lose ${allowed}.`
   if (check.verdict !== 'rest' || check.cutBetween === undefined || check.reason === 'doubt') return takes
@@ -125,11 +133,10 @@ function secondOf(input: FitCheckInput, check: FitCheck & { kind: 'verdict' }, u
 
 function restsOn({ mcPct, mcDoubtPct, target, diameterMm }: FitCheckInput, units: UnitSystem): string[] {
   const name = target.basis === 'home' ? "The home's" : "The keep room's"
-  const joint = units === 'metric' ? `${String(diameterMm)} mm` : `${(diameterMm / 25.4).toFixed(2)} in`
   return [
     `${name} year: ${formatEmcFigure(target.lowMcPct)} to ${formatEmc(target.highMcPct)}, its middle ${formatEmcFigure(target.middleMcPct)}.`,
     `The piece now: ${formatEmc(mcPct)}, 8 in 10 from ${formatEmcFigure(Math.max(0, mcPct - mcDoubtPct))} to ${formatEmcFigure(mcPct + mcDoubtPct)}.`,
-    `A joint of ${joint}, tried at every turn.`,
+    `A joint of ${formatLength(diameterMm, units)}, tried at every turn.`,
   ]
 }
 
@@ -141,9 +148,5 @@ function gradeFigures(grade: FitGrade, units: UnitSystem): string {
   const has = clearanceMm < 0 ? `${clearance} too little` : `${clearance} of clearance`
   return allowanceMm === undefined
     ? has
-    : `${has} and to keep its fit until ${formatHundredth(allowanceMm, units)} of it is lost (a guess)`
+    : `${has} and to keep its fit until ${formatWorkedLength(allowanceMm, units)} of it is lost (a guess)`
 }
-
-/** Allowances are finer than a fit can be cut. */
-const formatHundredth = (lengthMm: number, units: UnitSystem): string =>
-  units === 'metric' ? `${lengthMm.toFixed(2)} mm` : `${(lengthMm / 25.4).toFixed(3)} in`

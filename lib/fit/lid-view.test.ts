@@ -5,6 +5,7 @@ import { clearanceCurve, clearanceWithDoubt, type DoubtfulJoint } from './cleara
 import { clearanceExactMm, closestExact } from './lid-fit'
 import { drawnShare } from './lid-outline'
 import { lidShape, lidTurned } from './lid-view'
+import { workedFigures } from './worked-figures'
 
 const MAPLE = { tangentialPerPct: 0.00353, radialPerPct: 0.00165 }
 const sure = { mcChangeDoubtPct: 0, movementDoubt: 0 }
@@ -205,5 +206,17 @@ describe('lid view', () => {
     })
     expect(lidTurned(shape, 60).words.spoken).toBe('turned 60 degrees, may bind')
     expect(lidTurned(shape, 1).words.spoken).toBe('turned 1 degree, easy')
+  })
+
+  it('works out sizes to 0.01 mm, with doubt where there is some', () => {
+    const shape = lidShape(mapleBox(4))
+    const figures = new Map(workedFigures(shape, lidTurned(shape, 90)).map(({ of, value }) => [of, value]))
+    // Axes of the derived example: 60.8472 and 60.396 mm, 0.4512 mm out of round.
+    expect(figures.get('spigot')?.replaceAll('\u00a0', ' ')).toBe('60.85 × 60.40 mm')
+    expect(figures.get('spigot-oval')?.replaceAll('\u00a0', ' ')).toBe('0.45 mm')
+    expect(figures.get('clearance')?.replaceAll('\u00a0', ' ')).toBe('−0.25 mm')
+    const doubted = lidShape(mapleBox(4, 4, { mcChangeDoubtPct: 1, movementDoubt: 0.2 }))
+    const spans = workedFigures(doubted, lidTurned(doubted, 90), 'imperial').map(({ value }) => value)
+    expect(spans[3]).toMatch(/^0\.0178\u00a0in \(0\.0121 to 0\.0235\)$/)
   })
 })
