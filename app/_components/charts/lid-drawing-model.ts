@@ -77,8 +77,7 @@ const MOST_LINES = 5
 export type ClearanceScale = {
   readonly low: number
   readonly high: number
-  readonly ticks: readonly number[]
-  readonly digits: number
+  readonly ticks: readonly { readonly value: number; readonly label: string }[]
 }
 
 /**
@@ -93,6 +92,9 @@ export function clearanceScale(values: readonly Clearance[], perUnitMm: number):
   const low = -Math.max(high * 0.35, Math.min(-least * 1.05, high * 1.1))
   const step = STEPS.find((candidate) => (high - low) / candidate <= MOST_LINES) ?? 10
   const first = Math.ceil(low / step)
+  const digits = step < 0.01 ? 3 : 2
   const ticks = Array.from({ length: Math.floor(high / step) - first + 1 }, (_, n) => (first + n) * step)
-  return { low, high, ticks: ticks.filter((tick) => tick >= 0), digits: step < 0.01 ? 3 : 2 }
+    .filter((value) => value >= 0)
+    .map((value) => ({ value, label: value === 0 ? '0' : value.toFixed(digits) }))
+  return { low, high, ticks }
 }
