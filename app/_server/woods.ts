@@ -34,7 +34,12 @@ export async function offeredWoods(db: Kysely<Database>, siteId: number): Promis
   return woodsOf(await listSiteWoods(db, siteId), false)
 }
 
-/** The same as the field for a piece's wood needs them, with the one that the piece has, even when it was put away. */
+/** The site's own woods that were put away. */
+export async function awayWoods(db: Kysely<Database>, siteId: number): Promise<Wood[]> {
+  return woodsOf(await listSiteWoods(db, siteId), true)
+}
+
+/** The offered ones as the field for a piece's wood needs them, with the one that the piece has, even when it was put away. */
 export async function woodChoices(
   db: Kysely<Database>,
   siteId: number,

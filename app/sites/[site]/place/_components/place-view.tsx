@@ -6,6 +6,7 @@ import { useSiteQuery } from '@/app/_components/live/use-site-query'
 import { Field } from '@/app/_components/ui/field'
 import { PageSentence } from '@/app/_components/ui/page-sentence'
 import { Select } from '@/app/_components/ui/select'
+import { TextLink } from '@/app/_components/ui/text-link'
 import { may } from '@/lib/sites/permissions'
 import { placeSentence } from '@/lib/sites/place-sentence'
 import type { Reader } from '@/lib/sites/reader'
@@ -119,6 +120,14 @@ export function PlaceView({
           ))}
         </ul>
       </nav>
+      {may(reader.role, 'woods:see') ? (
+        <p className="max-sm:px-4">
+          <TextLink href={`/sites/${reader.site}/place/woods`} className="inline-flex min-h-11 items-center">
+            Woods
+          </TextLink>{' '}
+          <span className="text-ink-soft">and their figures, those of your own too</span>
+        </p>
+      ) : null}
       {content}
     </>
   )
