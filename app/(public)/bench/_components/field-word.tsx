@@ -2,35 +2,54 @@
 
 import { useState } from 'react'
 import { SentenceInput } from '@/app/_components/ui/sentence-control'
-import { addressText, shownText, unitOf } from '@/lib/bench/fields'
+import { addressText, type FieldKind, shownText, unitOf } from '@/lib/bench/fields'
 import type { Fields } from './use-fields'
 import { useUnits } from './use-units'
 
-type FieldWordProps<Key extends string> = { of: Fields<Key>; name: Key }
+type NumberWordProps = {
+  label: string
+  kind: FieldKind
+  /** As it stands in the address. */
+  text: string
+  isRefused: boolean
+  onText: (text: string) => void
+}
 
 /** A number as a word of a sentence, in the reader's unit. What is typed stays as typed until it changes elsewhere. */
-export function FieldWord<Key extends string>({
-  of: { fields, texts, refusals, set },
-  name,
-}: FieldWordProps<Key>) {
+export function NumberWord({ label, kind, text, isRefused, onText }: NumberWordProps) {
   const [units] = useUnits()
-  const { label, kind } = fields[name]
-  const text = texts[name]
   const [typed, setTyped] = useState({ as: '', text: '', units })
-  const isOwn = typed.text === text && typed.units === units
-  const shown = isOwn && typed.as !== '' ? typed.as : shownText(text, kind, units)
+  const isOwn = typed.text === text && typed.units === units && typed.as !== ''
   return (
     <SentenceInput
       label={label}
       unit={unitOf(kind, units)}
       inputMode="decimal"
       className="pr-1.5 text-right"
-      value={shown}
-      aria-invalid={refusals[name] === undefined ? undefined : true}
+      value={isOwn ? typed.as : shownText(text, kind, units)}
+      aria-invalid={isRefused ? true : undefined}
       onChange={(event) => {
         const kept = addressText(event.target.value, kind, units)
         setTyped({ as: event.target.value, text: kept, units })
-        set({ [name]: kept } as Partial<Record<Key, string>>)
+        onText(kept)
+      }}
+    />
+  )
+}
+
+type FieldWordProps<Key extends string> = { of: Fields<Key>; name: Key }
+
+/** One of a page's numbers as a word of its sentence. */
+export function FieldWord<Key extends string>({ of, name }: FieldWordProps<Key>) {
+  const { label, kind } = of.fields[name]
+  return (
+    <NumberWord
+      label={label}
+      kind={kind}
+      text={of.texts[name]}
+      isRefused={of.refusals[name] !== undefined}
+      onText={(text) => {
+        of.set({ [name]: text } as Partial<Record<Key, string>>)
       }}
     />
   )

@@ -8,7 +8,7 @@ import { useWidth } from '@/app/_components/charts/use-width'
 import { formatDuration } from '@/lib/format/times'
 import { barEndMinutes, barTicksMinutes, tickText } from './time-bar-model'
 
-type TimeBarProps = { minutesEarly: number; minutes: number; minutesLate: number }
+type TimeBarProps = { minutesEarly: number; minutes: number; minutesLate: number | undefined }
 
 const TOP = 24
 const HEIGHT = 26
@@ -36,7 +36,9 @@ export function TimeBar({ minutesEarly, minutes, minutesLate }: TimeBarProps) {
           rows={[
             ['Early', early, '1 in 10 like it has used up what it may lose'],
             ['Middle', middle, 'as many have as have not'],
-            ['Late', formatDuration(minutesLate), '9 in 10 have'],
+            minutesLate === undefined
+              ? ['Late', 'never', 'more than 1 in 10 keep their fit for good']
+              : ['Late', formatDuration(minutesLate), '9 in 10 have'],
           ]}
         />
       }

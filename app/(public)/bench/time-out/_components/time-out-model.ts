@@ -125,6 +125,12 @@ export function timeOutSentence({ answer }: BenchTimeOut): TextPart[] {
   return say`Bring it in within ${strong(formatDuration(answer.minutesEarly))}; it is more likely good until about ${formatDuration(answer.minutes)}.`
 }
 
+/** Some never bind there: then no late edge can be told. */
+export const lateWords = (minutesLate: number | undefined): string =>
+  minutesLate === undefined
+    ? 'More than 1 in 10 keep their fit for good.'
+    : `1 in 10 keep their fit past ${formatDuration(minutesLate)}.`
+
 export function timeOutFacts({ query, answer, isWoodKnown, fit }: BenchTimeOut, units: UnitSystem): Fact[] {
   const apart = query.toEmcPct - query.fromMcPct
   return [
@@ -143,7 +149,7 @@ export function timeOutFacts({ query, answer, isWoodKnown, fit }: BenchTimeOut, 
           {
             name: 'Middle',
             figure: `about ${formatDuration(answer.minutes)}`,
-            words: `As many bind before as after; 1 in 10 keep their fit past ${formatDuration(answer.minutesLate)}.`,
+            words: `As many bind before as after. ${lateWords(answer.minutesLate)}`,
           },
         ]
       : []),
