@@ -12,7 +12,9 @@ import {
   jointQuerySchema,
 } from './joint'
 import { saltsAnswer, saltsQuerySchema } from './salts'
+import { shopQuerySchema } from './shop'
 import { timeOutAnswer, timeOutQuerySchema } from './time-out'
+import { weighingQuerySchema } from './weighing'
 
 type Query = Record<string, string>
 
@@ -61,6 +63,11 @@ const bench: Record<string, { schema: z.ZodType; good: Query }> = {
   follow: { schema: followQuerySchema, good: { shape: 'slab', biot: 'inf', fourier: '0.2' } },
   diffusion: { schema: diffusionQuerySchema, good: { temperatureC: '20', mcPct: '10', densityKgM3: '640' } },
   salts: { schema: saltsQuerySchema, good: { temperatureC: '20' } },
+  weighing: { schema: weighingQuerySchema, good: { grams: '182.0,167.9,160.0', everyDays: '7' } },
+  shop: {
+    schema: shopQuerySchema,
+    good: { volumeM3: '40', temperatureC: '8', humidityPct: '85', targetEmcPct: '9' },
+  },
 }
 
 const goodOf = (name: string): Query => ({ ...bench[name]?.good })

@@ -292,6 +292,12 @@ export const routeTable: Record<string, Row> = {
     hours: '2',
   }),
   'GET /api/v1/bench/salts': bench({ temperatureC: '20' }),
+  'GET /api/v1/bench/shop': bench({
+    volumeM3: '40',
+    temperatureC: '8',
+    humidityPct: '85',
+    targetEmcPct: '9',
+  }),
   'GET /api/v1/bench/time-out': bench({
     species: 'fraxinus-excelsior',
     diameterMm: '60',
@@ -303,6 +309,7 @@ export const routeTable: Record<string, Row> = {
     toEmcPct: '16',
     temperatureC: '12',
   }),
+  'GET /api/v1/bench/weighing': bench({ grams: '182.0,167.9,160.0', everyDays: '7' }),
   'GET /api/v1/bench/warming': bench({ fromC: '5', fromHumidityPct: '85', toC: '15' }),
 }
 

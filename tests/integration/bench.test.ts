@@ -18,6 +18,8 @@ beforeAll(async () => {
     follow: (await import('@/app/api/v1/bench/follow/route')).GET,
     diffusion: (await import('@/app/api/v1/bench/diffusion/route')).GET,
     salts: (await import('@/app/api/v1/bench/salts/route')).GET,
+    weighing: (await import('@/app/api/v1/bench/weighing/route')).GET,
+    shop: (await import('@/app/api/v1/bench/shop/route')).GET,
   }
 })
 afterAll(forgetServer)
@@ -43,6 +45,8 @@ const good: Record<string, string> = {
   follow: 'shape=cylinder&biot=inf&fourier=0',
   diffusion: 'temperatureC=-10&mcPct=30&densityKgM3=1400',
   salts: 'temperatureC=35',
+  weighing: 'grams=182.0,167.9,160.0&everyDays=7',
+  shop: 'volumeM3=40&temperatureC=8&humidityPct=20&targetEmcPct=9',
 }
 
 describe.each(Object.entries(good))('GET /api/v1/bench/%s', (name, query) => {
@@ -90,6 +94,31 @@ describe('the bench over HTTP', () => {
     const { response, text } = await ask('humidity?temperatureC=20&emcPct=29.9')
     expect(response.status).toBe(422)
     expect(problemSchema.parse(JSON.parse(text)).errors?.[0]?.path).toBe('emcPct')
+  })
+
+  it('gives the end of three weights, and refuses weights that have none', async () => {
+    const { text } = await ask('weighing?grams=182.0,167.9,160.0&everyDays=7')
+    expect(JSON.parse(text)).toMatchObject({
+      finalGrams: expect.closeTo(149.93, 2),
+      timeConstantDays: expect.closeTo(12.08, 2),
+    })
+    const refused = await ask('weighing?grams=182,190,188&everyDays=7')
+    expect(refused.response.status).toBe(422)
+    expect(problemSchema.parse(JSON.parse(refused.text)).errors?.[0]?.path).toBe('grams')
+  })
+
+  it('says to what a damp shop is to be warmed or dried, and leaves that out for a dry one', async () => {
+    const { text } = await ask('shop?volumeM3=40&temperatureC=8&humidityPct=85&targetEmcPct=9')
+    expect(JSON.parse(text)).toMatchObject({
+      warmToC: expect.closeTo(16.74, 2),
+      humidityAfterWarmingPct: expect.closeTo(47.83, 2),
+      dryToHumidityPct: expect.closeTo(47.01, 2),
+      waterInAirKg: expect.closeTo(0.1256, 3),
+    })
+    const dry = JSON.parse((await ask(`shop?${good.shop ?? ''}`)).text) as Record<string, unknown>
+    expect(dry.isDryEnough).toBe(true)
+    expect(Object.keys(dry)).not.toContain('warmToC')
+    expect(Object.keys(dry)).not.toContain('dryToHumidityPct')
   })
 
   it('leaves out the limit where there is none', async () => {
