@@ -2,9 +2,10 @@
 
 import { parseAsInteger, parseAsString, parseAsStringLiteral, useQueryState, useQueryStates } from 'nuqs'
 import { LidView } from '@/app/_components/charts/lid-view'
-import { Caution } from '@/app/_components/ui/caution'
+import { Cautions } from '@/app/_components/ui/caution'
 import { RichText } from '@/app/_components/ui/rich-text'
 import { Sheet } from '@/app/_components/ui/sheet'
+import { carryCautions } from '@/lib/carry/cautions'
 import { BenchFoot } from '../../_components/bench-foot'
 import { BenchSentence } from '../../_components/bench-sentence'
 import { Facts } from '../../_components/facts'
@@ -78,10 +79,7 @@ export function FitBench() {
         </div>
       )}
       <div className="px-4 sm:px-0">
-        <Caution>
-          Never force, lever or heat a swollen lid: line the grain up, keep the parts side by side, try it
-          cold in about two days. It usually comes back, not always.
-        </Caution>
+        <Cautions cautions={carryCautions.slice(1, 2)} />
       </div>
       <BenchFoot method="fit" twins={shown === undefined || isOld ? [] : fitTwins(shown, angleDeg)} />
     </>
