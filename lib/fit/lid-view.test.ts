@@ -190,6 +190,13 @@ describe('lid view', () => {
     )
   })
 
+  it('a snap lid is tight on purpose: it says how much tighter', () => {
+    const { headline } = lidShape({ ...mapleBox(1), clearanceMm: -0.05 })
+    expect(plainText(headline).replaceAll('\u00a0', ' ')).toBe(
+      'Cut about 0.05 mm too tight, as a snap lid is; a quarter turn on about 0.15 mm',
+    )
+  })
+
   it('tells the lid by the quarter turn, then in mm', () => {
     expect(lidShape(mapleBox(1.5)).quarterTurnWords.replaceAll('\u00a0', ' ')).toBe(
       'easy, tight, easy, tight: about 0.20 mm to spare with the grain lined up, about 0.05 mm to spare a quarter turn on',

@@ -1,4 +1,5 @@
-import type { TextPart } from '@/lib/format/sentence'
+import { formatFineLength } from '@/lib/format/figures'
+import { say, strong, type TextPart } from '@/lib/format/sentence'
 import type { UnitSystem } from '@/lib/sites/site'
 import {
   clearanceCurve,
@@ -72,13 +73,25 @@ export function lidShape(joint: DoubtfulJoint, units: UnitSystem = 'metric'): Li
     radiusMm: meanRadiusMm(spigotOutline, socketOutline),
     exaggeration: exaggerationOf(spigotOutline, socketOutline),
     curve,
-    headline: turnHeadline(curve),
+    headline: joint.clearanceMm < 0 ? tightHeadline(joint, curve, units) : turnHeadline(curve),
     quarterTurnWords: quarterTurnWords(
       curve[0]?.middleMm ?? 0,
       curve[CURVE_POINTS - 1]?.middleMm ?? 0,
       units,
     ),
   }
+}
+
+/** A snap lid is cut too tight on purpose: how much tighter still it is, not that it binds, is what counts. */
+function tightHeadline(
+  joint: DoubtfulJoint,
+  curve: readonly CurvePoint[],
+  units: UnitSystem,
+): readonly TextPart[] {
+  const quarterMm = curve.at(-1)?.middleMm ?? joint.clearanceMm
+  const cut = formatFineLength(-joint.clearanceMm, units)
+  const now = formatFineLength(Math.max(0, -quarterMm), units)
+  return say`Cut about ${cut} too tight, as a snap lid is; ${strong(`a quarter turn on about ${now}`)}`
 }
 
 /**

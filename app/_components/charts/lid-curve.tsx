@@ -6,7 +6,7 @@ import type { LidTurned } from '@/lib/fit/lid-view'
 import type { UnitSystem } from '@/lib/sites/site'
 import { MM_PER_INCH } from '@/lib/units'
 import { Hatch } from './hatch'
-import { clearanceScale } from './lid-drawing-model'
+import { clearanceScale, px } from './lid-drawing-model'
 import { useWidth } from './use-width'
 
 export type OtherCurve = { readonly label: string; readonly curve: readonly CurvePoint[] }
@@ -32,9 +32,9 @@ export function LidCurve({ curve, turned, other, units, name, onTurn }: LidCurve
   const perUnitMm = units === 'metric' ? 1 : MM_PER_INCH
   const scale = clearanceScale([...curve, ...(other?.curve ?? [])], perUnitMm)
   const right = width - PLOT.right
-  const x = (angleDeg: number) => PLOT.left + (angleDeg / LAST_DEG) * (right - PLOT.left)
+  const x = (angleDeg: number) => px(PLOT.left + (angleDeg / LAST_DEG) * (right - PLOT.left))
   const y = (value: number) =>
-    PLOT.bottom - ((value - scale.low) / (scale.high - scale.low)) * (PLOT.bottom - PLOT.top)
+    px(PLOT.bottom - ((value - scale.low) / (scale.high - scale.low)) * (PLOT.bottom - PLOT.top))
   const atMm = (lengthMm: number) => y(Math.max(scale.low, lengthMm / perUnitMm))
   const line = (points: readonly CurvePoint[], of: (point: CurvePoint) => number) =>
     points.map((point) => `${x(point.angleDeg).toFixed(1)} ${atMm(of(point)).toFixed(1)}`).join('L')

@@ -71,7 +71,7 @@ describe('the scale of clearances', () => {
           expect(high * perUnitMm).toBeGreaterThanOrEqual(lowMm + more)
           expect(ticks[0]).toEqual({ value: 0, label: '0' })
           expect(new Set(ticks.map((tick) => tick.label)).size).toBe(ticks.length)
-          expect(ticks.length).toBeLessThanOrEqual(6)
+          expect(ticks.length).toBeLessThanOrEqual(8)
         },
       ),
     )

@@ -10,12 +10,15 @@ export const PROTRACTOR_RADIUS = 142
 
 type Point = { readonly x: number; readonly y: number }
 
+/** Engines differ in the last digit of a sine; to 0.01 px, what the server drew is what the browser draws. */
+export const px = (length: number): number => Math.round(length * 100) / 100
+
 const radians = (degrees: number): number => (degrees * Math.PI) / 180
 
 /** A point off the middle; directions run from the right hand downwards, the way the lid is turned. */
 export const pointAt = (directionDeg: number, radius: number): Point => ({
-  x: FRAME.x + radius * Math.cos(radians(directionDeg)),
-  y: FRAME.y + radius * Math.sin(radians(directionDeg)),
+  x: px(FRAME.x + radius * Math.cos(radians(directionDeg))),
+  y: px(FRAME.y + radius * Math.sin(radians(directionDeg))),
 })
 
 /** Where the handle stands: 0 degrees at the top, a quarter turn at the right. */
@@ -72,7 +75,7 @@ export const PROTRACTOR: readonly ProtractorTick[] = Array.from({ length: 19 }, 
 
 /** Steps of a scale that read well, in mm or in. */
 const STEPS = [0.001, 0.002, 0.005, 0.01, 0.02, 0.05, 0.1, 0.2, 0.5, 1, 2, 5] as const
-const MOST_LINES = 5
+const MOST_LINES = 7
 
 export type ClearanceScale = {
   readonly low: number

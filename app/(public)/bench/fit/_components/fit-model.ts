@@ -4,7 +4,7 @@ import { feelOf, feelWords, spareWords } from '@/lib/fit/feel'
 import { gradeCourse, gradeCourses, type GradeCourse } from '@/lib/fit/grade-course'
 import { GRADE_FIGURES } from '@/lib/fit/grades'
 import { allowedChangeAnyAngle, clearanceExactMm } from '@/lib/fit/lid-fit'
-import { jointMovement, sizeChangesMm } from '@/lib/fit/piece-size'
+import { jointMovement, sizeChangesMm, type SizeChanges } from '@/lib/fit/piece-size'
 import { movementOfKind } from '@/lib/fit/wood-kind'
 import {
   formatEmc,
@@ -112,6 +112,9 @@ export function fitSentence(fit: BenchFit, units: UnitSystem): TextPart[] {
   const [linedUpMm, quarterMm] = [0, 90].map((angleDeg) => clearanceExactMm(fit.joint, angleDeg))
   if (linedUpMm === undefined || quarterMm === undefined) return []
   const spare = spareWords(quarterMm, units)
+  if (fit.joint.clearanceMm < 0) {
+    return say`It is tight from the start, as a snap lid is; a quarter turn on it is ${strong(spare)}.`
+  }
   if (linedUpMm < 0 && quarterMm < 0) {
     return say`It ${strong('may bind')} even with the grain lined up: ${spareWords(linedUpMm, units)}, and ${spare} a quarter turn on.`
   }
@@ -124,10 +127,37 @@ export function fitSentence(fit: BenchFit, units: UnitSystem): TextPart[] {
   return say`It is ${linedUp} with the grain lined up and ${strong(quarter)} a quarter turn on, ${spare} there.`
 }
 
+function sizeFact(
+  { joint, wood, choices }: BenchFit & { kind: 'joint' },
+  change: number,
+  units: UnitSystem,
+): Fact {
+  const { grain } = choices
+  const size = { grain, heightMm: TOLD_HEIGHT_MM, diameterMm: joint.diameterMm }
+  const grown = sizeChangesMm(size, wood, change)
+  const name = 'The joint has become'
+  if (Math.abs(grown.diameterMostMm) < NOTHING_MM) return { name, figure: 'no other size' }
+  const stay = grain === 'side-grain' ? ' A side-grain lid must stay lined up.' : ''
+  return {
+    name,
+    figure: `${signed(grown.diameterMostMm, units)} ${grown.words.most}`,
+    words: `${signed(grown.diameterLeastMm, units)} ${grown.words.least}; ${heightWords(grown, units)}.${stay}`,
+  }
+}
+
+function heightWords({ heightMm, words }: SizeChanges, units: UnitSystem): string {
+  const of = `${formatLength(TOLD_HEIGHT_MM, units)} of its height`
+  if (Math.abs(heightMm) < NOTHING_MM) return `${of}, ${words.height}, hardly anything`
+  return `${of}, ${words.height}, ${signed(heightMm, units)}`
+}
+
 const signed = (lengthMm: number, units: UnitSystem): string => {
   const text = formatFineLength(Math.abs(lengthMm), units)
   return `${lengthMm < 0 ? '−' : '+'}${text}`
 }
+
+/** Less than this is no change that a maker could measure, mm. */
+const NOTHING_MM = 0.025
 
 /** Height that its change along the axis is told for, mm. */
 const TOLD_HEIGHT_MM = 100
@@ -142,29 +172,31 @@ export function fitFacts(fit: BenchFit, units: UnitSystem): Fact[] {
     words: `${formatPoints(change)} ${side}, give or take ${formatPoints(moisture.doubtPct)} (points are % MC).${choices.tell === 'air' ? ' Where wood ends in those two airs, given time.' : ''}`,
   }
   if (fit.kind === 'words') return [moistureFact, woodFact(wood, choices.wood, 'The wood')]
-  const anyAngle = allowedChangeAnyAngle(fit.joint, 0)
-  const size = { grain: choices.grain, heightMm: TOLD_HEIGHT_MM, diameterMm: fit.joint.diameterMm }
-  const grown = sizeChangesMm(size, wood, change)
   return [
     moistureFact,
-    {
-      name: 'Before it may bind',
-      figure: anyAngle === undefined ? 'no limit' : `about ${formatPoints(anyAngle)} either way`,
-      words:
-        anyAngle === undefined
-          ? 'Moisture takes no clearance from this joint.'
-          : 'Of % MC from when it was cut, however the lid is turned. With the grain lined up it stands far more.',
-    },
+    ...beforeItBinds(fit),
     ...(fit.course === undefined ? [] : [{ name: 'Its fit', figure: choices.fit, words: fit.course.words }]),
-    {
-      name: 'The joint has become',
-      figure: `${signed(grown.diameterMostMm, units)} ${grown.words.most}`,
-      words: `${signed(grown.diameterLeastMm, units)} ${grown.words.least}; ${formatLength(TOLD_HEIGHT_MM, units)} of height ${signed(grown.heightMm, units)}, ${grown.words.height}.${choices.grain === 'side-grain' ? ' A side-grain lid must stay lined up.' : ''}`,
-    },
+    sizeFact(fit, change, units),
     woodFact(wood, choices.wood, 'The wood'),
     ...(choices.lidWood === '' ? [] : [woodFact(fit.lidWood, choices.lidWood, "The lid's wood")]),
     ...(fit.kindWords === '' ? [] : [{ name: 'Kind of wood', figure: 'hybrid', words: fit.kindWords }]),
   ]
+}
+
+function beforeItBinds({ joint, courses }: BenchFit & { kind: 'joint' }): Fact[] {
+  if (joint.clearanceMm <= 0) return []
+  const name = 'Before it may bind'
+  const anyAngle = allowedChangeAnyAngle(joint, 0)
+  if (anyAngle === undefined) {
+    return [{ name, figure: 'no limit', words: 'Moisture takes no clearance from this joint.' }]
+  }
+  const figure = `about ${formatPoints(anyAngle)}`
+  // One wood whose parts keep step: swelling and drying take the same.
+  const words =
+    courses.length > 0
+      ? 'Of % MC either way from when it was cut, however the lid is turned. With the grain lined up it stands far more.'
+      : 'Of % MC in the part that changes more, if the two go on in the same proportion.'
+  return [{ name, figure, words }]
 }
 
 function woodFact(wood: WoodMovement, slug: string, name: string): Fact {
@@ -175,7 +207,7 @@ function woodFact(wood: WoodMovement, slug: string, name: string): Fact {
   }
   const words = wood.assumed.includes('movement')
     ? `No movement is published: that of its class stands; ${doubt}.`
-    : `${species.latinName}; ${doubt}. ${species.source}.`
+    : `${species.latinName}; ${doubt}. Source: ${species.source}.`
   return { name, figure: species.commonName, words }
 }
 
