@@ -24,6 +24,7 @@ export type FieldKind =
   | 'weight'
   | 'heat-loss'
   | 'days'
+  | 'per-hour'
 
 /** One number of a bench page. Its range is that of the API's query, which a test holds it to. */
 export type Field = {
@@ -33,8 +34,10 @@ export type Field = {
   /** In °C, % RH, % MC, mm, g, m³, kg, W/K or days. */
   readonly min: number
   readonly max: number
-  /** What stands there to begin with, in the same unit; empty for a number that may be left out. */
+  /** What stands there to begin with, in the same unit. */
   readonly start: string
+  /** May be left empty: not known. */
+  readonly isOptional?: true
 }
 
 type Scale = {
@@ -59,6 +62,7 @@ const METRIC: Readonly<Record<FieldKind, Scale>> = {
   weight: plain('kg', 2),
   'heat-loss': plain('W/K', 1),
   days: plain('days', 2),
+  'per-hour': plain('an hour', 2),
 }
 
 /** What has no other unit in the imperial system stays as it is: percent, days, and watts for a kelvin. */

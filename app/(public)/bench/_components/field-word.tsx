@@ -12,11 +12,12 @@ type NumberWordProps = {
   /** As it stands in the address. */
   text: string
   isRefused: boolean
+  placeholder?: string | undefined
   onText: (text: string) => void
 }
 
 /** A number as a word of a sentence, in the reader's unit. What is typed stays as typed until it changes elsewhere. */
-export function NumberWord({ label, kind, text, isRefused, onText }: NumberWordProps) {
+export function NumberWord({ label, kind, text, isRefused, placeholder, onText }: NumberWordProps) {
   const [units] = useUnits()
   const [typed, setTyped] = useState({ as: '', text: '', units })
   const isOwn = typed.text === text && typed.units === units && typed.as !== ''
@@ -25,6 +26,7 @@ export function NumberWord({ label, kind, text, isRefused, onText }: NumberWordP
       label={label}
       unit={unitOf(kind, units)}
       inputMode="decimal"
+      placeholder={placeholder}
       className="pr-1.5 text-right"
       value={isOwn ? typed.as : shownText(text, kind, units)}
       aria-invalid={isRefused ? true : undefined}
@@ -41,13 +43,14 @@ type FieldWordProps<Key extends string> = { of: Fields<Key>; name: Key }
 
 /** One of a page's numbers as a word of its sentence. */
 export function FieldWord<Key extends string>({ of, name }: FieldWordProps<Key>) {
-  const { label, kind } = of.fields[name]
+  const { label, kind, isOptional } = of.fields[name]
   return (
     <NumberWord
       label={label}
       kind={kind}
       text={of.texts[name]}
       isRefused={of.refusals[name] !== undefined}
+      placeholder={isOptional === true ? 'not known' : undefined}
       onText={(text) => {
         of.set({ [name]: text } as Partial<Record<Key, string>>)
       }}

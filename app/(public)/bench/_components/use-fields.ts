@@ -11,7 +11,7 @@ export type Fields<Key extends string> = {
   readonly fields: Readonly<Record<Key, Field>>
   readonly texts: Texts<Key>
   readonly set: (change: Partial<Texts<Key>>) => void
-  /** Undefined as long as one of them is refused. */
+  /** NaN where one is left out or not asked for; undefined as long as one of them is refused. */
   readonly values: Record<Key, number> | undefined
   /** What is refused and why, by field. */
   readonly refusals: Partial<Record<Key, string>>
@@ -44,7 +44,7 @@ export function useFields<Key extends string>(
   for (const key of keys) {
     const parsed = fieldValue(fields[key], texts[key], units)
     if (parsed.ok) values[key] = parsed.value
-    else if (idle.includes(key)) values[key] = Number.NaN
+    else if (idle.includes(key) || isLeftOut(fields[key], texts[key])) values[key] = Number.NaN
     else refusals[key] = parsed.error
   }
   return {
@@ -55,3 +55,8 @@ export function useFields<Key extends string>(
     refusals,
   }
 }
+
+const isLeftOut = (field: Field, text: string): boolean => field.isOptional === true && text === ''
+
+/** A number that may be left out, or undefined where it is. */
+export const told = (value: number): number | undefined => (Number.isNaN(value) ? undefined : value)
