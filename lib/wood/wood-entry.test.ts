@@ -10,7 +10,14 @@ import {
   woodEntryOf,
   woodFiguresEntrySchema,
 } from './wood-entry'
-import { woodAssumedWords, woodFigureWords, woodsSentence } from './wood-words'
+import {
+  tableWords,
+  woodAssumedWords,
+  woodFigureWords,
+  woodKnownWords,
+  woodSourceWords,
+  woodsSentence,
+} from './wood-words'
 
 const entry = (facts: Partial<WoodEntry>): WoodEntry => ({ ...woodEntryOf(undefined), ...facts })
 const problems = (facts: Partial<WoodEntry>) =>
@@ -111,6 +118,21 @@ describe('a wood in words', () => {
     )
   })
 
+  it('tells the source once', () => {
+    expect(woodSourceWords(view('dalbergia-retusa'))).toBe('')
+    expect(woodKnownWords(view('dalbergia-retusa'))).toBe('from memory')
+    expect(woodSourceWords(view('fagus-sylvatica'))).toMatch(/^Source: Hoadley/)
+  })
+
+  it("sets the table's figures beside one's own, in either system", () => {
+    const species = findSpecies('fagus-grandifolia')
+    if (species === undefined) throw new Error('not found')
+    expect(tableWords(species, 'metric')).toBe(
+      'In the table: 1.9 mm/m across and 4.3 along the rings for each point of % MC, 720\u00a0kg/m³; read in its source. Source: Wood Handbook (FPL-GTR-190, 2010), Tables 4-3 and 13-5.',
+    )
+    expect(tableWords(species, 'imperial')).toContain('1.9 thou/in across')
+  })
+
   it('counts woods, own ones and own figures apart', () => {
     const table = { isOwn: false, isOverridden: false }
     expect(woodsSentence([table, table])).toBe(
@@ -140,6 +162,7 @@ describe('a wood in words', () => {
       source: 'own scale',
       note: 'dense',
     })
+    expect(woodKnownWords(shown)).toBe('your own wood, by its class')
     expect(woodAssumedWords(shown)).toMatch(/^Assumed: movement of the large class,/)
   })
 })

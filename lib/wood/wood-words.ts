@@ -1,5 +1,7 @@
 import type { UnitSystem } from '@/lib/sites/site'
-import type { Wood } from './wood'
+import { movementOfWood } from './movement-class'
+import type { Species } from './species'
+import { type Wood, woodStatusWords } from './wood'
 
 /** The unit of a movement for each point of % MC: thousandths of the size, whatever the size. */
 export const perPointUnit: Readonly<Record<UnitSystem, string>> = { metric: 'mm/m', imperial: 'thou/in' }
@@ -49,6 +51,25 @@ export function woodAssumedWords(wood: Pick<Wood, 'reckoned' | 'movementClass'>)
     ...(isDensityAssumed ? ['a middling density'] : []),
   ]
   return parts.length === 0 ? '' : `Assumed: ${parts.join(' and ')}, so the doubt is wider.`
+}
+
+/** How a wood is known, in a few words. */
+export const woodKnownWords = (wood: Pick<Wood, 'isOwn' | 'status' | 'reckoned'>): string =>
+  wood.isOwn && wood.reckoned.assumed.includes('movement')
+    ? 'your own wood, by its class'
+    : woodStatusWords[wood.status]
+
+/** Where the figures come from, as one sentence; empty where the status says it already. */
+export const woodSourceWords = ({ source, status }: Pick<Wood, 'source' | 'status'>): string =>
+  source === '' || source === status ? '' : `Source: ${source}.`
+
+/** The table's own figures, to set one's own against. */
+export function tableWords(species: Species, units: UnitSystem): string {
+  const { across, along, density } = woodFigureWords({
+    reckoned: { ...movementOfWood(species), assumed: [...movementOfWood(species).assumed] },
+  })
+  const source = woodSourceWords(species)
+  return `In the table: ${across} ${perPointUnit[units]} across and ${along} along the rings for each point of % MC, ${density}; ${woodStatusWords[species.status]}.${source && ` ${source}`}`
 }
 
 /** The sentence over the page: how many woods there are, and whose figures count. */

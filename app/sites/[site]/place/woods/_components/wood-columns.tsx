@@ -1,8 +1,15 @@
 import type { Column } from '@/app/_components/ui/data-table'
 import { TextLink } from '@/app/_components/ui/text-link'
 import type { Reader } from '@/lib/sites/reader'
+import { protectedWords } from '@/lib/wood/protected'
 import { type Wood, woodStatusWords } from '@/lib/wood/wood'
-import { perPointUnit, woodAssumedWords, woodFigureWords } from '@/lib/wood/wood-words'
+import {
+  perPointUnit,
+  woodAssumedWords,
+  woodFigureWords,
+  woodKnownWords,
+  woodSourceWords,
+} from '@/lib/wood/wood-words'
 import { PutWoodAway } from './put-wood-away'
 
 /** What the list of woods shows of each. */
@@ -67,25 +74,35 @@ function WoodName({ wood }: { wood: Wood }) {
 }
 
 function HowKnown({ wood }: { wood: Wood }) {
+  const { densityStatus, dust, protection } = wood
   const density =
-    wood.densityStatus !== undefined && wood.densityStatus !== wood.status
-      ? `Density: ${woodStatusWords[wood.densityStatus]}.`
+    densityStatus !== undefined && densityStatus !== wood.status
+      ? `Density: ${woodStatusWords[densityStatus]}.`
       : ''
+  const known = [woodSourceWords(wood), density, woodAssumedWords(wood)].filter(Boolean).join(' ')
   const notes = [
-    wood.source === '' ? '' : `${wood.source}.`,
-    density,
-    woodAssumedWords(wood),
     wood.note ?? '',
-    wood.dust ? `Dust: ${wood.dust.effect} (${wood.dust.source}; ${wood.dust.status}).` : '',
-    wood.protection
-      ? `${wood.protection.listing} (${wood.protection.status}, ${wood.protection.checkedOn}).`
-      : '',
+    dust ? `Dust: ${dust.effect} (${dust.kind}). Source: ${dust.source}; ${dust.status}.` : '',
+    protection ? protectedWords(protection) : '',
+    wood.oily ? 'Oily: its own moisture may differ from the curve for all woods.' : '',
   ].filter(Boolean)
   return (
-    <span className="flex max-w-[26rem] flex-col text-label">
-      <span>{woodStatusWords[wood.status]}</span>
-      <span className="text-ink-soft">{notes.join(' ')}</span>
-    </span>
+    <div className="max-w-[26rem] text-label">
+      <p>{woodKnownWords(wood)}</p>
+      {known ? <p className="text-ink-soft">{known}</p> : null}
+      {notes.length > 0 ? (
+        <details>
+          <summary className="inline-flex min-h-11 cursor-pointer items-center text-heart underline underline-offset-4 sm:min-h-9">
+            Notes and cautions<span className="sr-only"> for {wood.commonName}</span>
+          </summary>
+          {notes.map((note) => (
+            <p key={note} className="text-ink-soft">
+              {note}
+            </p>
+          ))}
+        </details>
+      ) : null}
+    </div>
   )
 }
 

@@ -15,7 +15,7 @@ import { useAction } from '@/app/_components/use-action'
 import type { Reader } from '@/lib/sites/reader'
 import type { NewSiteWood, SiteWoodChange } from '@/lib/wood/site-wood'
 import { findSpecies } from '@/lib/wood/species'
-import { type Wood, woodStatusWords } from '@/lib/wood/wood'
+import type { Wood } from '@/lib/wood/wood'
 import {
   figuresOverTable,
   ownWoodEntrySchema,
@@ -23,6 +23,7 @@ import {
   woodEntryOf,
   woodFiguresEntrySchema,
 } from '@/lib/wood/wood-entry'
+import { tableWords } from '@/lib/wood/wood-words'
 import { woodAreas } from './put-wood-away'
 import { NameFields, WordFields } from './wood-text-fields'
 import { MovementFields } from './wood-movement-fields'
@@ -38,6 +39,7 @@ type Entered = z.output<typeof ownWoodEntrySchema> | z.output<typeof woodFigures
 /** A wood of the site's own, or its figures for one of the table, on a page of its own. */
 export function WoodForm({ reader, wood }: WoodFormProps) {
   const router = useRouter()
+  const table = wood === undefined ? undefined : findSpecies(wood.slug)
   const isOwn = wood === undefined || wood.isOwn
   const back = `/sites/${reader.site}/place/woods`
   const form = useForm<WoodEntry, unknown, Entered>({
@@ -46,7 +48,6 @@ export function WoodForm({ reader, wood }: WoodFormProps) {
   })
   const save = useAction<Entered, Wood>({
     run: (entered, idempotencyKey) => {
-      const table = wood === undefined ? undefined : findSpecies(wood.slug)
       const body = table === undefined ? entered : figuresOverTable(entered, table)
       if (wood?.isOwn === true || wood?.isOverridden === true) {
         const change: SiteWoodChange = body
@@ -123,8 +124,7 @@ export function WoodForm({ reader, wood }: WoodFormProps) {
           </Sheet>
         ) : (
           <p className="max-w-words text-ink-soft max-sm:px-4">
-            The table’s: {woodStatusWords[findSpecies(wood.slug)?.status ?? 'none found']},{' '}
-            {findSpecies(wood.slug)?.source}.
+            {table === undefined ? '' : tableWords(table, reader.units)}
           </p>
         )}
         <Sheet title="How it moves" id="movement">

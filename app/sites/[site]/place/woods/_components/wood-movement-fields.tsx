@@ -28,7 +28,7 @@ export function MovementFields({ problem, isOwn, units }: MovementFieldsProps) {
   const bases: { value: MovementBasis; label: string; detail: string }[] = [
     isOwn
       ? { value: 'class', label: 'Only its class', detail: 'wider doubt' }
-      : { value: 'class', label: 'As in the table', detail: 'figures of the table' },
+      : { value: 'class', label: 'As in the table', detail: 'nothing of your own' },
     { value: 'shrinkage', label: 'Shrinkage', detail: 'green to oven-dry' },
     { value: 'point', label: 'Per point', detail: 'of % MC' },
   ]
@@ -77,6 +77,7 @@ export function MovementFields({ problem, isOwn, units }: MovementFieldsProps) {
         {reckonedWords({ movementClass, basis, across, along }, isOwn, units)}
       </p>
       <Field
+        className="max-w-72"
         label="Density at 12 % MC"
         error={formState.errors.density?.message ?? problem?.errorOf('densityKgM3')}
         hint={
@@ -85,7 +86,7 @@ export function MovementFields({ problem, isOwn, units }: MovementFieldsProps) {
             : 'Empty: it stays as the table has it.'
         }
       >
-        <NumberInput unit="kg/m³" className="max-w-56" {...register('density')} />
+        <NumberInput unit="kg/m³" {...register('density')} />
       </Field>
     </div>
   )
