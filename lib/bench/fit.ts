@@ -1,5 +1,5 @@
 import { z } from 'zod'
-import { feelOf, feelWords, quarterTurnWords } from '@/lib/fit/feel'
+import { feelOfCut, feelWords, quarterTurnWords } from '@/lib/fit/feel'
 import { gradeCourses, type GradeCourse } from '@/lib/fit/grade-course'
 import {
   allowedChange,
@@ -100,8 +100,13 @@ export function fitAnswer(query: FitQuery): FitAnswer {
     ...(allowed === undefined ? {} : { allowedMcChangePct: allowed }),
     limitedAnyAngle: allowedAnyAngle !== undefined,
     ...(allowedAnyAngle === undefined ? {} : { allowedAnyAngleMcChangePct: allowedAnyAngle }),
-    feel: feelWords[feelOf(clearanceMm)],
-    quarterTurn: quarterTurnWords(clearanceExactMm(joint, 0), clearanceExactMm(joint, 90)),
+    feel: feelWords[feelOfCut(clearanceMm, joint.clearanceMm)],
+    quarterTurn: quarterTurnWords(
+      clearanceExactMm(joint, 0),
+      clearanceExactMm(joint, 90),
+      'metric',
+      joint.clearanceMm,
+    ),
     ...(socketMovement === movement ? { grades: gradeCourses(query.diameterMm, movement) } : {}),
     words: fitWords(clearanceMm, query.angleDeg, allowed),
     assumed: movement.assumed,

@@ -40,6 +40,19 @@ export function feelOf(clearanceMm: number): Feel {
   return clearanceMm < EASY_BELOW_MM ? 'easy' : 'loose'
 }
 
+/**
+ * How a lid feels that was cut with that clearance.
+ * @param clearanceMm least diametral clearance as it is now, mm
+ * @param cutMm clearance as it was cut, mm; below 0 it snaps: then it is tight until it has lost what a snap may lose
+ * @throws RangeError for NaN or infinity
+ */
+export function feelOfCut(clearanceMm: number, cutMm: number): Feel {
+  assertFinite('cutMm', cutMm)
+  const felt = feelOf(clearanceMm)
+  const snapMm = GRADE_FIGURES.snap.allowanceMm ?? 0
+  return felt === 'binds' && cutMm < 0 && clearanceMm >= cutMm - snapMm ? 'tight' : felt
+}
+
 /** Less than this is nothing that a maker could measure, mm: half of the 0.05 mm that a lid is known to. */
 const NOTHING_MM = 0.025
 
@@ -55,13 +68,20 @@ export function spareWords(clearanceMm: number, units: UnitSystem = 'metric'): s
  * A lid as the trade tells it: tried with the grain lined up and at each quarter turn on, then in mm.
  * @param linedUpMm clearance with the grain lined up, mm; half a turn is the same
  * @param quarterMm clearance a quarter turn on, mm
+ * @param units the reader's
+ * @param cutMm clearance as it was cut, mm; counts only below 0, for a lid that snaps
  * @returns "easy, tight, easy, tight: about 0.25 mm to spare with the grain lined up, about 0.05 mm to spare a quarter
  *   turn on"
  * @throws RangeError for NaN or infinity
  */
-export function quarterTurnWords(linedUpMm: number, quarterMm: number, units: UnitSystem = 'metric'): string {
-  const one = feelWords[feelOf(linedUpMm)]
-  const other = feelWords[feelOf(quarterMm)]
+export function quarterTurnWords(
+  linedUpMm: number,
+  quarterMm: number,
+  units: UnitSystem = 'metric',
+  cutMm = 0,
+): string {
+  const one = feelWords[feelOfCut(linedUpMm, cutMm)]
+  const other = feelWords[feelOfCut(quarterMm, cutMm)]
   const felt = [one, other, one, other].join(', ')
   const linedUp = spareWords(linedUpMm, units)
   const quarter = spareWords(quarterMm, units)

@@ -1,6 +1,14 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
-import { EASY_BELOW_MM, feelOf, quarterTurnWords, SNUG_BELOW_MM, spareWords, TIGHT_BELOW_MM } from './feel'
+import {
+  EASY_BELOW_MM,
+  feelOf,
+  feelOfCut,
+  quarterTurnWords,
+  SNUG_BELOW_MM,
+  spareWords,
+  TIGHT_BELOW_MM,
+} from './feel'
 import { gradeCourse, gradeCourses, GRADES } from './grade-course'
 import { clearanceFirstOrderMm } from './lid-fit'
 
@@ -107,6 +115,13 @@ describe('how a lid feels', () => {
       ),
     )
     expect(() => feelOf(NaN)).toThrow(/clearanceMm/)
+  })
+
+  it('a lid that snaps is tight until it has lost what a snap may lose', () => {
+    expect([-0.05, -0.09, -0.11].map((mm) => feelOfCut(mm, -0.05))).toEqual(['tight', 'tight', 'binds'])
+    expect(feelOfCut(-0.01, 0.1)).toBe('binds')
+    expect(feelOfCut(0.1, -0.05)).toBe('snug')
+    expect(() => feelOfCut(0, NaN)).toThrow(/cutMm/)
   })
 
   it('is told by the quarter turn, then in mm to 0.05', () => {

@@ -9,7 +9,7 @@ import {
   type CurvePoint,
   type DoubtfulJoint,
 } from './clearance-curve'
-import { feelOf, feelWords, quarterTurnWords, type Feel } from './feel'
+import { feelOfCut, feelWords, quarterTurnWords, type Feel } from './feel'
 import { closestExact } from './lid-fit'
 import { exaggerationOf, meanRadiusMm, outlineOf, type Outline } from './lid-outline'
 import { ovalOfJoint, type Oval } from './ovality'
@@ -78,6 +78,7 @@ export function lidShape(joint: DoubtfulJoint, units: UnitSystem = 'metric'): Li
       curve[0]?.middleMm ?? 0,
       curve[CURVE_POINTS - 1]?.middleMm ?? 0,
       units,
+      joint.clearanceMm,
     ),
   }
 }
@@ -102,7 +103,7 @@ function tightHeadline(
 export function lidTurned(shape: LidShape, angleDeg: number): LidTurned {
   const clearance = clearanceWithDoubt(shape.joint, angleDeg)
   const closest = closestExact(shape.joint, angleDeg)
-  const feel = feelOf(clearance.middleMm)
+  const feel = feelOfCut(clearance.middleMm, shape.joint.clearanceMm)
   const degrees = String(Math.round(angleDeg))
   return {
     angleDeg,

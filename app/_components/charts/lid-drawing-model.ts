@@ -86,18 +86,19 @@ export type ClearanceScale = {
 /**
  * The scale of clearances, from a little above what is there down to where it binds.
  * @param values all that is drawn, in the reader's unit
- * @returns always with 0 and some room below it; what binds deeper than there is slack is cut off at the edge
+ * @returns always with 0 and some room below it; doubt that reaches deeper than there is slack is cut off at the edge
  */
 export function clearanceScale(values: readonly Clearance[], perUnitMm: number): ClearanceScale {
   const most = Math.max(0.02, ...values.map((value) => value.highMm)) / perUnitMm
   const least = Math.min(0, ...values.map((value) => value.lowMm)) / perUnitMm
+  const deepest = Math.min(0, ...values.map((value) => value.middleMm)) / perUnitMm
   const high = most * 1.08
-  const low = -Math.max(high * 0.35, Math.min(-least * 1.05, high * 1.1))
+  const low = -Math.max(high * 0.35, Math.min(-least * 1.05, Math.max(high * 1.1, -deepest * 1.08)))
   const step = STEPS.find((candidate) => (high - low) / candidate <= MOST_LINES) ?? 10
   const first = Math.ceil(low / step)
   const digits = step < 0.01 ? 3 : 2
   const ticks = Array.from({ length: Math.floor(high / step) - first + 1 }, (_, n) => (first + n) * step)
-    .filter((value) => value >= 0)
-    .map((value) => ({ value, label: value === 0 ? '0' : value.toFixed(digits) }))
+    .map((value) => (value === 0 ? 0 : value))
+    .map((value) => ({ value, label: value === 0 ? '0' : value.toFixed(digits).replace('-', '−') }))
   return { low, high, ticks }
 }

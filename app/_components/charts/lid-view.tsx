@@ -3,7 +3,7 @@
 import { ChevronDown } from 'lucide-react'
 import { type ReactNode, useId, useMemo } from 'react'
 import type { DoubtfulJoint } from '@/lib/fit/clearance-curve'
-import { feelOf, feelWords, spareWords } from '@/lib/fit/feel'
+import { feelOfCut, feelWords, spareWords } from '@/lib/fit/feel'
 import { lidShape, lidTurned, type LidShape, type LidTurned } from '@/lib/fit/lid-view'
 import { workedFigures, type WorkedFigure } from '@/lib/fit/worked-figures'
 import { formatFineLength } from '@/lib/format/figures'
@@ -63,7 +63,7 @@ function LidFigure({
       table={<CurveTable shape={shape} units={units} />}
     >
       {choices ? <div className="mt-3">{choices}</div> : null}
-      <div className="mt-4 grid gap-x-10 gap-y-6 [--figure-ground:var(--board)] lg:grid-cols-2">
+      <div className="mt-4 grid gap-x-10 gap-y-6 [--figure-ground:var(--board)] lg:grid-cols-2 print:mt-0 print:grid-cols-2">
         <div className="min-w-0">
           <LidDrawing shape={shape} turned={turned} name={name} onTurn={onTurn} />
           <TurnSlider turned={turned} onTurn={onTurn} />
@@ -136,7 +136,7 @@ function CurveTable({ shape, units }: { shape: LidShape; units: UnitSystem }) {
           `${String(point.angleDeg)}°`,
           formatFineLength(point.middleMm, units),
           `${formatFineLength(point.lowMm, units)} and ${formatFineLength(point.highMm, units)}`,
-          feelWords[feelOf(point.middleMm)],
+          feelWords[feelOfCut(point.middleMm, shape.joint.clearanceMm)],
         ])}
     />
   )
@@ -157,7 +157,7 @@ function Worked({ shape, turned, units, spigotOn }: WorkedProps) {
     quarter: 'Clearance, a quarter turn on',
   }
   return (
-    <details className="group mt-4 border-t border-line">
+    <details className="group mt-4 border-t border-line print:hidden print:open:block">
       <summary className="flex min-h-11 items-center justify-between font-semibold text-heart">
         Worked figures
         <ChevronDown

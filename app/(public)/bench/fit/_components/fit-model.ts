@@ -4,7 +4,7 @@ import { feelOf, feelWords, spareWords } from '@/lib/fit/feel'
 import { gradeCourse, gradeCourses, type GradeCourse } from '@/lib/fit/grade-course'
 import { GRADE_FIGURES } from '@/lib/fit/grades'
 import { allowedChangeAnyAngle, clearanceExactMm } from '@/lib/fit/lid-fit'
-import { jointMovement, sizeChangesMm, type SizeChanges } from '@/lib/fit/piece-size'
+import { jointMovement, sizeChangesMm } from '@/lib/fit/piece-size'
 import { movementOfKind } from '@/lib/fit/wood-kind'
 import {
   formatEmc,
@@ -141,18 +141,13 @@ function sizeFact(
   return {
     name,
     figure: `${signed(grown.diameterMostMm, units)} ${grown.words.most}`,
-    words: `${signed(grown.diameterLeastMm, units)} ${grown.words.least}; ${heightWords(grown, units)}.${stay}`,
+    words: `${signed(grown.diameterLeastMm, units)} ${grown.words.least}; ${formatLength(TOLD_HEIGHT_MM, units)} of its height ${signed(grown.heightMm, units)}, ${grown.words.height}.${stay}`,
   }
-}
-
-function heightWords({ heightMm, words }: SizeChanges, units: UnitSystem): string {
-  const of = `${formatLength(TOLD_HEIGHT_MM, units)} of its height`
-  if (Math.abs(heightMm) < NOTHING_MM) return `${of}, ${words.height}, hardly anything`
-  return `${of}, ${words.height}, ${signed(heightMm, units)}`
 }
 
 const signed = (lengthMm: number, units: UnitSystem): string => {
   const text = formatFineLength(Math.abs(lengthMm), units)
+  if (Math.abs(lengthMm) < NOTHING_MM) return 'hardly anything'
   return `${lengthMm < 0 ? '−' : '+'}${text}`
 }
 
