@@ -1,8 +1,14 @@
 import { z } from 'zod'
 import { formatMass } from '@/lib/format/figures'
 import { err, ok, type Result } from '@/lib/result'
-import { hasSlowedToHalf, noCurveWords, notHalfYetWords, weeklyRates } from '@/lib/seasoning/forecast'
-import { dayMs, forecastDoubtShareMax } from '@/lib/seasoning/policy'
+import {
+  hasSlowedToHalf,
+  isEndKnown,
+  noCurveWords,
+  notHalfYetWords,
+  weeklyRates,
+} from '@/lib/seasoning/forecast'
+import { dayMs } from '@/lib/seasoning/policy'
 import { endOfThree } from '@/lib/seasoning/three-weighings'
 import type { Direction } from '@/lib/seasoning/weighing'
 import { weighingFit, type WeighingFit } from '@/lib/seasoning/weighing-fit'
@@ -93,8 +99,7 @@ function answerOf(
 ): WeighingAnswer {
   const rates = fit === undefined ? undefined : weeklyRates(fit, weights)
   const isHalf = rates !== undefined && hasSlowedToHalf(rates)
-  const isWide =
-    fit === undefined || fit.finalHighG - fit.finalLowG > forecastDoubtShareMax * Math.abs(fit.amplitudeG)
+  const isWide = fit === undefined || !isEndKnown(fit)
   const flags: WeighingFlag[] = []
   if (!isHalf) flags.push('not-half-yet')
   if (isWide) flags.push('wide-doubt')

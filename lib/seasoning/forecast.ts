@@ -34,26 +34,34 @@ export const hasSlowedToHalf = (rates: WeeklyRates): boolean =>
  * @param stepG step of the scale, g, above 0
  * @throws RangeError as `weighingFit`
  */
-export function weighingForecast(
+export const weighingForecast = (
   weights: readonly Weight[],
   stepG: number,
   units: UnitSystem = 'metric',
+): Result<WeighingFit, NoForecast> => forecastFrom(weighingFit(weights, stepG), weights, units)
+
+/** The same from a fit that is made already. */
+export function forecastFrom(
+  fit: ReturnType<typeof weighingFit>,
+  weights: readonly Weight[],
+  units: UnitSystem = 'metric',
 ): Result<WeighingFit, NoForecast> {
-  const fit = weighingFit(weights, stepG)
   if (!fit.ok) return err({ code: fit.error.code, words: noCurveWords(fit.error.code, weights.length) })
   const rates = weeklyRates(fit.value, weights)
   if (!hasSlowedToHalf(rates))
     return err({ code: 'not-half-yet', words: notHalfYetWords(fit.value, rates, units) })
-  const { finalLowG, finalHighG } = fit.value
-  const seenG = Math.abs(fit.value.amplitudeG)
-  if (finalHighG - finalLowG > forecastDoubtShareMax * seenG) {
-    const range = `${formatMass(finalLowG, units)} to ${formatMass(finalHighG, units)}`
-    return err({
-      code: 'too-uncertain',
-      words: `It could end anywhere from ${range}. More weights will narrow that.`,
-    })
-  }
+  if (!isEndKnown(fit.value))
+    return err({ code: 'too-uncertain', words: tooUncertainWords(fit.value, units) })
   return fit
+}
+
+/** Whether the middle 8 in 10 of the end is narrow beside the change that the curve makes. */
+export const isEndKnown = ({ finalLowG, finalHighG, amplitudeG }: WeighingFit): boolean =>
+  finalHighG - finalLowG <= forecastDoubtShareMax * Math.abs(amplitudeG)
+
+function tooUncertainWords({ finalLowG, finalHighG }: WeighingFit, units: UnitSystem): string {
+  const range = `${formatMass(finalLowG, units)} to ${formatMass(finalHighG, units)}`
+  return `It could end anywhere from ${range}. More weights will narrow that.`
 }
 
 /** Why weights make no curve, in words. */

@@ -1,4 +1,5 @@
-import { furthestReadyMs, leastReadySpanMs, readyOverMs, readyWithinPct } from './policy'
+import { wetShare } from './drying-shape'
+import { dayMs, furthestReadyMs, leastReadySpanMs, readyOverMs, readyWithinPct } from './policy'
 import { weightedQuantile } from './weighted-quantile'
 import type { WeightCurve } from './weighing'
 import type { WeighingFit } from './weighing-fit'
@@ -40,10 +41,11 @@ const atLeastAWeek = (fromAt: number, toAt: number): ReadySpan => ({
 
 /** When one curve has been level for eight weeks and its MC lies within 0.7 points of the target; Infinity for never. */
 function readyAt(curve: WeightCurve, question: ReadySpanQuestion): number {
-  const size = Math.abs(curve.amplitudeG)
-  const overEightWeeks = size * (1 - Math.exp(-readyOverMs / curve.tauMs))
-  const level = curve.fromAt + timeTo(overEightWeeks, question.toleranceG, curve.tauMs) + readyOverMs
-  return Math.max(question.notBeforeAt, level, matchedAt(curve, question))
+  const share = question.toleranceG / Math.abs(curve.amplitudeG)
+  const { tauMs, shape } = curve
+  const stillWet = (sinceMs: number): number => wetShare(sinceMs, tauMs, shape)
+  const levelMs = timeTo((sinceMs) => stillWet(sinceMs) - stillWet(sinceMs + readyOverMs), share, tauMs)
+  return Math.max(question.notBeforeAt, curve.fromAt + levelMs + readyOverMs, matchedAt(curve, question))
 }
 
 function matchedAt(curve: WeightCurve, { target }: ReadySpanQuestion): number {
@@ -52,10 +54,26 @@ function matchedAt(curve: WeightCurve, { target }: ReadySpanQuestion): number {
   const endsOffG = curve.finalG - target.weightG
   if (Math.abs(endsOffG) > withinG) return Infinity
   // Above the target while drying, below it while gaining: what is left to go on that side.
-  const roomG = withinG - Math.sign(curve.amplitudeG) * endsOffG
-  return curve.fromAt + timeTo(Math.abs(curve.amplitudeG), roomG, curve.tauMs)
+  const leftG = withinG - Math.sign(curve.amplitudeG) * endsOffG
+  const { tauMs, shape } = curve
+  const share = leftG / Math.abs(curve.amplitudeG)
+  return curve.fromAt + timeTo((sinceMs) => wetShare(sinceMs, tauMs, shape), share, tauMs)
 }
 
-/** How long until something that dies away has come down to a size; 0 where it is smaller from the start. */
-const timeTo = (fromG: number, toG: number, tauMs: number): number =>
-  toG <= 0 ? Infinity : Math.max(0, tauMs * Math.log(fromG / toG))
+/** No curve is followed beyond this many time constants: what is left by then no scale shows. */
+const LONGEST_IN_TAUS = 30
+const TOLERANCE_MS = dayMs / 24
+
+/** How long until something that dies away has come down to a share; 0 where it is smaller from the start. */
+function timeTo(shareAfter: (sinceMs: number) => number, share: number, tauMs: number): number {
+  if (shareAfter(0) <= share) return 0
+  let low = 0
+  let high = LONGEST_IN_TAUS * tauMs
+  if (shareAfter(high) > share) return Infinity
+  while (high - low > TOLERANCE_MS) {
+    const middle = (low + high) / 2
+    if (shareAfter(middle) > share) low = middle
+    else high = middle
+  }
+  return high
+}

@@ -1,5 +1,5 @@
 import type { UnitSystem } from '@/lib/sites/site'
-import { weighingForecast, type NoForecast } from './forecast'
+import { forecastFrom, type NoForecast } from './forecast'
 import { dayMs } from './policy'
 import type { ReadySpan } from './ready-span'
 import { weightedQuantile } from './weighted-quantile'
@@ -16,7 +16,7 @@ export type RestingCurve = {
   }
   /** Through the weights as far as they go. */
   readonly fit?: { readonly at: number[]; readonly grams: number[] }
-  /** From the last weight on, with the middle 8 in 10. Never there beside `noForecast`. */
+  /** From the last weight on: the middle of all curves that the weights allow, and the middle 8 in 10 of them. Never there beside `noForecast`. */
   readonly forecast?: {
     readonly at: number[]
     readonly grams: number[]
@@ -61,7 +61,7 @@ export function restingCurve(
   }
   const fitted = curveWeights(weights)
   const fit = weighingFit(fitted, stepG)
-  const forecast = weighingForecast(fitted, stepG, units)
+  const forecast = forecastFrom(fit, fitted, units)
   return {
     weighings,
     ...(fit.ok ? { fit: fitColumns(fit.value) } : {}),
@@ -93,12 +93,11 @@ function forecastColumns(fit: WeighingFit, span: ReadySpan | undefined) {
       fit.draws.map((draw) => ({ value: curveG(draw, instant), weight: draw.weight })),
       share,
     )
-  const grams = at.map((instant) => curveG(fit, instant))
   return {
     at,
-    grams,
-    lowG: at.map((instant, n) => Math.min(grams[n] ?? Infinity, quantileG(instant, 0.1))),
-    highG: at.map((instant, n) => Math.max(grams[n] ?? -Infinity, quantileG(instant, 0.9))),
+    grams: at.map((instant) => quantileG(instant, 0.5)),
+    lowG: at.map((instant) => quantileG(instant, 0.1)),
+    highG: at.map((instant) => quantileG(instant, 0.9)),
   }
 }
 

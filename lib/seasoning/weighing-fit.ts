@@ -1,5 +1,6 @@
 import { assertFinite, assertFiniteAbove } from '@/lib/assert'
 import { err, ok, type Result } from '@/lib/result'
+import { START_SHAPES, wetShare, type DryingShape } from './drying-shape'
 import { LONGEST_TAU_OVER_RECORD, type NoCurve } from './three-weighings'
 import { weightedQuantile } from './weighted-quantile'
 import type { Direction, Weight, WeightCurve } from './weighing'
@@ -24,18 +25,28 @@ export type WeighingFit = WeightCurve & {
 
 /** Time constants tried, from a tenth of the shortest gap on. Finely enough that a cell holds one minimum. */
 const TAUS = 160
+const TOLERANCE = 1e-9
 const SHORTEST_TAU_OVER_GAP = 0.1
 const GOLDEN = (Math.sqrt(5) - 1) / 2
 /** A rounded weight that is also not put down twice alike: half a step, one standard deviation. A guess. */
 const SCATTER_OVER_STEP = 0.5
+/** No piece is a slab nor an exponential: this share of the change counts as scatter besides. A guess. */
+const SHAPE_ERROR_SHARE = 0.005
+/** Three weights fit any curve, so nothing shows how far the wood is from this one. A guess. */
+const SHAPE_ERROR_SHARE_OF_THREE = 0.01
 /** A fitted change smaller than so many scatters is no change one way. A guess, as "three sigma" is common practice. */
 const LEAST_CHANGE_IN_SCATTERS = 3
 /** Curves that count less than this beside the best are left out. */
 const LEAST_WEIGHT = 1e-4
-/** Time constants among those curves. */
-const DRAWN_TAUS = 48
-/** Middles of nine equal shares of the normal distribution, in standard deviations. */
-const NORMAL_NINTHS = [-1.5932, -0.9674, -0.5895, -0.2822, 0, 0.2822, 0.5895, 0.9674, 1.5932] as const
+/** Longest time constant among those curves, in records: with it a third of the change is over. A guess. */
+const LONGEST_DRAWN_OVER_RECORD = 5
+/** Time constants tried to find the best curve of a shape, where that only weighs it against others. */
+const SHAPE_TAUS = 40
+const SHAPE_TOLERANCE = 1e-5
+/** Time constants among those curves, for each shape. */
+const DRAWN_TAUS = 16
+/** Middles of five equal shares of the normal distribution, in standard deviations. */
+const NORMAL_FIFTHS = [-1.2816, -0.5244, 0, 0.5244, 1.2816] as const
 
 type Linear = { finalG: number; amplitudeG: number; squaresG2: number; leverage: number; meanShape: number }
 
@@ -48,9 +59,11 @@ type Linear = { finalG: number; amplitudeG: number; squaresG2: number; leverage:
  * @throws RangeError for weights out of order, or an input out of range or NaN
  *
  * For a given tau the other two are a straight regression, so only tau is searched: on a logarithmic grid, then by
- * golden section. The doubt comes from the profile of the squares over that grid, with the scatter taken as the larger
- * of half a step and what the residuals show, and for each tau the normal spread of the final weight.
- * Source: derived; regression as in any textbook, the profile by the likelihood of normal errors.
+ * golden section. The doubt comes from the profile of the squares over tau, with the scatter taken as the larger of half
+ * a step and what the residuals show, and a little of the change for what no curve gets right, and for each tau the normal spread of the final weight. It takes in that wood
+ * starts faster than an exponential: curves of a slab that was so far along count beside it, each as well as it fits.
+ * Source: derived; regression as in any textbook, the profile by the likelihood of normal errors, the slab by Crank,
+ * The Mathematics of Diffusion (1975), ch. 4.
  */
 export function weighingFit(
   weights: readonly Weight[],
@@ -66,26 +79,28 @@ export function weighingFit(
 
   const times = weights.map((weight) => weight.at - first.at)
   const record = last.at - first.at
-  const taus = tausBetween(SHORTEST_TAU_OVER_GAP * shortestGap(times), LONGEST_TAU_OVER_RECORD * record)
-  const lines = taus.map((tauMs) => ({ tauMs, ...lineAt(times, grams, tauMs) }))
-  const least = Math.min(...lines.map((line) => line.squaresG2))
-  const at = lines.findIndex((line) => line.squaresG2 === least)
-  if (at === lines.length - 1) return err({ code: 'not-slowing' })
-  const tauMs = refined(times, grams, taus[at - 1] ?? taus[at] ?? record, taus[at + 1] ?? record)
-  const best = lineAt(times, grams, tauMs)
+  const shortest = SHORTEST_TAU_OVER_GAP * shortestGap(times)
+  const series = { times, grams }
+  const found = bestTau(
+    series,
+    undefined,
+    tausBetween(shortest, LONGEST_TAU_OVER_RECORD * record, TAUS),
+    TOLERANCE,
+  )
+  if (found.isLongest) return err({ code: 'not-slowing' })
+  const { tauMs } = found
+  const best = lineAt(series, tauMs, undefined)
 
-  const left = weights.length - 3
-  const scatterG = Math.max(SCATTER_OVER_STEP * stepG, left === 0 ? 0 : Math.sqrt(best.squaresG2 / left))
   const change = Math.abs(best.amplitudeG) * (1 - Math.exp(-record / tauMs))
+  const left = weights.length - 3
+  const residualG = left === 0 ? 0 : Math.sqrt(best.squaresG2 / left)
+  const shapeG = (left === 0 ? SHAPE_ERROR_SHARE_OF_THREE : SHAPE_ERROR_SHARE) * change
+  const scatterG = Math.hypot(Math.max(SCATTER_OVER_STEP * stepG, residualG), shapeG)
   if (change < LEAST_CHANGE_IN_SCATTERS * scatterG) return err({ code: 'not-one-way' })
   if (best.finalG <= 0) return err({ code: 'not-slowing' })
 
-  const draws = drawsOf(
-    first.at,
-    { times, grams },
-    { tauMs, squaresG2: best.squaresG2, scatterG },
-    { fromMs: SHORTEST_TAU_OVER_GAP * shortestGap(times), toMs: LONGEST_TAU_OVER_RECORD * record },
-  )
+  const drawn = tausBetween(shortest, LONGEST_DRAWN_OVER_RECORD * record, SHAPE_TAUS)
+  const draws = drawsOf(first.at, series, drawn, scatterG)
   const finals = draws.map((draw) => ({ value: draw.finalG, weight: draw.weight }))
   const constants = draws.map((draw) => ({ value: draw.tauMs, weight: draw.weight }))
   return ok({
@@ -119,15 +134,17 @@ function assertSeries(weights: readonly Weight[]): void {
 const shortestGap = (times: readonly number[]): number =>
   Math.min(...times.slice(1).map((time, n) => time - (times[n] ?? 0)))
 
-const tausBetween = (from: number, to: number): number[] =>
-  Array.from({ length: TAUS }, (_, n) => from * (to / from) ** (n / (TAUS - 1)))
+const tausBetween = (from: number, to: number, count: number): number[] =>
+  Array.from({ length: count }, (_, n) => from * (to / from) ** (n / (count - 1)))
 
 const mean = (values: readonly number[]): number =>
   values.reduce((sum, value) => sum + value, 0) / values.length
 
-/** The straight regression of the weights on exp(-t / tau). */
-function lineAt(times: readonly number[], grams: readonly number[], tauMs: number): Linear {
-  const shapes = times.map((time) => Math.exp(-time / tauMs))
+type Series = { readonly times: readonly number[]; readonly grams: readonly number[] }
+
+/** The straight regression of the weights on a shape with that time constant. */
+function lineAt({ times, grams }: Series, tauMs: number, shape: DryingShape | undefined): Linear {
+  const shapes = times.map((time) => wetShare(time, tauMs, shape))
   const meanShape = mean(shapes)
   const meanG = mean(grams)
   const leverage = shapes.reduce((sum, shape) => sum + (shape - meanShape) ** 2, 0)
@@ -141,12 +158,29 @@ function lineAt(times: readonly number[], grams: readonly number[], tauMs: numbe
   return { finalG, amplitudeG, squaresG2, leverage, meanShape }
 }
 
+/** The time constant with the least squares, and whether it is the longest that was tried: no end in sight. */
+function bestTau(series: Series, shape: DryingShape | undefined, taus: readonly number[], tolerance: number) {
+  const squares = taus.map((tauMs) => lineAt(series, tauMs, shape).squaresG2)
+  const at = squares.indexOf(Math.min(...squares))
+  const isLongest = at === taus.length - 1
+  const [low = 0, middle = 0] = [taus[at - 1] ?? taus[at], taus[at]]
+  return {
+    isLongest,
+    tauMs: isLongest ? middle : refined(series, shape, [low, taus[at + 1] ?? middle], tolerance),
+  }
+}
+
 /** Golden section on the logarithm of tau, which is where the squares look like a bowl. */
-function refined(times: readonly number[], grams: readonly number[], from: number, to: number): number {
-  const squares = (log: number): number => lineAt(times, grams, Math.exp(log)).squaresG2
+function refined(
+  series: Series,
+  shape: DryingShape | undefined,
+  [from, to]: readonly [number, number],
+  tolerance: number,
+): number {
+  const squares = (log: number): number => lineAt(series, Math.exp(log), shape).squaresG2
   let low = Math.log(from)
   let high = Math.log(to)
-  while (high - low > 1e-9) {
+  while (high - low > tolerance) {
     const width = GOLDEN * (high - low)
     if (squares(high - width) < squares(low + width)) high = low + width
     else low = high - width
@@ -159,7 +193,7 @@ function edgeOf(squares: (log: number) => number, best: number, limit: number, m
   if (squares(limit) <= mostG2) return limit
   let inside = best
   let outside = limit
-  while (Math.abs(outside - inside) > 1e-6) {
+  while (Math.abs(outside - inside) > 1e-4 * Math.abs(limit - best)) {
     const middle = (inside + outside) / 2
     if (squares(middle) <= mostG2) inside = middle
     else outside = middle
@@ -167,32 +201,47 @@ function edgeOf(squares: (log: number) => number, best: number, limit: number, m
   return inside
 }
 
-/** Curves that fit nearly as well: each tau by its squares, each with nine final weights of equal share. */
-function drawsOf(
-  fromAt: number,
-  series: { times: readonly number[]; grams: readonly number[] },
-  best: { tauMs: number; squaresG2: number; scatterG: number },
-  limits: { fromMs: number; toMs: number },
-): CurveDraw[] {
-  const { scatterG } = best
-  const squares = (log: number): number => lineAt(series.times, series.grams, Math.exp(log)).squaresG2
-  const mostG2 = best.squaresG2 - 2 * scatterG ** 2 * Math.log(LEAST_WEIGHT)
-  const low = edgeOf(squares, Math.log(best.tauMs), Math.log(limits.fromMs), mostG2)
-  const high = edgeOf(squares, Math.log(best.tauMs), Math.log(limits.toMs), mostG2)
-  const draws = Array.from({ length: DRAWN_TAUS }, (_, n) => {
-    const tauMs = Math.exp(low + ((high - low) * (n + 0.5)) / DRAWN_TAUS)
-    const line = lineAt(series.times, series.grams, tauMs)
-    const weight = Math.exp((best.squaresG2 - line.squaresG2) / (2 * scatterG ** 2))
-    // The mean weight is well known; what is not is the slope, and with it where the line meets exp(-t / tau) = 0.
-    const slopeSd = scatterG / Math.sqrt(line.leverage)
-    return NORMAL_NINTHS.map((deviation) => ({
-      fromAt,
-      tauMs,
-      finalG: line.finalG - deviation * slopeSd * line.meanShape,
-      amplitudeG: line.amplitudeG + deviation * slopeSd,
-      weight,
-    }))
-  }).flat()
+/** Curves that fit nearly as well, of every shape: each tau by its squares, each with five equal shares of the end. */
+function drawsOf(fromAt: number, series: Series, taus: readonly number[], scatterG: number): CurveDraw[] {
+  const candidates = START_SHAPES.map((shape) => {
+    const { tauMs } = bestTau(series, shape, taus, SHAPE_TOLERANCE)
+    return { shape, bestLog: Math.log(tauMs), leastG2: lineAt(series, tauMs, shape).squaresG2 }
+  })
+  const leastG2 = Math.min(...candidates.map((candidate) => candidate.leastG2))
+  const mostG2 = leastG2 - 2 * scatterG ** 2 * Math.log(LEAST_WEIGHT)
+  const limits = [Math.log(taus[0] ?? 1), Math.log(taus.at(-1) ?? 1)] as const
+  const draws = candidates
+    .filter((candidate) => candidate.leastG2 <= mostG2)
+    .flatMap(({ shape, bestLog }) => {
+      const squares = (log: number): number => lineAt(series, Math.exp(log), shape).squaresG2
+      const low = edgeOf(squares, bestLog, limits[0], mostG2)
+      const high = edgeOf(squares, bestLog, limits[1], mostG2)
+      return Array.from({ length: DRAWN_TAUS }, (_, n) => {
+        const tauMs = Math.exp(low + ((high - low) * (n + 0.5)) / DRAWN_TAUS)
+        const line = lineAt(series, tauMs, shape)
+        const likely = Math.exp((leastG2 - line.squaresG2) / (2 * scatterG ** 2))
+        // Each stands for a stretch of log tau, so that a shape with a sharper minimum does not count for more.
+        return likely < LEAST_WEIGHT
+          ? []
+          : endsOf(line, { fromAt, tauMs, shape }, scatterG, likely * (high - low))
+      }).flat()
+    })
   const sum = draws.reduce((total, draw) => total + draw.weight, 0)
   return draws.map((draw) => ({ ...draw, weight: draw.weight / sum }))
+}
+
+function endsOf(
+  { finalG, amplitudeG, leverage, meanShape }: Linear,
+  curve: { fromAt: number; tauMs: number; shape: DryingShape | undefined },
+  scatterG: number,
+  weight: number,
+): CurveDraw[] {
+  // The mean weight is well known; what is not is the slope, and with it where the line meets a share of 0.
+  const slopeSd = scatterG / Math.sqrt(leverage)
+  return NORMAL_FIFTHS.map((deviation) => ({
+    ...curve,
+    finalG: finalG - deviation * slopeSd * meanShape,
+    amplitudeG: amplitudeG + deviation * slopeSd,
+    weight,
+  }))
 }
