@@ -56,6 +56,7 @@ export function FirstPiece({ reader, rooms, woods, number, roomId }: FirstPieceP
   })
   const values = useWatch({ control: form.control })
   const isBox = values.stage === 'box'
+  const wood = woods.find((one) => one.slug === values.wood)
   // Wild grain moves its own way, and stabilised wood isn't worked out to move: no time out is told for either.
   const isReckoned = values.woodKind !== 'wild' && values.woodKind !== 'stabilised'
   const keep = useAction<{ body: NewPiece; isGoingOut: boolean }, Piece>({
@@ -104,15 +105,15 @@ export function FirstPiece({ reader, rooms, woods, number, roomId }: FirstPieceP
             hint="Common or Latin name. Not sure? Say so: the doubt gets wider, that’s all."
             woods={woods}
             value={values.wood ?? null}
-            onChange={(wood) => {
-              form.setValue('wood', wood, { shouldDirty: true })
+            onChange={(chosen) => {
+              form.setValue('wood', chosen, { shouldDirty: true })
             }}
             kind={values.woodKind ?? 'plain'}
             onKindChange={(kind) => {
               form.setValue('woodKind', kind, { shouldDirty: true })
             }}
           />
-          {values.wood ? <WoodCare wood={woods.find((wood) => wood.slug === values.wood)} /> : null}
+          {values.wood ? <WoodCare wood={wood} /> : null}
           <Field
             label={isBox ? 'Joint, outside of the spigot, straight across' : 'Diameter, straight across'}
             error={lengthError(values.jointDiameterMm, errorOf('jointDiameterMm'))}
@@ -161,6 +162,7 @@ export function FirstPiece({ reader, rooms, woods, number, roomId }: FirstPieceP
           <FirstAnswerLine
             answers={{
               wood: values.wood ?? null,
+              ownFigures: wood,
               jointDiameterMm: inRange(values.jointDiameterMm),
               fitGrade: values.fitGrade ?? null,
             }}
