@@ -13,6 +13,7 @@ import { Refusals } from '../../_components/field-word'
 import { useFields } from '../../_components/use-fields'
 import { useLastGood } from '../../_components/use-last-good'
 import { useUnits } from '../../_components/use-units'
+import { CutSheet } from './cut-sheet'
 import { fitFields, type FitField, fits, grains, idleFields, kinds, lidWays, tellings } from './fit-fields'
 import { benchFit, fitFacts, fitSentence, fitTwins } from './fit-model'
 import { FitSentence } from './fit-sentence'
@@ -76,6 +77,7 @@ export function FitBench() {
               <GradeTable courses={shown.courses} units={units} />
             </Sheet>
           ) : null}
+          <CutSheet choices={choices} diameterMm={shown.diameterMm} />
         </div>
       )}
       <div className="px-4 sm:px-0">

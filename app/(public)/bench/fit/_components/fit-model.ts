@@ -36,6 +36,7 @@ export type Moisture = {
 
 export type BenchFit = {
   readonly choices: FitChoices
+  readonly diameterMm: number
   readonly moisture: Moisture
   readonly wood: WoodMovement
   readonly lidWood: WoodMovement
@@ -81,7 +82,8 @@ export function benchFit(values: FitValues, choices: FitChoices): BenchFit {
   const wood = woodMovement(choices.wood === '' ? undefined : choices.wood)
   const lidWood = choices.lidWood === '' ? wood : woodMovement(choices.lidWood)
   const moisture = moistureOf(values, choices)
-  const asked = { choices, moisture, wood, lidWood }
+  const { diameterMm } = values
+  const asked = { choices, diameterMm, moisture, wood, lidWood }
   const moves = movementOfKind(choices.kind, wood)
   if (moves.kind === 'not-worked-out') return { ...asked, kind: 'words', words: moves.words }
   if (choices.fit === 'threaded') return { ...asked, kind: 'words', words: THREADED_WORDS }
@@ -92,7 +94,6 @@ export function benchFit(values: FitValues, choices: FitChoices): BenchFit {
     movementDoubt: of.movementDoubt,
   })
   const [clearanceMm, clearanceDoubtMm] = clearanceOf(values, choices)
-  const { diameterMm } = values
   const spigot = part(wood, moisture.basePct)
   const socket = part(lidWood, moisture.lidPct)
   const isOne = choices.lidWood === '' && choices.lid === 'same'
