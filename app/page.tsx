@@ -22,16 +22,24 @@ export default async function LandingPage() {
   return (
     <PublicShell
       actions={
-        user ? (
-          <ButtonLink href="/sites">Your sites</ButtonLink>
-        ) : (
-          <>
-            <TextLink href="/sign-in" className="inline-flex min-h-11 items-center">
-              Sign in
-            </TextLink>
-            <ButtonLink href="/sign-up">Make an account</ButtonLink>
-          </>
-        )
+        <>
+          <TextLink href="/bench" className="inline-flex min-h-11 items-center">
+            The open bench
+          </TextLink>
+          <TextLink href="/method" prefetch={false} className="inline-flex min-h-11 items-center">
+            How it works things out
+          </TextLink>
+          {user ? (
+            <ButtonLink href="/sites">Your sites</ButtonLink>
+          ) : (
+            <>
+              <TextLink href="/sign-in" className="inline-flex min-h-11 items-center">
+                Sign in
+              </TextLink>
+              <ButtonLink href="/sign-up">Make an account</ButtonLink>
+            </>
+          )}
+        </>
       }
     >
       <h1 className="px-4 text-[32px] leading-[40px] sm:px-0 sm:text-display sm:leading-[52px]">
@@ -39,15 +47,21 @@ export default async function LandingPage() {
         before you carry the box through the door.
       </h1>
       <LandingFigure />
-      {hasDemo ? (
-        <div className="flex flex-wrap items-center gap-x-5 gap-y-3 px-4 sm:px-0">
-          <TryDemo />
-          <p className="max-w-[34rem] text-label text-ink-soft">
-            The demo is a made-up workshop, shared by whoever looks in. Nothing in it comes from a real person
-            or place. <TextLink href="/demo-inbox">The mails that it sends</TextLink>
-          </p>
-        </div>
-      ) : null}
+      <div className="flex flex-wrap items-center gap-x-5 gap-y-3 px-4 sm:px-0">
+        {hasDemo ? <TryDemo /> : null}
+        <ButtonLink href="/bench/time-out" className="max-sm:w-full">
+          Ask about your own box
+        </ButtonLink>
+        <p className="max-w-[34rem] text-label text-ink-soft">
+          The open bench needs no account.{' '}
+          {hasDemo ? (
+            <>
+              The demo is a made-up workshop, shared by whoever looks in. Nothing in it comes from a real
+              person or place. <TextLink href="/demo-inbox">The mails that it sends</TextLink>
+            </>
+          ) : null}
+        </p>
+      </div>
       {user ? null : (
         <Sheet>
           <SignInForm next="/sites" isWide />

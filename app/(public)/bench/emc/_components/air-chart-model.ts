@@ -30,7 +30,10 @@ export function lineOfEmc(emcPct: number, domain: readonly [number, number]): Ai
   })
 }
 
-/** The same air at other temperatures, no water added or taken, up to where it condenses. */
+/** The plot cuts a line off at saturation; one point beyond lets it reach there. */
+const BEYOND_PCT = 120
+
+/** The same air at other temperatures, no water added or taken, up to a little past where it condenses. */
 export function lineOfSameAir(air: AirPoint, domain: readonly [number, number]): AirPoint[] {
   return temperatures(domain)
     .concat(air.temperatureC)
@@ -39,7 +42,7 @@ export function lineOfSameAir(air: AirPoint, domain: readonly [number, number]):
       temperatureC,
       humidityPct: humidityAfterTemperatureChangePct(air.humidityPct, air.temperatureC, temperatureC),
     }))
-    .filter((point) => point.humidityPct <= 100)
+    .filter((point) => point.humidityPct <= BEYOND_PCT)
 }
 
 /** Whole temperatures for the axis, with what is written there. */
