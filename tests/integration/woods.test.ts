@@ -4,7 +4,10 @@ import { getPiece, listPieces, piecesQuerySchema } from '@/app/_server/pieces'
 import { archiveWood, changeWood, createWood, restoreWood } from '@/app/_server/wood-changes'
 import { getWood, listWoods, offeredWoods, woodsQuerySchema } from '@/app/_server/woods'
 import type { SiteMember } from '@/db/queries/members'
+import { loadCarryMaterial } from '@/db/queries/carry-inputs'
+import { findPiece } from '@/db/queries/pieces'
 import { listSiteWoods } from '@/db/queries/site-woods'
+import { jointOfPiece } from '@/lib/carry/joint-defaults'
 import { newPieceSchema } from '@/lib/pieces/piece'
 import { movementOfWood, woodMovement } from '@/lib/wood/movement-class'
 import { newSiteWoodSchema, resolveWood } from '@/lib/wood/site-wood'
@@ -140,6 +143,24 @@ describe("a site's own wood", () => {
       )
     expect(await found('fiddle')).toEqual(['V1'])
     expect(await found('sissoo')).toEqual(['V1'])
+  })
+
+  it('is what its pieces are worked out by', async () => {
+    const figures = { radialPerPct: 0.001, tangentialPerPct: 0.009 }
+    const lively = await make({ commonName: 'Lively', ...figures })
+    const made = valueOf(await createPiece(database.db, maker, piece('L1', lively.slug), now))
+    expect(made.assumed).toContain('density 650 kg/m³')
+    expect(made.assumed.join(' ')).not.toMatch(/wood not known/)
+    const still = valueOf(await createPiece(database.db, maker, piece('L2', 'tectona-grandis'), now))
+    const lossMmPerPct = async (code: string) => {
+      const found = await findPiece(database.db, yard.siteId, code, { userId: maker.userId, role: 'maker' })
+      const id = found?.id ?? 0
+      const facts = (await loadCarryMaterial(database.db, maker, [id], [], now)).pieces.get(id)?.facts
+      return facts && jointOfPiece(facts)?.lossMmPerPct
+    }
+    // 60 mm times the difference of the two directions, for each point.
+    expect(await lossMmPerPct(made.id)).toBeCloseTo(60 * 0.008, 3)
+    expect(await lossMmPerPct(still.id)).toBeCloseTo(60 * 0.00116, 3)
   })
 
   it('of another site makes no piece', async () => {
