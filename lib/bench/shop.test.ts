@@ -1,3 +1,4 @@
+import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { shopAnswer, shopQuerySchema } from './shop'
 
@@ -73,5 +74,38 @@ describe('/bench/shop', () => {
     ['volumeM3', { volumeM3: '0' }],
   ])('refuses %s that is wrong, naming it', (path, change) => {
     expect(refusedPaths({ ...damp, ...change } as Record<string, string>)).toEqual([path])
+  })
+
+  it('answers every shop within the ranges, without a figure that is none', () => {
+    const within = (min: number, max: number) =>
+      fc
+        .oneof(fc.constantFrom(min, max), fc.double({ min, max, noNaN: true }))
+        .map((value) => value.toFixed(6))
+    const shops = fc.record(
+      {
+        volumeM3: within(0.001, 100_000),
+        temperatureC: within(-10, 50),
+        humidityPct: within(0, 100),
+        targetEmcPct: within(0, 30),
+        outdoorC: within(-10, 50),
+        outdoorHumidityPct: within(0, 100),
+        airChangesPerH: within(0, 50),
+        woodKg: within(0, 100_000),
+        shellWPerK: within(0, 10_000),
+        heater: fc.constantFrom('electric', 'flued', 'unflued'),
+        surfaceC: within(-40, 60),
+      },
+      { requiredKeys: ['volumeM3', 'temperatureC', 'humidityPct', 'targetEmcPct', 'outdoorC'] },
+    )
+    fc.assert(
+      fc.property(shops, (shop) => {
+        const answer = answerTo(shop as Record<string, string>)
+        const sent = JSON.stringify(answer)
+        expect(sent).not.toMatch(/null|NaN|Infinity|undefined/)
+        expect(answer.isDryEnough).toBe(answer.dryToHumidityPct === undefined)
+        if (answer.isReachedByWarming) expect(answer.warmToC).toBeLessThanOrEqual(35)
+      }),
+      { numRuns: 300 },
+    )
   })
 })

@@ -1,3 +1,4 @@
+import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { weighingAnswer, weighingQuerySchema, type WeighingAnswer } from './weighing'
 
@@ -90,5 +91,23 @@ describe('/bench/weighing', () => {
     if (parsed.success) throw new Error('it was not refused')
     expect(parsed.error.issues.map((issue) => issue.path.join('.'))).toEqual(['grams'])
     expect(parsed.error.issues[0]?.message).toMatch(/from 0\.001 to 200000 g/)
+  })
+
+  it('answers or refuses any weights, without a figure that is none', () => {
+    const weights = fc.array(fc.integer({ min: 1, max: 2_000_000 }), { minLength: 3, maxLength: 8 })
+    fc.assert(
+      fc.property(weights, fc.boolean(), fc.constantFrom('0.01', '7', '366'), (tenths, isFalling, every) => {
+        const grams = tenths.map((tenth) => tenth / 10)
+        if (isFalling) grams.sort((a, b) => b - a)
+        const answer = ask(grams.join(','), every)
+        const sent = JSON.stringify(answer)
+        expect(sent).not.toMatch(/null|NaN|Infinity/)
+        if (!answer.ok) return
+        expect(answer.value.finalGrams).toBeGreaterThan(0)
+        if (answer.value.finalGramsLow !== undefined) expect(answer.value.finalGramsLow).toBeGreaterThan(0)
+        expect(answer.value.timeConstantDays).toBeGreaterThan(0)
+      }),
+      { numRuns: 40 },
+    )
   })
 })

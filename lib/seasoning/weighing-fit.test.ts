@@ -120,7 +120,7 @@ describe('least squares', () => {
         expect(fit.finalLowG).toBeLessThanOrEqual(fit.finalG)
         expect(fit.finalHighG).toBeGreaterThanOrEqual(fit.finalG)
       }),
-      { numRuns: 60 },
+      { numRuns: 30 },
     )
   })
 
@@ -143,7 +143,7 @@ describe('least squares', () => {
           expect(fit.tauMs / closed.value.tauMs).toBeCloseTo(1, 4)
         },
       ),
-      { numRuns: 40 },
+      { numRuns: 25 },
     )
   })
 
@@ -171,7 +171,7 @@ describe('least squares', () => {
     const uniform = () => (seed = (seed * 1_103_515_245 + 12_345) % 2 ** 31) / 2 ** 31
     const normal = () => Math.sqrt(-2 * Math.log(uniform() + 1e-12)) * Math.cos(2 * Math.PI * uniform())
     const at = [0, 10, 20, 30, 40, 50, 60, 70, 80]
-    const trials = Array.from({ length: 200 }, () => {
+    const trials = Array.from({ length: 100 }, () => {
       const weights = onCurve(300, 40, 30, at).map((weight) => ({
         ...weight,
         grams: weight.grams + 0.5 * normal(),

@@ -28,7 +28,7 @@ export const heaterWaterKgPerKwh = (kind: HeaterKind): number =>
  * Humidity of a room in the long run, held warm by a heater while air from outside comes in.
  * @param room volumeM3 above 0; airChangesPerH above 0 to 50; temperatureC held, -10 to 50 °C
  * @param incomingRatio humidity ratio of the air that comes in, kg/kg
- * @param waterKgPerH water that the heater adds, kg an hour, 0 or more
+ * @param waterKgPerH water that the heater adds, kg an hour, 0 to 1000000
  * @returns % RH; over 100 means that water condenses in the room. Not clipped.
  * @throws RangeError for an input out of range or NaN
  *
@@ -45,7 +45,7 @@ export function heatedHumidityPct(
   assertInRange('airChangesPerH', room.airChangesPerH, 0, 50)
   assertInRange('temperatureC', room.temperatureC, -10, 50)
   assertInRange('incomingRatio', incomingRatio, 0, 1)
-  assertInRange('waterKgPerH', waterKgPerH, 0, 1000)
+  assertInRange('waterKgPerH', waterKgPerH, 0, 1_000_000)
   const ratio = incomingRatio + waterKgPerH / (room.airChangesPerH * room.volumeM3 * AIR_DENSITY_KG_M3)
   const vapourPa = (STANDARD_PRESSURE_PA * ratio) / (WATER_TO_AIR_MASS_RATIO + ratio)
   return (100 * vapourPa) / saturationPressurePa(room.temperatureC, 'water')
