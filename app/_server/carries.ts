@@ -9,6 +9,7 @@ import { lockPieces } from '@/db/queries/piece-writes'
 import type { PieceRecord } from '@/db/queries/pieces'
 import type { RoomRecord } from '@/db/queries/rooms'
 import { inTransaction } from '@/db/queries/transaction'
+import { followPieces } from '@/db/queries/follow-pieces'
 import type { Database } from '@/db/schema'
 import {
   type Carry,
@@ -121,7 +122,12 @@ export async function createCarry(
       },
       now,
     )
-    if (start !== undefined) await setOut(trx, member, carry.id, start.value)
+    if (start !== undefined) {
+      await setOut(trx, member, carry.id, start.value)
+      // What is logged as out since a while ago takes its wood with it.
+      const pieceIds = found.value.pieces.map((piece) => piece.id)
+      if (outAt < now) await followPieces(trx, member, pieceIds, now)
+    }
     await notifySite(trx, member.siteId, 'carry', carry.code)
     return getCarry(trx, member, carry.code, now)
   })

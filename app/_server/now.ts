@@ -8,9 +8,7 @@ import { listSensorRecords, type SensorRecord } from '@/db/queries/sensors'
 import { countPieces } from '@/db/queries/site-counts'
 import type { Database } from '@/db/schema'
 import type { Carry } from '@/lib/carry/carry'
-import { ringOfPiece } from '@/lib/carry/joint-defaults'
-import { baselineOf, type CarryMaterial, historyOfPiece } from '@/lib/carry/material'
-import { ringMoisture } from '@/lib/carry/ring-moisture'
+import { type CarryMaterial, woodAt } from '@/lib/carry/material'
 import { undoBringBackMs } from '@/lib/notices/policy'
 import { nowHeadline } from '@/lib/now/headline'
 import { needs, type SensorForNeeds } from '@/lib/now/needs'
@@ -107,15 +105,14 @@ function shelfPiece(piece: PieceRecord, material: CarryMaterial): ShelfPiece | u
   const own = material.pieces.get(piece.id)
   if (own === undefined || piece.isHidden || piece.stage !== 'box' || piece.woodKind !== 'plain')
     return undefined
-  const input = { history: historyOfPiece(material, own), baselineEmcPct: baselineOf(material, own) }
-  const moisture = ringMoisture(ringOfPiece(own.facts), input, material.now.getTime())
-  if (moisture === undefined) return undefined
+  const wood = woodAt(material, own, material.now.getTime())
+  if (wood === null) return undefined
   return {
     number: piece.number,
     title: pieceTitle(piece),
     outline: pieceOutline(piece),
     isOut: piece.isOut,
-    mcPct: moisture.mcPct,
+    mcPct: wood.ringPct,
   }
 }
 

@@ -17,6 +17,7 @@ import { movePiece } from '@/db/queries/places'
 import { findRoom } from '@/db/queries/rooms'
 import { findSiteWood } from '@/db/queries/site-woods'
 import { inTransaction } from '@/db/queries/transaction'
+import { followPieces } from '@/db/queries/follow-pieces'
 import type { Database } from '@/db/schema'
 import { formatMoment } from '@/lib/format/times'
 import type { NewPiece, PieceChange, PieceDetail } from '@/lib/pieces/piece'
@@ -88,6 +89,7 @@ export async function createPiece(
     const piece = await insertPiece(trx, member.siteId, input, rooms.value, member.userId, now)
     const place = { roomId: room.id, cover: 'closed' as const, at: now, carryId: null }
     await movePiece(trx, member.siteId, piece.id, { ...place, userId: member.userId })
+    await followPieces(trx, member, [piece.id], now)
     await notifySite(trx, member.siteId, 'piece', piece.code)
     return getPiece(trx, member, piece.code, now)
   })
@@ -133,6 +135,7 @@ export async function changePiece(
       return numberTaken()
     const { keepRoomId: _keep, fittedRoomId: _fitted, ...facts } = change
     await updatePiece(trx, member.siteId, piece.id, version, facts, rooms.value)
+    await followPieces(trx, member, [piece.id], now)
     await insertChange(trx, member.siteId, {
       userId: member.userId,
       subjectKind: 'piece',
@@ -247,6 +250,7 @@ export async function moveToRoom(
       carryId: null,
       userId: member.userId,
     })
+    await followPieces(trx, member, [piece.id], now)
     await notifySite(trx, member.siteId, 'piece', piece.code)
     return getPiece(trx, member, piece.code, now)
   })

@@ -8,9 +8,10 @@ import { findPiece, type PieceRecord } from '@/db/queries/pieces'
 import { listPlaces } from '@/db/queries/places'
 import { findRoom, listRoomRecords } from '@/db/queries/rooms'
 import type { Database } from '@/db/schema'
-import { jointOfPiece, ringOfPiece } from '@/lib/carry/joint-defaults'
-import { baselineOf, historyOfPiece, type PieceMaterial } from '@/lib/carry/material'
-import { ringMoisture } from '@/lib/carry/ring-moisture'
+import { jointOfPiece } from '@/lib/carry/joint-defaults'
+import { lossMm } from '@/lib/carry/joint-loss'
+import { type CarryMaterial, type PieceMaterial, woodAt } from '@/lib/carry/material'
+import { mcDoubtPct } from '@/lib/follow/doubt'
 import { type Piece, type PieceDetail, pieceListQuerySchema } from '@/lib/pieces/piece'
 import { assumedWords, type McNow, pieceCautions, pieceDust, pieceHeadline } from '@/lib/pieces/words'
 import { ok } from '@/lib/result'
@@ -91,6 +92,11 @@ async function openDetail(
     spigotMm: piece.spigotMm,
     lidMm: piece.lidMm,
     bodyWallMm: piece.bodyWallMm,
+    lidWallMm: piece.lidWallMm,
+    blankDiameterMm: piece.blankDiameterMm,
+    endsSealed: piece.endsSealed,
+    roughedOn: piece.roughedOn,
+    isReadyByWeight: piece.isReadyByWeight,
     clearanceMm: piece.clearanceMm,
     allowanceMm: piece.allowanceMm,
     finish: piece.finish,
@@ -102,9 +108,9 @@ async function openDetail(
     isYours: piece.ownerUserId === member.userId,
     isArchived: piece.archivedAt !== null,
     createdAt: piece.createdAt.toISOString(),
-    assumed: assumedWords(piece, {
+    assumed: assumedWords(own?.facts ?? piece, {
       keepRoomName: own?.isKeepRoomAssumed === true ? await keepName(db, member, own) : null,
-      isCutAssumed: own?.cutMcPct === null,
+      isCutAssumed: own?.cut === null,
     }),
     headline: pieceHeadline({ ...piece, roomName: room?.name ?? null, mc }),
     mc,
@@ -130,22 +136,24 @@ async function keepName(
 }
 
 /** Where the ring of its joint stands now. Null for pieces whose wood is not reckoned, or with no air on record. */
-function mcNow(own: PieceMaterial, material: Parameters<typeof historyOfPiece>[0], now: Date): McNow | null {
-  if (own.facts.stage !== 'box' || own.facts.woodKind === 'wild' || own.facts.woodKind === 'stabilised')
-    return null
-  const input = { history: historyOfPiece(material, own), baselineEmcPct: baselineOf(material, own) }
-  const moisture = ringMoisture(ringOfPiece(own.facts), input, now.getTime())
-  if (moisture === undefined) return null
-  const joint = own.facts.fitGrade === 'threaded' ? undefined : jointOfPiece(own.facts)
-  const cutMcPct = own.cutMcPct ?? moisture.mcPct
-  const lossMm = joint === undefined ? null : joint.lossMmPerPct * Math.abs(moisture.mcPct - cutMcPct)
+function mcNow(own: PieceMaterial, material: CarryMaterial, now: Date): McNow | null {
+  if (own.facts.woodKind === 'wild' || own.facts.woodKind === 'stabilised') return null
+  const wood = woodAt(material, own, now.getTime())
+  if (wood === null) return null
+  const joint = own.facts.stage === 'box' ? jointOfPiece(own.facts) : undefined
+  const cut = own.cut ?? { ringMcPct: wood.ringPct, lidMcPct: wood.lidPct }
+  const lost =
+    joint === undefined
+      ? null
+      : Math.max(0, lossMm(joint.loss, wood.ringPct - cut.ringMcPct, wood.lidPct - cut.lidMcPct))
   const allowanceMm = joint?.allowance.allowanceMm ?? null
   return {
-    ringMcPct: moisture.mcPct,
-    cutMcPct,
-    doubtPct: moisture.doubtPct,
-    usedFraction: lossMm === null || allowanceMm === null ? null : lossMm / allowanceMm,
-    lossMm,
+    ringMcPct: wood.ringPct,
+    lidMcPct: wood.lidPct,
+    cutMcPct: cut.ringMcPct,
+    doubtPct: mcDoubtPct(wood),
+    usedFraction: lost === null || allowanceMm === null ? null : lost / allowanceMm,
+    lossMm: lost,
     allowanceMm,
   }
 }
@@ -162,6 +170,11 @@ function hiddenDetail(piece: PieceRecord, member: SiteMember): PieceDetail {
     spigotMm: null,
     lidMm: null,
     bodyWallMm: null,
+    lidWallMm: null,
+    blankDiameterMm: null,
+    endsSealed: false,
+    roughedOn: null,
+    isReadyByWeight: false,
     clearanceMm: null,
     allowanceMm: null,
     finish: '',

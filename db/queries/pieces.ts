@@ -40,6 +40,10 @@ export interface PieceRecord extends PieceFacts {
   fittedOn: string | null
   fittedAt: Date | null
   fitMcPct: number | null
+  fitLidMcPct: number | null
+  roughedOn: string | null
+  /** Set by the maker: weights alone decide whether it is ready. */
+  isReadyByWeight: boolean
   note: string
   ownerUserId: string | null
   isPrivate: boolean
@@ -102,6 +106,12 @@ export function pieceQuery(db: Kysely<Database>, siteId: number, viewer: Viewer)
       'piece.spigot_mm',
       'piece.lid_mm',
       'piece.body_wall_mm',
+      'piece.lid_wall_mm',
+      'piece.blank_diameter_mm',
+      'piece.ends_sealed',
+      'piece.roughed_on',
+      'piece.ready_by_weight',
+      'piece.fit_lid_mc_pct',
       'piece.fit_grade',
       'piece.clearance_mm',
       'piece.allowance_mm',
@@ -188,6 +198,11 @@ export function pieceOf(row: Row): PieceRecord {
     spigotMm: row.spigot_mm,
     lidMm: row.lid_mm,
     bodyWallMm: row.body_wall_mm,
+    lidWallMm: row.lid_wall_mm,
+    blankDiameterMm: row.blank_diameter_mm,
+    endsSealed: row.ends_sealed,
+    roughedOn: row.roughed_on,
+    isReadyByWeight: row.ready_by_weight,
     fitGrade: row.fit_grade === null ? null : fitGradeSchema.parse(row.fit_grade),
     clearanceMm: row.clearance_mm,
     allowanceMm: row.allowance_mm,
@@ -198,6 +213,7 @@ export function pieceOf(row: Row): PieceRecord {
     fittedOn: row.fitted_on,
     fittedAt: row.fitted_at,
     fitMcPct: row.fit_mc_pct,
+    fitLidMcPct: row.fit_lid_mc_pct,
     note: row.note,
     ownerUserId: row.owner_user_id,
     isPrivate: row.is_private,

@@ -251,12 +251,12 @@ describe('answers', () => {
     expect(refusals(jointQuerySchema, { ...goodOf('joint'), faces: '3' })).toEqual([['faces', '1 or 2']])
   })
 
-  it('time-out: the ash box is to be back at 0.45 of the middle', () => {
+  it('time-out: the ash box is to be back at about 0.45 of the middle', () => {
     const answer = timeOutAnswer(timeOutQuerySchema.parse(goodOf('time-out')))
     if (!answer.binds) throw new Error('it does bind')
     expect(Math.abs(answer.minutes / 60 / 4.6 - 1)).toBeLessThan(0.08)
-    expect(answer.minutesEarly).toBeCloseTo(0.45 * answer.minutes, 6)
-    expect(answer.minutesLate).toBeCloseTo(2.2 * answer.minutes, 6)
+    expect(Math.abs(answer.minutesEarly / answer.minutes - 0.45)).toBeLessThan(0.04)
+    expect(Math.abs((answer.minutesLate ?? NaN) / answer.minutes - 2.2)).toBeLessThan(0.5)
     expect(answer.words).toContain('be back within about')
   })
 

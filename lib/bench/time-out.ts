@@ -1,6 +1,10 @@
 import { z } from 'zod'
-import { timeOutInSteadyAir, USED_EARLY_OVER_MIDDLE, type LidOver, type TimeOut } from '@/lib/carry/time-out'
-import { quarterTurnLossMmPerPct } from '@/lib/fit/lid-fit'
+import { jointLoss } from '@/lib/carry/joint-loss'
+import { movementLogSpread } from '@/lib/carry/joint-spread'
+import { timeOutInSteadyAir, type TimeOut } from '@/lib/carry/time-out'
+import { TOLD_ALLOWANCE_FACTOR } from '@/lib/doubt/causes'
+import { logSpreadNineInTen } from '@/lib/doubt/spread'
+import { partFilter, type PartShape } from '@/lib/follow/part'
 import { formatPoints } from '@/lib/format/figures'
 import { formatDuration } from '@/lib/format/times'
 import { noTellingDifferencePct } from '@/lib/notices/policy'
@@ -54,23 +58,48 @@ export const timeOutQuerySchema = z
 export type TimeOutQuery = z.output<typeof timeOutQuerySchema>
 
 export type TimeOutAnswer = (
-  { binds: false } | { binds: true; minutesEarly: number; minutes: number; minutesLate: number }
-) & { words: string; flags: 'oily-wood'[]; assumed: readonly string[] }
+  | { binds: false; /** 1 in 10 would use it up by then all the same. */ minutesEarly?: number }
+  | {
+      binds: true
+      minutesEarly: number
+      minutes: number
+      /** False where 1 in 10 never use it up; then there is no late edge. */
+      lateBinds: boolean
+      minutesLate?: number
+    }
+) & {
+  words: string
+  flags: 'oily-wood'[]
+  assumed: readonly string[]
+  /** Allowance used against time: the middle, and the edges within which 8 in 10 lie. */
+  curve: TimeOut['curve']
+}
 
 /** How long until a joint has used up its allowance, in air that holds still. */
 export function timeOutAnswer(query: TimeOutQuery): TimeOutAnswer {
   const movement = movementOfQuery(query)
-  const lid = lidOfQuery(query, (query.diameterMm * (movement.tangentialPerPct + movement.radialPerPct)) / 2)
+  const densityKgM3 = query.densityKgM3 ?? woodMovement(query.species).densityKgM3
+  const lid = lidShape(query)
   const timeOut = timeOutInSteadyAir({
-    size: { wallMm: query.wallMm, spigotMm: query.spigotMm, grain: 'end-grain' },
-    densityKgM3: query.densityKgM3 ?? woodMovement(query.species).densityKgM3,
+    filter: {
+      ring: partFilter(
+        { kind: 'ring', wallMm: query.wallMm, lengthMm: query.spigotMm, grain: 'end-grain' },
+        densityKgM3,
+      ),
+      lid: lid === undefined ? null : partFilter(lid, densityKgM3),
+    },
+    loss: jointLoss(query.diameterMm, movement, 'base'),
     cover: query.cover,
-    lossMmPerPct: quarterTurnLossMmPerPct(query.diameterMm, movement),
     allowanceMm: query.allowanceMm,
     fromMcPct: query.fromMcPct,
     toEmcPct: query.toEmcPct,
     temperatureC: query.temperatureC,
-    ...(lid === undefined ? {} : { lid }),
+    spreads: {
+      movementLog: movementLogSpread({ assumed: movement.assumed.includes('movement') ? ['movement'] : [] }),
+      allowanceLog: logSpreadNineInTen(TOLD_ALLOWANCE_FACTOR),
+      airPct: 0,
+      startPct: 0,
+    },
   })
   const isOily = query.species !== undefined && findSpecies(query.species)?.oily === true
   return {
@@ -78,23 +107,30 @@ export function timeOutAnswer(query: TimeOutQuery): TimeOutAnswer {
     words: timeOutWords(query, timeOut),
     flags: isOily ? ['oily-wood'] : [],
     assumed: movement.assumed,
+    curve: timeOut.curve,
   }
 }
 
-function lidOfQuery(query: TimeOutQuery, swellMmPerPct: number): LidOver | undefined {
-  if (query.lidMm !== undefined) return { form: 'plug', lidMm: query.lidMm, swellMmPerPct }
-  if (query.lidWallMm !== undefined) return { form: 'hollow', wallMm: query.lidWallMm, swellMmPerPct }
-  return undefined
+function lidShape(query: TimeOutQuery): PartShape | undefined {
+  if (query.lidMm !== undefined) return { kind: 'disc', thicknessMm: query.lidMm, grain: 'end-grain' }
+  if (query.lidWallMm === undefined) return undefined
+  return { kind: 'ring', wallMm: query.lidWallMm, lengthMm: query.spigotMm, grain: 'end-grain' }
 }
 
 function timesOf(timeOut: TimeOut) {
-  if (!timeOut.binds) return { binds: false as const }
+  if (!timeOut.binds) {
+    const { minutesEarly } = timeOut
+    return { binds: false as const, ...(minutesEarly === undefined ? {} : { minutesEarly }) }
+  }
   const { minutesEarly, minutes, minutesLate } = timeOut
-  return { binds: true as const, minutesEarly, minutes, minutesLate }
+  return {
+    binds: true as const,
+    minutesEarly,
+    minutes,
+    lateBinds: minutesLate !== undefined,
+    ...(minutesLate === undefined ? {} : { minutesLate }),
+  }
 }
-
-/** More than this of the allowance used in the end lies within the doubt of 1 in 10. */
-const WITHIN_DOUBT = 1 / USED_EARLY_OVER_MIDDLE
 
 function timeOutWords(query: TimeOutQuery, timeOut: TimeOut): string {
   const apart = query.toEmcPct - query.fromMcPct
@@ -106,6 +142,6 @@ function timeOutWords(query: TimeOutQuery, timeOut: TimeOut): string {
     const early = formatDuration(timeOut.minutesEarly)
     return `${air}: be back within about ${early}, though more likely its fit keeps for about ${formatDuration(timeOut.minutes)}.`
   }
-  if (timeOut.usedInTheEnd < WITHIN_DOUBT) return `${air}: its fit keeps there.`
+  if (timeOut.minutesEarly === undefined) return `${air}: its fit keeps there.`
   return `${air}: by the middle of the reckoning its fit keeps there, but the doubt is wider than that. Try the lid.`
 }

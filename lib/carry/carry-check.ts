@@ -1,13 +1,14 @@
 import { z } from 'zod'
+import type { AirFrom, WoodState } from '@/lib/follow/wood-state'
 import {
   type Cover,
   coverSchema,
   type FitGrade,
   type Grain,
-  type PlaceCover,
   type Stage,
   type WoodKind,
 } from '@/lib/pieces/piece'
+import type { WoodFigures } from '@/lib/wood/movement-class'
 
 /**
  * What goes into a carry check and what comes out. The inputs are loaded by `db/queries/carry-inputs.ts`, judged by
@@ -19,6 +20,8 @@ export interface PieceFacts {
   number: string
   stage: Stage
   wood: string | null
+  /** The site's own figures for that wood, where it has some: they go before the table's. */
+  ownFigures?: WoodFigures | undefined
   woodKind: WoodKind
   grain: Grain
   spigotOn: 'base' | 'lid'
@@ -27,19 +30,14 @@ export interface PieceFacts {
   wallMm: number | null
   spigotMm: number | null
   lidMm: number | null
+  lidWallMm: number | null
   bodyWallMm: number | null
+  blankDiameterMm: number | null
+  endsSealed: boolean
+  finish: string
   fitGrade: FitGrade | null
   clearanceMm: number | null
   allowanceMm: number | null
-}
-
-/** One hour of the air that the piece was in. A gap is a null EMC, never a repeated old one. */
-export interface HourOfAir {
-  /** Start of the hour, epoch ms. */
-  at: number
-  emcPct: number | null
-  temperatureC: number | null
-  cover: PlaceCover
 }
 
 /** The air that the piece goes to, as last read. Without a fresh reading there is no verdict. */
@@ -48,19 +46,28 @@ export type AirThere =
   | { kind: 'stale'; at: number; emcPct: number; temperatureC: number; humidityPct: number }
   | { kind: 'never' }
 
+/** The moisture content at which a joint was cut, and how well that is known: ± % MC, 8 in 10. */
+export interface CutMc {
+  ringMcPct: number
+  lidMcPct: number
+  doubtPct: number
+}
+
 export interface CarryCheckInput {
   now: number
   piece: PieceFacts
-  /** Oldest first, up to 60 days, ending at `now`; includes any time already out. */
-  history: HourOfAir[]
-  /** Mean EMC of the keep room, taken for the time before the history. Null: take the first hour known. */
-  baselineEmcPct: number | null
-  /** MC at which the joint was cut; null: its present MC. */
-  cutMcPct: number | null
+  /** Its wood when it goes, or when it went; null where nothing is known of the air that it comes from. */
+  start: WoodState | null
+  /** MC at which the joint was cut; null: its MC at the start. */
+  cut: CutMc | null
   there: AirThere
-  /** EMC and temperature there, hour by hour from `startsAt`, for at least 48 h. Empty: `there` is held. */
-  forecast: { at: number; emcPct: number; temperatureC: number }[]
-  /** When it goes, or went, out; epoch ms. In the past for a piece that is out (its hours out are in `history`). */
+  /** The air from `startsAt` on: what was recorded of it, then what is to come. Empty: `there` is held. */
+  airs: readonly AirFrom[]
+  /** How far the air there may be out against the air that the piece was followed by, ± % MC, 8 in 10. */
+  airDoubtPct: number
+  /** What the site has learned of how quickly its wood follows: a factor on diffusion, and the spread of its logarithm. */
+  pace: { factor: number; logSpread: number }
+  /** When it goes, or went, out; epoch ms. */
   startsAt: number
   stayMinutes: number
   cover: Cover
@@ -85,7 +92,10 @@ export const pieceCheckSchema = z.discriminatedUnion('kind', [
     earlyAt: instant.nullable(),
     middleAt: instant.nullable(),
     lateAt: instant.nullable(),
+    /** Where the two parts of the joint stand now, % MC, and how far that may be out (± % MC, 8 in 10). */
     ringMcPct: z.number(),
+    lidMcPct: z.number(),
+    mcDoubtPct: z.number(),
     cutMcPct: z.number(),
     thereEmcPct: z.number(),
     /** Points of % MC that the ring changes over the stay. */

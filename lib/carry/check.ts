@@ -1,18 +1,21 @@
+import { assertFinite, assertInRange } from '@/lib/assert'
+import { PACE_LOG_SPREAD } from '@/lib/doubt/causes'
+import { mcDoubtPct, startDoubtPct } from '@/lib/follow/doubt'
 import type { Cover } from '@/lib/pieces/piece'
 import type { CarryCheckInput, PieceCheck, PieceFacts, Verdict } from './carry-check'
-import { courseOfCarry } from './carry-course'
 import { jointOfPiece, type ResolvedJoint } from './joint-defaults'
-import type { MoistureAt, StepOfAir } from './moisture-course'
-import { EARLY_OF_MIDDLE, firstReachedMs, LATE_OF_MIDDLE, USED_EARLY_OVER_MIDDLE } from './time-out'
+import { lossMm } from './joint-loss'
+import { spreadsOfJoint } from './joint-spread'
+import { stayRun, type StayRun } from './stay-run'
+import { firstReachedHours, usedInTheMiddle, type UsedSpread, usedSpread, valueAt } from './used-doubt'
 import { verdictOf } from './verdict'
 import { blankAirWords, PIECE_WORDS, reasonWords, secondWords, UNKNOWN_WORDS, VERDICT_WORDS } from './words'
 
 const MINUTE_MS = 60_000
-/** Times further off than this are not told: 30 days. */
-const TOLD_WITHIN_MS = 30 * 24 * 60 * MINUTE_MS
-/** The middle is looked for this far, so that its early edge is found wherever that may be told. */
-const HORIZON_MS = TOLD_WITHIN_MS / EARLY_OF_MIDDLE
-const CURVE_POINTS = 33
+const HOUR_MS = 60 * MINUTE_MS
+/** Times further off than this are not told: 30 days, and the half hour that "fine" asks for after the longest stay. */
+const TOLD_WITHIN_HOURS = 30 * 24 + 1
+const CURVE_POINTS = 25
 
 type WordsCheck = Extract<PieceCheck, { kind: 'words' }>
 type VerdictCheck = Extract<PieceCheck, { kind: 'verdict' }>
@@ -41,17 +44,16 @@ const unknown = (reason: keyof typeof UNKNOWN_WORDS, sinceAt: number | null): Pi
 
 /**
  * Whether a piece may go to another air, how long its fit keeps there, and why.
- * @param input the piece, the air it was in hour by hour (epoch ms, % MC, °C), the air there and to come, the planned
- *   stay in minutes and the cover
+ * @param input the piece, its wood when it goes, the air there and to come, the planned stay in minutes and the cover
  * @returns a verdict with its times; or words for a piece that can't be judged; or why there is no verdict (no fresh
  *   reading there, nothing known of the air before)
  * @throws RangeError for an input that is NaN or out of range. Inputs come from checked rows, so it is a bug.
  *
  * Counts from the moisture content at which the joint was cut, either way: a lid fitted in damp air goes loose indoors
- * just as surely. The same for a piece that is out: judged from the moment it went.
- * Times told are the early edge, `EARLY_OF_MIDDLE` of the middle. Where the middle never uses up the allowance but 1 in
- * 10 would, that moment is the early edge. The ring alone is followed; a lid that lags it is not.
- * Source: derived from Wood Handbook (FPL-GTR-190, 2010), Eq. 13-2 and Crank, The Mathematics of Diffusion (1975).
+ * just as surely. Ring and lid are followed apart. The same for a piece that is out: judged from the moment it went.
+ * Times told are the early edge: by then 1 in 10 would have used up its allowance.
+ * Source: derived from Wood Handbook (FPL-GTR-190, 2010), Eq. 13-2 and Crank, The Mathematics of Diffusion (1975); the
+ * doubt by `usedSpread`.
  */
 export function carryCheck(input: CarryCheckInput): PieceCheck {
   const reason = wordsReason(input.piece)
@@ -60,71 +62,94 @@ export function carryCheck(input: CarryCheckInput): PieceCheck {
   if (joint === undefined) return wordsCheck('no-joint', input.there)
   if (input.there.kind === 'never') return unknown('never-read', null)
   if (input.there.kind === 'stale') return unknown('no-reading', input.there.at)
-  const course = courseOfCarry(input, joint, input.there)
-  if (course === undefined) return unknown('no-history', null)
-  return judged(input, joint, input.there.emcPct, course)
+  if (input.start === null) return unknown('no-history', null)
+  assertFinite('start.ringPct', input.start.ringPct)
+  assertFinite('there.temperatureC', input.there.temperatureC)
+  assertInRange('there.emcPct', input.there.emcPct, 0, 30)
+  assertInRange('stayMinutes', input.stayMinutes, 0, 60 * TOLD_WITHIN_HOURS)
+  assertFinite('startsAt', input.startsAt)
+  assertFinite('now', input.now)
+  return judged(input, joint, input.start, input.there)
 }
 
-/** Allowance used against time since the start, and the most that it could come to in the airs still to be met. */
-function allowanceUsed(
-  { startsAt }: CarryCheckInput,
-  joint: ResolvedJoint,
-  cutMcPct: number,
-  course: { moistureAt: (at: number) => MoistureAt; steps: readonly StepOfAir[] },
-) {
-  const usedPerPct = joint.lossMmPerPct / joint.allowance.allowanceMm
-  const used = (mcPct: number): number => usedPerPct * Math.abs(mcPct - cutMcPct)
-  const usedAfter = (elapsedMs: number): number => used(course.moistureAt(startsAt + elapsedMs).mcPct)
-  // Moisture is a weighted mean of where it starts and the airs it meets, so it can't pass the furthest of them.
-  const mostUsed = course.steps.reduce((most, step) => Math.max(most, used(step.emcPct)), usedAfter(0))
-  const reachedMs = (level: number, withinMs: number): number | undefined =>
-    mostUsed < level ? undefined : firstReachedMs(usedAfter, level, withinMs)
-  return { usedAfter, reachedMs }
+type Start = NonNullable<CarryCheckInput['start']>
+type FreshAir = Extract<CarryCheckInput['there'], { kind: 'fresh' }>
+
+interface Reckoned {
+  run: StayRun
+  /** Allowance used in the middle after some hours. */
+  usedAfter: (hours: number) => number
+  /** Hours until the middle has used so much of it. */
+  middleHours: (level: number) => number | undefined
+  spread: UsedSpread
+  cut: { ring: number; lid: number }
+  atStartMm: number
 }
 
-function judged(
-  input: CarryCheckInput,
-  joint: ResolvedJoint,
-  thereEmcPct: number,
-  course: { moistureAt: (at: number) => MoistureAt; steps: readonly StepOfAir[] },
-): VerdictCheck {
+function reckoned(input: CarryCheckInput, joint: ResolvedJoint, start: Start, there: FreshAir): Reckoned {
+  const airs =
+    input.airs.length > 0 ? input.airs : [{ ...there, at: input.startsAt, cover: input.cover, isKnown: true }]
+  const run = stayRun(joint.filter, start, airs, input.startsAt, TOLD_WITHIN_HOURS, input.pace)
+  const cut =
+    input.cut === null
+      ? { ring: start.ringPct, lid: start.lidPct }
+      : { ring: input.cut.ringMcPct, lid: input.cut.lidMcPct }
+  const spreads = spreadsOfJoint(joint, {
+    // A joint that counts from what it is now has lost nothing yet, whatever that is.
+    cutPct: input.cut?.doubtPct ?? 0,
+    startPct: input.cut === null ? 0 : startDoubtPct(start),
+    airPct: input.airDoubtPct,
+  })
+  const question = { run, loss: joint.loss, allowanceMm: joint.allowance.allowanceMm, cut, spreads }
+  const used = usedInTheMiddle(question)
+  return {
+    run,
+    usedAfter: (hours) => valueAt(used, run.hours, hours),
+    middleHours: (level) => firstReachedHours(used, run.hours, level),
+    spread: usedSpread(question),
+    cut,
+    atStartMm: lossMm(joint.loss, start.ringPct - cut.ring, start.lidPct - cut.lid),
+  }
+}
+
+function judged(input: CarryCheckInput, joint: ResolvedJoint, start: Start, there: FreshAir): VerdictCheck {
   const { startsAt } = input
-  const stayMs = input.stayMinutes * MINUTE_MS
-  const startMcPct = course.moistureAt(startsAt).mcPct
-  const endMcPct = course.moistureAt(startsAt + stayMs).mcPct
-  const cutMcPct = input.cutMcPct ?? startMcPct
-  const { usedAfter, reachedMs } = allowanceUsed(input, joint, cutMcPct, course)
-  const usedAtStart = usedAfter(0)
-  const usedAtEnd = usedAfter(stayMs)
-
-  const middleMs = reachedMs(1, HORIZON_MS)
-  const earlyMs =
-    middleMs === undefined
-      ? reachedMs(1 / USED_EARLY_OVER_MIDDLE, TOLD_WITHIN_MS)
-      : EARLY_OF_MIDDLE * middleMs
-  const lateMs = middleMs === undefined ? undefined : LATE_OF_MIDDLE * middleMs
-  const toldAt = (elapsedMs: number | undefined): string | null =>
-    elapsedMs === undefined || elapsedMs > TOLD_WITHIN_MS ? null : instant(startsAt + elapsedMs)
-
-  const verdict = verdictOf(usedAtStart, earlyMs, stayMs)
   const { allowanceMm, clearanceMm } = joint.allowance
+  const stayHours = input.stayMinutes / 60
+  const { run, usedAfter, middleHours, spread, cut, atStartMm } = reckoned(input, joint, start, there)
+  const ringAt = (hours: number): number => valueAt(run.middle.ring, run.hours, hours)
+  const nowHours = Math.max(0, (input.now - startsAt) / HOUR_MS)
+
+  const usedAtStart = Math.max(0, atStartMm / allowanceMm)
+  const usedAtEnd = usedAfter(stayHours)
   const isPast = usedAtStart >= 1
-  const lossMm = (isPast ? usedAtStart : usedAtEnd) * allowanceMm
-  const changePct = endMcPct - startMcPct
-  const bindsMs =
+  const middle = middleHours(1)
+  const early = isPast ? 0 : earlier(spread.early(1), middle)
+  const late = middle === undefined ? undefined : spread.late(1)
+  const toldAt = (hours: number | undefined): string | null =>
+    hours === undefined ? null : instant(startsAt + Math.round(hours * HOUR_MS))
+
+  const verdict = verdictOf(
+    usedAtStart,
+    early === undefined ? undefined : early * HOUR_MS,
+    stayHours * HOUR_MS,
+  )
+  const changePct = ringAt(stayHours) - start.ringPct
+  const usedLossMm = (isPast ? usedAtStart : usedAtEnd) * allowanceMm
+  const binds =
     clearanceMm !== undefined && clearanceMm > allowanceMm
-      ? reachedMs(clearanceMm / allowanceMm, HORIZON_MS)
+      ? spread.early(clearanceMm / allowanceMm)
       : undefined
   return {
     kind: 'verdict',
     verdict,
     words: VERDICT_WORDS[verdict],
     reason: reasonWords({
-      thereEmcPct,
-      cutMcPct,
+      thereEmcPct: there.emcPct,
+      cutMcPct: cut.ring,
       changePct,
       stayMinutes: input.stayMinutes,
-      lossMm,
+      lossMm: usedLossMm,
       allowanceMm,
       isPast,
     }),
@@ -132,47 +157,58 @@ function judged(
       isPast,
       fitGrade: input.piece.fitGrade,
       allowedMcPct: joint.allowedMcPct,
-      mayBindAfterMinutes: bindsMs === undefined ? undefined : (EARLY_OF_MIDDLE * bindsMs) / MINUTE_MS,
-      isWithinDoubt: middleMs === undefined && earlyMs !== undefined,
+      mayBindAfterMinutes: binds === undefined ? undefined : binds * 60,
+      isWithinDoubt: middle === undefined && early !== undefined,
     }),
-    earlyAt: toldAt(earlyMs),
-    middleAt: toldAt(middleMs),
-    lateAt: toldAt(lateMs),
-    ringMcPct: course.moistureAt(Math.max(startsAt, input.now)).mcPct,
-    cutMcPct,
-    thereEmcPct,
+    earlyAt: toldAt(early),
+    middleAt: toldAt(middle),
+    lateAt: toldAt(late === undefined || middle === undefined ? undefined : Math.max(late, middle)),
+    ringMcPct: ringAt(nowHours),
+    lidMcPct: valueAt(run.middle.lid, run.hours, nowHours),
+    mcDoubtPct: mcDoubtPct(start),
+    cutMcPct: cut.ring,
+    thereEmcPct: there.emcPct,
     changePct,
     allowedMcPct: joint.allowedMcPct,
-    lossMm,
+    lossMm: usedLossMm,
     allowanceMm,
     usedAtStart,
     usedAtEnd,
-    curve: curveOf(usedAfter, startsAt, curveSpanMs(input, stayMs, lateMs)),
+    curve: curveOf(usedAfter, spread, startsAt, curveHours(stayHours, nowHours, late)),
     assumed: [...joint.assumed],
   }
 }
 
+const earlier = (one: number | undefined, other: number | undefined): number | undefined =>
+  one === undefined || other === undefined ? (one ?? other) : Math.min(one, other)
+
 /** Past the stay, far enough to see the late edge if that is near, and past the present for a piece that is out. */
-function curveSpanMs(input: CarryCheckInput, stayMs: number, lateMs: number | undefined): number {
-  const pastStayMs = Math.max(1.25 * stayMs, 30 * MINUTE_MS)
-  const goneMs = Math.max(0, input.now - input.startsAt)
-  return Math.max(pastStayMs, 1.1 * goneMs, Math.min(lateMs ?? 0, 3 * stayMs))
+function curveHours(stayHours: number, goneHours: number, lateHours: number | undefined): number {
+  const pastStay = Math.max(1.25 * stayHours, 0.5)
+  return Math.min(
+    TOLD_WITHIN_HOURS,
+    Math.max(pastStay, 1.1 * goneHours, Math.min(lateHours ?? 0, 3 * stayHours)),
+  )
 }
 
-/** The doubt widens time: what the middle has used after so long, the early edge has used after 0.45 of it. */
 function curveOf(
-  usedAfter: (elapsedMs: number) => number,
+  usedAfter: (hours: number) => number,
+  spread: UsedSpread,
   startsAt: number,
-  spanMs: number,
+  spanHours: number,
 ): VerdictCheck['curve'] {
-  const elapsed = Array.from({ length: CURVE_POINTS }, (_, n) => (spanMs * n) / (CURVE_POINTS - 1))
+  const elapsed = Array.from({ length: CURVE_POINTS }, (_, n) => (spanHours * n) / (CURVE_POINTS - 1))
+  const bands = elapsed.map((hours) => spread.at(hours))
   return {
-    at: elapsed.map((ms) => instant(startsAt + ms)),
-    usedEarly: elapsed.map((ms) => usedAfter(ms / EARLY_OF_MIDDLE)),
+    at: elapsed.map((hours) => instant(startsAt + Math.round(hours * HOUR_MS))),
+    usedEarly: bands.map((band) => band.high),
     used: elapsed.map(usedAfter),
-    usedLate: elapsed.map((ms) => usedAfter(ms / LATE_OF_MIDDLE)),
+    usedLate: bands.map((band) => band.low),
   }
 }
+
+/** The pace of a site that has learned nothing yet. */
+export const UNLEARNED_PACE = { factor: 1, logSpread: PACE_LOG_SPREAD }
 
 const RANK: Readonly<Record<Verdict, number>> = { fine: 0, 'keep-short': 1, leave: 2 }
 
@@ -185,7 +221,10 @@ export function carryCheckClosed(
   check: PieceCheck,
 ): { cover: Cover; verdict: Verdict; earlyAt: string | null } | undefined {
   if (check.kind !== 'verdict' || check.verdict === 'fine') return undefined
-  const closed = carryCheck({ ...input, cover: 'bagged' })
+  // What was recorded stays as it was; only what is still to come can be covered.
+  const fromMs = Math.max(input.now, input.startsAt)
+  const airs = input.airs.map((air) => (air.at < fromMs ? air : { ...air, cover: 'bagged' as const }))
+  const closed = carryCheck({ ...input, airs, cover: 'bagged' })
   if (closed.kind !== 'verdict' || RANK[closed.verdict] >= RANK[check.verdict]) return undefined
   return { cover: 'bagged', verdict: closed.verdict, earlyAt: closed.earlyAt }
 }

@@ -46,13 +46,23 @@ export function transverseDiffusionM2PerS(temperatureC: number, mcPct: number, d
   assertInRange('temperatureC', temperatureC, -10, 50)
   assertInRange('mcPct', mcPct, 0, 30)
   assertInRange('densityKgM3', densityKgM3, DENSITY_MIN_KG_M3, DENSITY_MAX_KG_M3)
-  const mc = Math.min(MC_CAP_PCT, mcPct)
+  return diffusionUncheckedM2PerS(temperatureC, mcPct, densityKgM3 / DENSITY_TO_GRAVITY_KG_M3)
+}
+
+/** Basic specific gravity of wood by its density at 12 % MC. */
+export const gravityOfDensity = (densityKgM3: number): number => densityKgM3 / DENSITY_TO_GRAVITY_KG_M3
+
+/**
+ * `transverseDiffusionM2PerS` for callers that step thousands of pieces through thousands of hours and have checked
+ * their inputs once: the same formula, no ranges.
+ */
+export function diffusionUncheckedM2PerS(temperatureC: number, mcPct: number, gravity: number): number {
+  const mc = mcPct > MC_CAP_PCT ? MC_CAP_PCT : mcPct
   const energy = ACTIVATION_J_PER_MOL - ACTIVATION_FALL_J_PER_MOL_PCT * mc
   const boundWater =
     BOUND_WATER_M2_PER_S * Math.exp(-energy / (GAS_CONSTANT_J_PER_MOL_K * kelvinFromCelsius(temperatureC)))
-  const gravity = densityKgM3 / DENSITY_TO_GRAVITY_KG_M3
-  const cavities = Math.max(0, 1 - gravity * (CELL_GEOMETRY_AT_DRY + CELL_GEOMETRY_PER_PCT * mc))
-  return boundWater / ((1 - cavities) * (1 - Math.sqrt(cavities)))
+  const filled = gravity * (CELL_GEOMETRY_AT_DRY + CELL_GEOMETRY_PER_PCT * mc)
+  return filled >= 1 ? boundWater : boundWater / (filled * (1 - Math.sqrt(1 - filled)))
 }
 
 /**

@@ -1,19 +1,12 @@
 import { describe, expect, it } from 'vitest'
 import { firstAnswer } from './first-answer'
-import type { JointFacts } from './joint-defaults'
+import { type JointFacts, UNTOLD_JOINT } from './joint-defaults'
 
 const box: JointFacts = {
+  ...UNTOLD_JOINT,
   wood: 'fraxinus-excelsior',
-  grain: 'end-grain',
-  wallMm: null,
-  spigotMm: null,
-  bodyWallMm: null,
   jointDiameterMm: 62,
-  lidForm: 'plug',
-  lidMm: null,
   fitGrade: 'easy',
-  clearanceMm: null,
-  allowanceMm: null,
 }
 const house = { temperatureC: 20.6, humidityPct: 45 }
 const shop = { temperatureC: 8, humidityPct: 71 }

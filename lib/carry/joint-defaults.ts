@@ -1,10 +1,12 @@
 import { allowanceOfFit, type Allowance } from '@/lib/fit/grades'
 import { quarterTurnLossMmPerPct } from '@/lib/fit/lid-fit'
 import type { InPlaneMovement } from '@/lib/fit/ovality'
+import { type FilterFacts, pieceFilter, ROUGHED_WALL_MM } from '@/lib/follow/piece-filter'
+import type { PieceFilter } from '@/lib/follow/wood-state'
 import { LONGITUDINAL_PER_PCT } from '@/lib/wood/movement'
-import { woodMovement } from '@/lib/wood/movement-class'
+import { movementOfWood, type WoodMovement, woodMovement } from '@/lib/wood/movement-class'
 import type { PieceFacts } from './carry-check'
-import type { RingSize } from './joint'
+import { jointLoss, type JointLoss } from './joint-loss'
 
 /** Where a size was not told. Status: guess, all of them. */
 const WALL_MM = 2.5
@@ -14,31 +16,67 @@ const WALL_OF_BODY_MAX_MM = 4
 const SPIGOT_MM = 6
 const PLUG_LID_MM = 8
 
-export type RingFacts = Pick<PieceFacts, 'wood' | 'grain' | 'wallMm' | 'spigotMm' | 'bodyWallMm'>
-export type JointFacts = RingFacts &
-  Pick<PieceFacts, 'jointDiameterMm' | 'lidForm' | 'lidMm' | 'fitGrade' | 'clearanceMm' | 'allowanceMm'>
+export type WoodFacts = Pick<
+  PieceFacts,
+  | 'stage'
+  | 'wood'
+  | 'ownFigures'
+  | 'grain'
+  | 'wallMm'
+  | 'spigotMm'
+  | 'bodyWallMm'
+  | 'lidForm'
+  | 'lidMm'
+  | 'lidWallMm'
+  | 'blankDiameterMm'
+  | 'endsSealed'
+  | 'finish'
+>
+export type JointFacts = WoodFacts &
+  Pick<PieceFacts, 'jointDiameterMm' | 'spigotOn' | 'fitGrade' | 'clearanceMm' | 'allowanceMm'>
+
+/** A joint of which nothing has been told yet. */
+export const UNTOLD_JOINT: JointFacts = {
+  stage: 'box',
+  wood: null,
+  grain: 'end-grain',
+  spigotOn: 'base',
+  lidForm: 'plug',
+  jointDiameterMm: null,
+  wallMm: null,
+  spigotMm: null,
+  lidMm: null,
+  lidWallMm: null,
+  bodyWallMm: null,
+  blankDiameterMm: null,
+  endsSealed: false,
+  finish: '',
+  fitGrade: null,
+  clearanceMm: null,
+  allowanceMm: null,
+}
 
 /** What is needed to follow a piece's wood: no joint diameter yet. */
-export type Ring = {
-  readonly size: RingSize
-  readonly densityKgM3: number
+export type FollowedWood = {
+  readonly filter: PieceFilter
+  readonly movement: WoodMovement
   /** What was not told and is taken as usual, each as a short phrase. */
   readonly assumed: readonly string[]
 }
 
-export type ResolvedJoint = Ring & {
+export type ResolvedJoint = FollowedWood & {
   readonly diameterMm: number
-  readonly lidMm: number
   /** In the plane of the joint; for a side-grain box that plane holds the direction along the grain. */
-  readonly movement: InPlaneMovement
-  /** Clearance lost a quarter turn on for each % MC. */
+  readonly inPlane: InPlaneMovement
+  readonly loss: JointLoss
+  /** Clearance lost a quarter turn on for each % MC, both parts in step. */
   readonly lossMmPerPct: number
   readonly allowance: Allowance
   /** Points of % MC either side of the cut at which the allowance is gone. */
   readonly allowedMcPct: number
 }
 
-function wallOf({ wallMm, bodyWallMm }: RingFacts): { wallMm: number; isAssumed: boolean } {
+function wallOf({ wallMm, bodyWallMm }: WoodFacts): { wallMm: number; isAssumed: boolean } {
   if (wallMm !== null) return { wallMm, isAssumed: false }
   if (bodyWallMm === null) return { wallMm: WALL_MM, isAssumed: true }
   const ofBody = Math.min(WALL_OF_BODY_MAX_MM, Math.max(WALL_OF_BODY_MIN_MM, WALL_OF_BODY * bodyWallMm))
@@ -48,27 +86,55 @@ function wallOf({ wallMm, bodyWallMm }: RingFacts): { wallMm: number; isAssumed:
 /** To a tenth, without an idle nought. */
 const figure = (value: number): string => String(Math.round(value * 10) / 10)
 
+/** What the wood of a piece does: by the site's own figures where it has some, else by the table's. */
+export const movementOfPiece = ({
+  wood,
+  ownFigures,
+}: Pick<PieceFacts, 'wood' | 'ownFigures'>): WoodMovement =>
+  ownFigures === undefined ? woodMovement(wood ?? undefined) : movementOfWood(ownFigures)
+
 /**
- * The ring of a piece's joint, with every size that was not told filled in and named.
+ * A piece's wood, ready to be followed, with every size that was not told filled in and named.
  * @param facts what is known of the piece; null where it isn't
- * @returns sizes in mm, density in kg/m³ at 12 % MC
  *
  * Defaults: status guess, stated beside each constant.
  */
-export function ringOfPiece(facts: RingFacts): Ring {
-  const wood = woodMovement(facts.wood ?? undefined)
+export function woodOfPiece(facts: WoodFacts): FollowedWood {
+  const movement = movementOfPiece(facts)
   const wall = wallOf(facts)
-  const assumed: string[] = []
-  if (wood.assumed.includes('wood'))
-    assumed.push('wood not known: taken as one of medium movement, 650 kg/m³')
-  else if (wood.assumed.includes('density')) assumed.push(`density ${String(wood.densityKgM3)} kg/m³`)
-  if (wall.isAssumed) assumed.push(`wall ${figure(wall.wallMm)} mm at the spigot`)
-  if (facts.spigotMm === null) assumed.push(`spigot ${figure(SPIGOT_MM)} mm long`)
-  return {
-    size: { wallMm: wall.wallMm, spigotMm: facts.spigotMm ?? SPIGOT_MM, grain: facts.grain },
-    densityKgM3: wood.densityKgM3,
-    assumed,
+  const filled: FilterFacts = {
+    stage: facts.stage,
+    grain: facts.grain,
+    lidForm: facts.lidForm,
+    wallMm: wall.wallMm,
+    spigotMm: facts.spigotMm ?? SPIGOT_MM,
+    lidMm: facts.lidMm ?? PLUG_LID_MM,
+    lidWallMm: facts.lidWallMm ?? wall.wallMm,
+    bodyWallMm: facts.bodyWallMm,
+    blankDiameterMm: facts.blankDiameterMm,
+    endsSealed: facts.endsSealed,
+    finish: facts.finish,
+    densityKgM3: movement.densityKgM3,
   }
+  return { filter: pieceFilter(filled), movement, assumed: assumedOf(facts, movement, wall) }
+}
+
+function assumedOf(
+  facts: WoodFacts,
+  movement: WoodMovement,
+  wall: { wallMm: number; isAssumed: boolean },
+): string[] {
+  const assumed: string[] = []
+  if (movement.assumed.includes('wood'))
+    assumed.push('wood not known: taken as one of medium movement, 650 kg/m³')
+  else if (movement.assumed.includes('density')) assumed.push(`density ${String(movement.densityKgM3)} kg/m³`)
+  if (facts.stage === 'box') {
+    if (wall.isAssumed) assumed.push(`wall ${figure(wall.wallMm)} mm at the spigot`)
+    if (facts.spigotMm === null) assumed.push(`spigot ${figure(SPIGOT_MM)} mm long`)
+  } else if (facts.stage === 'roughed' && facts.bodyWallMm === null) {
+    assumed.push(`wall ${figure(ROUGHED_WALL_MM)} mm`)
+  }
+  return assumed
 }
 
 /**
@@ -76,21 +142,19 @@ export function ringOfPiece(facts: RingFacts): Ring {
  * @param facts what is known of the piece; null where it isn't
  * @returns undefined where there is nothing to work with: no joint diameter, or a threaded lid
  *
- * Defaults: status guess, stated beside each constant; movement by `woodMovement`, allowance by `allowanceOfFit`.
+ * Defaults: status guess, stated beside each constant; movement by `movementOfPiece`, allowance by `allowanceOfFit`.
  */
 export function jointOfPiece(facts: JointFacts): ResolvedJoint | undefined {
   const allowance = allowanceOfFit(facts)
   if (facts.jointDiameterMm === null || allowance === undefined) return undefined
-  const ring = ringOfPiece(facts)
-  const wood = woodMovement(facts.wood ?? undefined)
-  const movement: InPlaneMovement = {
-    tangentialPerPct: wood.tangentialPerPct,
-    radialPerPct: facts.grain === 'end-grain' ? wood.radialPerPct : LONGITUDINAL_PER_PCT,
+  const wood = woodOfPiece(facts)
+  const inPlane: InPlaneMovement = {
+    tangentialPerPct: wood.movement.tangentialPerPct,
+    radialPerPct: facts.grain === 'end-grain' ? wood.movement.radialPerPct : LONGITUDINAL_PER_PCT,
   }
-  const lossMmPerPct = quarterTurnLossMmPerPct(facts.jointDiameterMm, movement)
-  const assumed = [...ring.assumed]
-  const isKnownWood = !wood.assumed.includes('wood')
-  if (isKnownWood && wood.assumed.includes('movement'))
+  const lossMmPerPct = quarterTurnLossMmPerPct(facts.jointDiameterMm, inPlane)
+  const assumed = [...wood.assumed]
+  if (!wood.movement.assumed.includes('wood') && wood.movement.assumed.includes('movement'))
     assumed.push('movement of its class: none is published')
   if (facts.lidForm === 'plug' && facts.lidMm === null) assumed.push(`lid ${figure(PLUG_LID_MM)} mm thick`)
   if (allowance.basis === 'unknown') assumed.push('allowance 0.15 mm: tell us how the lid fits')
@@ -99,10 +163,10 @@ export function jointOfPiece(facts: JointFacts): ResolvedJoint | undefined {
   if (allowance.basis === 'measured')
     assumed.push(`allowance ${allowance.allowanceMm.toFixed(2)} mm of its clearance`)
   return {
-    ...ring,
+    ...wood,
     diameterMm: facts.jointDiameterMm,
-    lidMm: facts.lidMm ?? PLUG_LID_MM,
-    movement,
+    inPlane,
+    loss: jointLoss(facts.jointDiameterMm, inPlane, facts.spigotOn),
     lossMmPerPct,
     allowance,
     allowedMcPct: allowance.allowanceMm / lossMmPerPct,

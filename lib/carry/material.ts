@@ -1,7 +1,11 @@
-import type { Cover, PlaceCover } from '@/lib/pieces/piece'
+import { HOUSE_SENSOR_DOUBT_PCT } from '@/lib/follow/doubt'
+import { airsOf, type Followed, HOUR_MS, type RoomHours, type Stay, stepThrough } from '@/lib/follow/record'
+import { type AirFrom, copyState, evenState, type WoodState } from '@/lib/follow/wood-state'
+import type { Cover } from '@/lib/pieces/piece'
 import type { RoomAir } from '@/lib/rooms/room'
-import type { AirThere, CarryCheckInput, HourOfAir, PieceFacts } from './carry-check'
+import type { AirThere, CarryCheckInput, CutMc, PieceFacts } from './carry-check'
 import { comingHours } from './forecast'
+import { woodOfPiece } from './joint-defaults'
 
 /** Everything that checks of carries look at, as loaded by `db/queries/carry-inputs.ts`: for any number of pieces. */
 export interface CarryMaterial {
@@ -14,59 +18,101 @@ export interface PieceMaterial {
   /** Its public id. */
   code: string
   facts: PieceFacts
-  /** Oldest first, as far as the history goes back. */
-  places: readonly { roomId: number; fromAt: Date; toAt: Date | null; cover: PlaceCover }[]
+  /** Oldest first: those that reach into the hours that are loaded. */
+  stays: readonly Stay[]
+  /** Its wood as kept with it; null until it has been followed for the first time. */
+  followed: Followed | null
   /** The room that it is kept to match: its own, or else the site's cupboard. */
   keepRoomId: number | null
   isKeepRoomAssumed: boolean
   /** Null: taken as its present MC. */
-  cutMcPct: number | null
+  cut: CutMc | null
+  /** What the site has learned of how quickly such wood follows. */
+  pace: { factor: number; logSpread: number }
 }
 
 export interface RoomMaterial {
   air: RoomAir
-  /** By the hour's start, epoch ms; oldest first. Hours without a reading are left out. */
-  hours: ReadonlyMap<number, { emcPct: number; temperatureC: number }>
+  /** The last days, by the hour's start in epoch ms. */
+  hours: RoomHours
   /** Over its own last twelve months. */
   emcPctMean: number | null
 }
 
-const hourMs = 3_600_000
-/** How far back the wood remembers: a thin ring has forgotten sooner, a blank is not judged. */
-export const historyMs = 60 * 24 * hourMs
-/** Nobody stays longer than this in one check; beyond, the day repeats itself. */
+/** How far back hours are loaded: enough to see a week's days alike, and to carry a piece on that was followed lately. */
+export const hoursBackMs = 7 * 24 * HOUR_MS
+/** Nobody stays longer than this in one check; beyond, the last day's mean holds. */
 const forecastHoursMax = 30 * 24
-
-/**
- * The air that a piece was in, hour by hour, each hour cut where the piece changed its place or its cover. An hour of a
- * room without a reading is a gap.
- */
-export function historyOfPiece(material: CarryMaterial, piece: PieceMaterial): HourOfAir[] {
-  const until = material.now.getTime()
-  const since = Math.floor((until - historyMs) / hourMs) * hourMs
-  return piece.places.flatMap((place) => {
-    const hours: HourOfAir[] = []
-    const record = material.rooms.get(place.roomId)?.hours
-    const end = Math.min(place.toAt?.getTime() ?? until, until)
-    let at = Math.max(place.fromAt.getTime(), since)
-    while (at < end) {
-      const hourAt = Math.floor(at / hourMs) * hourMs
-      const air = record?.get(hourAt)
-      hours.push({
-        at,
-        emcPct: air?.emcPct ?? null,
-        temperatureC: air?.temperatureC ?? null,
-        cover: place.cover,
-      })
-      at = hourAt + hourMs
-    }
-    return hours
-  })
-}
 
 export function baselineOf(material: CarryMaterial, piece: PieceMaterial): number | null {
   return piece.keepRoomId === null ? null : (material.rooms.get(piece.keepRoomId)?.emcPctMean ?? null)
 }
+
+/**
+ * A piece's wood at a moment, carried on from what is kept with it.
+ * @param at epoch ms; what lies ahead is taken as the room's coming hours
+ * @returns null where nothing is known of the air that it was in
+ */
+export function woodAt(material: CarryMaterial, piece: PieceMaterial, at: number): WoodState | null {
+  const { filter } = woodOfPiece(piece.facts)
+  const { followed, pace } = piece
+  if (followed === null) {
+    const mcPct = baselineOf(material, piece)
+    return mcPct === null ? null : evenState(filter, mcPct, 'closed')
+  }
+  if (followed.outState !== null && followed.outAtMs !== null && Math.abs(followed.outAtMs - at) < 1000)
+    return followed.outState
+  const state = copyState(followed.state)
+  const now = material.now.getTime()
+  const recorded = airsOf(piece.stays, (id) => material.rooms.get(id), followed.atMs, Math.min(at, now))
+  stepThrough(filter, state, recorded, followed.atMs, Math.min(at, now), pace.factor)
+  if (at > now) stepThrough(filter, state, comingAtRest(material, piece, now, at), now, at, pace.factor)
+  return state
+}
+
+function comingAtRest(material: CarryMaterial, piece: PieceMaterial, from: number, until: number): AirFrom[] {
+  const stay = piece.stays.at(-1)
+  const room = stay === undefined ? undefined : material.rooms.get(stay.roomId)
+  if (stay === undefined || room === undefined || room.air.kind === 'never') return []
+  const hours = Math.min(forecastHoursMax, Math.ceil((until - from) / HOUR_MS))
+  return comingAirs(material, room, room.air, from, hours).map((hour) => ({ ...hour, cover: stay.cover }))
+}
+
+function comingAirs(
+  material: CarryMaterial,
+  room: RoomMaterial,
+  present: { emcPct: number; temperatureC: number },
+  startsAt: number,
+  hours: number,
+): Omit<AirFrom, 'cover'>[] {
+  const coming = comingHours({
+    now: material.now.getTime(),
+    startsAt,
+    hours,
+    present,
+    record: [...room.hours].map(([at, air]) => ({ at, ...air })),
+  })
+  const lastDay = coming.slice(-24)
+  const mean = (of: 'emcPct' | 'temperatureC') =>
+    lastDay.reduce((sum, hour) => sum + hour[of], 0) / lastDay.length
+  return [
+    ...coming.map((hour) => ({ ...hour, isKnown: true })),
+    ...(lastDay.length === 0
+      ? []
+      : [
+          {
+            at: startsAt + hours * HOUR_MS,
+            emcPct: mean('emcPct'),
+            temperatureC: mean('temperatureC'),
+            isKnown: true,
+          },
+        ]),
+  ]
+}
+
+/** How far the air there may be out against the air that the piece was followed by, ± % MC. */
+const airDoubtPct = (air: RoomAir | undefined): number =>
+  air === undefined || air.kind === 'never' ? 0 : Math.hypot(air.emcDoubtPct, HOUSE_SENSOR_DOUBT_PCT)
 
 export function airThere(air: RoomAir | undefined): AirThere {
   if (air === undefined || air.kind === 'never') return { kind: 'never' }
@@ -90,27 +136,34 @@ export function carryCheckInput(material: CarryMaterial, asked: CarryAsked): Car
   const now = material.now.getTime()
   const there = airThere(room?.air)
   const startsAt = asked.startsAt.getTime()
-  const lastAt = startsAt + asked.stayMinutes * 60_000
-  const hours = Math.min(forecastHoursMax, Math.max(72, Math.ceil((lastAt - startsAt) / hourMs) + 48))
   return {
     now,
     piece: piece.facts,
-    history: historyOfPiece(material, piece),
-    baselineEmcPct: baselineOf(material, piece),
-    cutMcPct: piece.cutMcPct,
+    start: woodAt(material, piece, startsAt),
+    cut: piece.cut,
     there,
-    forecast:
-      there.kind === 'fresh'
-        ? comingHours({
-            now,
-            startsAt: Math.max(startsAt, now),
-            hours,
-            present: there,
-            record: [...(room?.hours ?? [])].map(([at, air]) => ({ at, ...air })),
-          })
-        : [],
+    airs: room !== undefined && there.kind === 'fresh' ? airsOfStay(material, piece, room, there, asked) : [],
+    airDoubtPct: airDoubtPct(room?.air),
+    pace: piece.pace,
     startsAt,
     stayMinutes: asked.stayMinutes,
     cover: asked.cover,
   }
+}
+
+/** The air of a stay: what was recorded since it went, and what is to come, in the cover asked about. */
+function airsOfStay(
+  material: CarryMaterial,
+  piece: PieceMaterial,
+  room: RoomMaterial,
+  there: { emcPct: number; temperatureC: number },
+  asked: CarryAsked,
+): AirFrom[] {
+  const now = material.now.getTime()
+  const startsAt = asked.startsAt.getTime()
+  const recorded = airsOf(piece.stays, (id) => material.rooms.get(id), startsAt, now)
+  const stayHours = Math.ceil(asked.stayMinutes / 60)
+  const hours = Math.min(forecastHoursMax, Math.max(72, stayHours + 48))
+  const coming = comingAirs(material, room, there, Math.max(startsAt, now), hours)
+  return [...recorded, ...coming.map((hour) => ({ ...hour, cover: asked.cover }))]
 }

@@ -1,19 +1,15 @@
 import { describe, expect, it } from 'vitest'
+import { type JointFacts, UNTOLD_JOINT } from './joint-defaults'
 import { steadyCarry } from './steady-carry'
 
-const ash62 = {
+/** Its hollow lid, of the ring's own wall, keeps step with it. */
+const ash62: JointFacts = {
+  ...UNTOLD_JOINT,
   wood: 'fraxinus-excelsior',
-  grain: 'end-grain',
-  wallMm: null,
-  spigotMm: null,
-  bodyWallMm: null,
   jointDiameterMm: 62,
-  lidForm: 'plug',
-  lidMm: null,
+  lidForm: 'hollow',
   fitGrade: 'easy',
-  clearanceMm: null,
-  allowanceMm: null,
-} as const
+}
 const house = { temperatureC: 20.6, humidityPct: 45 }
 const shop = { temperatureC: 8, humidityPct: 71 }
 

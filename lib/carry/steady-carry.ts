@@ -1,8 +1,8 @@
+import { movementLogSpread, allowanceLogSpread } from './joint-spread'
 import { emcPct } from '@/lib/wood/emc'
-import { diffusionMcPct } from './diffusion'
-import { EXPOSURE_OF_COVER, ringFractionChanged } from './joint'
 import { jointOfPiece, type JointFacts, type ResolvedJoint } from './joint-defaults'
-import { firstReachedMs, timeOutInSteadyAir, type TimeOut } from './time-out'
+import { timeOutInSteadyAir, type TimeOut } from './time-out'
+import { valueAt } from './used-doubt'
 
 export type SteadyAir = { readonly temperatureC: number; readonly humidityPct: number }
 
@@ -20,9 +20,8 @@ export type SteadyCarry = {
   readonly mcAfterPct: (minutes: number) => number
 }
 
-const MINUTE_MS = 60_000
 /** Beyond a month "given time" is the better answer. */
-const HORIZON_MS = 30 * 24 * 60 * MINUTE_MS
+const HORIZON_HOURS = 30 * 24
 
 /**
  * A box that was fitted in one air and is carried, open in work, into another that does not change: what the landing
@@ -32,7 +31,7 @@ const HORIZON_MS = 30 * 24 * 60 * MINUTE_MS
  * @param facts the piece; it must have a joint that can be worked out
  * @returns undefined for a piece without such a joint
  *
- * Source: `emcPct`, `ringFractionChanged` and `timeOutInSteadyAir`, each with its own.
+ * Source: `emcPct` and `timeOutInSteadyAir`, each with its own.
  */
 export function steadyCarry(house: SteadyAir, shop: SteadyAir, facts: JointFacts): SteadyCarry | undefined {
   const joint = jointOfPiece(facts)
@@ -42,33 +41,46 @@ export function steadyCarry(house: SteadyAir, shop: SteadyAir, facts: JointFacts
 function carryOfJoint(house: SteadyAir, shop: SteadyAir, joint: ResolvedJoint): SteadyCarry {
   const houseEmcPct = emcPct(house.temperatureC, house.humidityPct)
   const shopEmcPct = emcPct(shop.temperatureC, shop.humidityPct)
-  const apart = shopEmcPct - houseEmcPct
-  const fractionChanged = ringFractionChanged(joint.size, EXPOSURE_OF_COVER.open, {
-    densityKgM3: joint.densityKgM3,
+  const timeOut = timeOutInSteadyAir({
+    filter: joint.filter,
+    loss: joint.loss,
+    cover: 'open',
+    allowanceMm: joint.allowance.allowanceMm,
+    fromMcPct: houseEmcPct,
+    toEmcPct: shopEmcPct,
     temperatureC: shop.temperatureC,
-    mcPct: diffusionMcPct(houseEmcPct, shopEmcPct),
+    spreads: {
+      movementLog: movementLogSpread(joint.movement),
+      allowanceLog: allowanceLogSpread(joint.allowance),
+      airPct: 0,
+      startPct: 0,
+    },
   })
+  const hours = Float64Array.from(timeOut.curve.hours)
+  const ring = Float64Array.from(timeOut.ringMcPct)
   return {
     houseEmcPct,
     shopEmcPct,
     lowMcPct: houseEmcPct - joint.allowedMcPct,
     highMcPct: houseEmcPct + joint.allowedMcPct,
-    timeOut: timeOutInSteadyAir({
-      size: joint.size,
-      densityKgM3: joint.densityKgM3,
-      cover: 'open',
-      lossMmPerPct: joint.lossMmPerPct,
-      allowanceMm: joint.allowance.allowanceMm,
-      fromMcPct: houseEmcPct,
-      toEmcPct: shopEmcPct,
-      temperatureC: shop.temperatureC,
-    }),
-    minutesTo: (mcPct) => {
-      const share = apart === 0 ? 0 : (mcPct - houseEmcPct) / apart
-      if (share <= 0) return 0
-      const reachedMs = firstReachedMs((elapsedMs) => fractionChanged(elapsedMs / 1000), share, HORIZON_MS)
-      return reachedMs === undefined ? undefined : reachedMs / MINUTE_MS
-    },
-    mcAfterPct: (minutes) => houseEmcPct + apart * fractionChanged(minutes * 60),
+    timeOut,
+    minutesTo: (mcPct) => minutesTo(ring, hours, mcPct),
+    mcAfterPct: (minutes) => valueAt(ring, hours, minutes / 60),
   }
+}
+
+/** The ring goes one way in air that holds still, so there is one moment at most. */
+function minutesTo(ring: Float64Array, hours: Float64Array, mcPct: number): number | undefined {
+  const from = ring[0] ?? 0
+  const isRising = (ring.at(-1) ?? from) >= from
+  if (isRising ? mcPct <= from : mcPct >= from) return 0
+  for (let n = 1; n < ring.length; n += 1) {
+    const after = ring[n] ?? 0
+    if (isRising ? after < mcPct : after > mcPct) continue
+    const before = ring[n - 1] ?? 0
+    const at = hours[n - 1] ?? 0
+    const hour = at + (((hours[n] ?? at) - at) * (mcPct - before)) / (after - before)
+    return hour > HORIZON_HOURS ? undefined : hour * 60
+  }
+  return undefined
 }

@@ -26,6 +26,8 @@ const verdict = (word: 'fine' | 'keep-short' | 'leave', earlyAt: number | null):
   middleAt: earlyAt === null ? null : iso(earlyAt + 2 * 60 * minute),
   lateAt: null,
   ringMcPct: 8.5,
+  lidMcPct: 9,
+  mcDoubtPct: 0.5,
   cutMcPct: 8.5,
   thereEmcPct: 13.6,
   changePct: 1,

@@ -17,6 +17,8 @@ const verdict = (grade: 'fine' | 'keep-short' | 'leave', earlyAt: string | null)
   middleAt: null,
   lateAt: null,
   ringMcPct: 9,
+  lidMcPct: 9,
+  mcDoubtPct: 0.5,
   cutMcPct: 8.5,
   thereEmcPct: 13.6,
   changePct: 1,

@@ -55,6 +55,14 @@ const facts = {
   spigotMm: mm(1, 60).nullable(),
   lidMm: mm(1, 100).nullable(),
   bodyWallMm: mm(1, 100).nullable(),
+  /** Wall round the recess of a hollow lid. */
+  lidWallMm: mm(1, 60).nullable(),
+  /** Thickness of a blank in the round, and whether its ends are sealed. */
+  blankDiameterMm: mm(10, 600).nullable(),
+  endsSealed: z.boolean(),
+  roughedOn: day.nullable(),
+  /** The maker's word: weights alone decide whether it is ready. */
+  isReadyByWeight: z.boolean(),
   fitGrade: fitGradeSchema.nullable(),
   clearanceMm: mm(0, 5).nullable(),
   allowanceMm: mm(0.01, 5).nullable(),
@@ -84,6 +92,11 @@ export const newPieceSchema = z.strictObject({
   spigotMm: facts.spigotMm.default(null),
   lidMm: facts.lidMm.default(null),
   bodyWallMm: facts.bodyWallMm.default(null),
+  lidWallMm: facts.lidWallMm.default(null),
+  blankDiameterMm: facts.blankDiameterMm.default(null),
+  endsSealed: facts.endsSealed.default(false),
+  roughedOn: facts.roughedOn.default(null),
+  isReadyByWeight: facts.isReadyByWeight.default(false),
   clearanceMm: facts.clearanceMm.default(null),
   allowanceMm: facts.allowanceMm.default(null),
   finish: facts.finish.default(''),
@@ -157,6 +170,11 @@ export const pieceDetailSchema = pieceSchema.extend({
   spigotMm: z.number().nullable(),
   lidMm: z.number().nullable(),
   bodyWallMm: z.number().nullable(),
+  lidWallMm: z.number().nullable(),
+  blankDiameterMm: z.number().nullable(),
+  endsSealed: z.boolean(),
+  roughedOn: day.nullable(),
+  isReadyByWeight: z.boolean(),
   clearanceMm: z.number().nullable(),
   allowanceMm: z.number().nullable(),
   finish: z.string(),
@@ -177,6 +195,7 @@ export const pieceDetailSchema = pieceSchema.extend({
   mc: z
     .object({
       ringMcPct: z.number(),
+      lidMcPct: z.number(),
       cutMcPct: z.number(),
       doubtPct: z.number(),
       usedFraction: z.number().nullable(),

@@ -54,6 +54,7 @@ const plainSpaces = (text: string) => text.replaceAll('\u00a0', ' ')
 describe('the figures behind it', () => {
   const mc = {
     ringMcPct: 10.6,
+    lidMcPct: 10.6,
     cutMcPct: 9.2,
     doubtPct: 0.7,
     usedFraction: 0.5,
@@ -68,7 +69,7 @@ describe('the figures behind it', () => {
     expect(plainSpaces(movedWords(mc, 'imperial'))).toContain('0.004 in')
   })
   it('gives no figure for what is too little to tell', () => {
-    const words = movedWords({ ...mc, ringMcPct: 9.3, lossMm: 0.01 }, 'metric')
+    const words = movedWords({ ...mc, ringMcPct: 9.3, lidMcPct: 9.3, lossMm: 0.01 }, 'metric')
     expect(plainSpaces(words)).toContain('which takes next to nothing of the 0.20 mm')
   })
   it('leaves the millimetres out when they aren’t known', () => {

@@ -1,4 +1,4 @@
-import { jointOfPiece, ringOfPiece } from '@/lib/carry/joint-defaults'
+import { jointOfPiece, woodOfPiece } from '@/lib/carry/joint-defaults'
 import type { PieceFacts } from '@/lib/carry/carry-check'
 import { formatEmc } from '@/lib/format/figures'
 import { DUST_ALWAYS, dustNote } from '@/lib/wood/dust'
@@ -53,7 +53,7 @@ export function assumedWords(
 ): string[] {
   const isReckoned = facts.stage === 'box' && facts.woodKind === 'plain'
   const joint = isReckoned && facts.fitGrade !== 'threaded' ? jointOfPiece(facts) : undefined
-  const sizes = joint?.assumed ?? (isReckoned ? ringOfPiece(facts).assumed : [])
+  const sizes = joint?.assumed ?? (isReckoned ? woodOfPiece(facts).assumed : [])
   return [
     ...sizes,
     ...(taken.keepRoomName === null ? [] : [`kept to match ${taken.keepRoomName}`]),

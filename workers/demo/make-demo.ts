@@ -1,5 +1,6 @@
 import type { Kysely } from 'kysely'
 import { insertDemoArrivals, markDemoComplete, updateDemoSensorState } from '@/db/queries/demo'
+import { followPieces } from '@/db/queries/follow-pieces'
 import type { Database } from '@/db/schema'
 import { topicOf } from '@/lib/readings/topic'
 import type { DemoRoster } from '@/lib/sensors/demo-roster'
@@ -44,8 +45,12 @@ export async function makeDemo(
   say('Making the demo: pieces, carries and notices')
   await db.transaction().execute(async (trx) => {
     const made = await makePieces(trx, place, now)
+    const site = { siteId: place.siteId, timeZone: placeTimeZone }
+    await followPieces(trx, site, null, now)
     const unsettled = await settleJoints(trx, place, made, now)
     if (unsettled.length > 0) say(`In this season no joint tells the whole story of ${unsettled.join(', ')}.`)
+    // Settling changed the joints of some: their wood is followed as they are now.
+    await followPieces(trx, site, null, now)
     await makeNotices(trx, place, made, now)
     await makeArrivals(trx, place, now)
     await keepRoster(rosterOf(place, now))

@@ -6,6 +6,7 @@ import { listen } from '../_shared/listen'
 import { createLogger } from '../_shared/logger'
 import { onShutdown } from '../_shared/shutdown'
 import { readRunningConfig } from '../env'
+import { followSites } from '../wood/follow-sites'
 import { evaluateAll } from './evaluate'
 
 /** Often enough for a time told to the minute; what a person does is looked at at once. */
@@ -30,6 +31,20 @@ const loop = every(
     if (told > 0) logger.info({ told }, 'notices made')
   },
 )
+/** The wood changes by the hour; late readings are looked for each minute. */
+const followIntervalMs = 60_000
+const follow = every(
+  {
+    intervalMs: followIntervalMs,
+    onError: (error) => logger.error({ err: error }, 'could not follow the wood'),
+  },
+  async () => {
+    const counts = await followSites(db, new Date(), (site, error) =>
+      logger.error({ err: error, site }, 'could not follow the wood of a site'),
+    )
+    if (counts.rebuilt > 0) logger.info(counts, 'wood followed anew')
+  },
+)
 const listener = listen(config.databaseUrl, {
   onMessage: ({ kind }) => {
     if (kind !== 'reading' && kind !== 'notice') loop.nudge()
@@ -42,6 +57,7 @@ onShutdown(
   async () => {
     await listener.stop()
     await loop.stop()
+    await follow.stop()
     await db.destroy()
   },
   { logger },

@@ -4,6 +4,7 @@ import { useState } from 'react'
 import { useWidth } from '@/app/_components/charts/use-width'
 import { SentenceInput, SentenceSelect } from '@/app/_components/ui/sentence-control'
 import { FlowingSentence } from '@/app/sites/_components/flowing-sentence'
+import { UNTOLD_JOINT } from '@/lib/carry/joint-defaults'
 import { steadyCarry, type SteadyCarry } from '@/lib/carry/steady-carry'
 import { formatEmc } from '@/lib/format/figures'
 import { formatDuration } from '@/lib/format/times'
@@ -49,18 +50,13 @@ function carryOf(typed: Typed): SteadyCarry | undefined {
   return steadyCarry(
     { temperatureC: houseC, humidityPct: houseRh },
     { temperatureC: shopC, humidityPct: shopRh },
+    // A hollow lid of the same wall keeps step with the ring, so that one mark on the rule stands for both.
     {
+      ...UNTOLD_JOINT,
       wood: 'fraxinus-excelsior',
-      grain: 'end-grain',
       jointDiameterMm: 62,
-      lidForm: 'plug',
+      lidForm: 'hollow',
       fitGrade: typed.fit,
-      wallMm: null,
-      spigotMm: null,
-      bodyWallMm: null,
-      lidMm: null,
-      clearanceMm: null,
-      allowanceMm: null,
     },
   )
 }

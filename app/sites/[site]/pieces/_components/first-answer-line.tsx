@@ -1,6 +1,6 @@
 import { Callout } from '@/app/_components/ui/callout'
 import { firstAnswer } from '@/lib/carry/first-answer'
-import { type JointFacts, jointOfPiece } from '@/lib/carry/joint-defaults'
+import { type JointFacts, jointOfPiece, UNTOLD_JOINT } from '@/lib/carry/joint-defaults'
 import { formatDuration } from '@/lib/format/times'
 import type { NewPiece } from '@/lib/pieces/piece'
 import type { RoomKind } from '@/lib/rooms/room'
@@ -14,7 +14,7 @@ export type RoomWithAir = {
   air: { temperatureC: number; humidityPct: number } | null
 }
 
-type Answered = Pick<NewPiece, 'wood' | 'jointDiameterMm' | 'fitGrade'>
+type Answered = Pick<NewPiece, 'wood' | 'jointDiameterMm' | 'fitGrade'> & Pick<JointFacts, 'ownFigures'>
 
 /** Only these are asked about: where boxes go to be worked on. */
 const places: readonly RoomKind[] = ['shop', 'store', 'van', 'outdoor']
@@ -33,17 +33,7 @@ export function FirstAnswerLine({
     .flatMap((kind) => rooms.filter((room) => room.kind === kind))
     .find((room) => room.air !== null && room.id !== here?.id)
   if (!here?.air || !there?.air) return null
-  const facts: JointFacts = {
-    ...answers,
-    grain: 'end-grain',
-    lidForm: 'plug',
-    wallMm: null,
-    spigotMm: null,
-    lidMm: null,
-    bodyWallMm: null,
-    clearanceMm: null,
-    allowanceMm: null,
-  }
+  const facts: JointFacts = { ...UNTOLD_JOINT, ...answers }
   const answer = firstAnswer(here.air, there.air, facts)
   const assumed = jointOfPiece(facts)?.assumed
   if (answer === undefined || assumed === undefined) return null

@@ -1,0 +1,29 @@
+import { logSpreadNineInTen, together } from './spread'
+
+/**
+ * How far what the model goes by may be out. Each is the ratio within which it lies nine times in ten, the same for every
+ * piece; what a piece or a site knows better replaces it where it is used.
+ */
+
+/** Diffusion through wood of a known density. Status: derived, from measured aspen and spruce against the formula. */
+export const DIFFUSION_FACTOR = 2
+
+/**
+ * Times run from 1.4 to 0.65 of themselves where moisture moves 3 to 50 times as fast along the grain as across it,
+ * instead of 10 times. Enters as a doubt of the pace, as a factor on diffusion. Status: derived.
+ */
+export const END_GRAIN_FACTOR = 1.5
+
+/** Movement within one species, ±20 %, the longer side (1 / 0.8) either way. Status: spread from memory. */
+export const SPECIES_MOVEMENT_FACTOR = 1.25
+/** Movement where only the class is known, ±40 %, counted once. Status: derived. */
+export const CLASS_MOVEMENT_FACTOR = 1.5
+
+/** An allowance that the maker gave or measured, ±30 %, the longer side (1 / 0.7) either way. Status: guess. */
+export const TOLD_ALLOWANCE_FACTOR = 1.4
+
+/** Spread of the pace of the wood, as the standard deviation of a logarithm. */
+export const PACE_LOG_SPREAD = together(
+  logSpreadNineInTen(DIFFUSION_FACTOR),
+  logSpreadNineInTen(END_GRAIN_FACTOR),
+)
