@@ -45,7 +45,7 @@ export function LidDrawing({ shape, turned, name, onTurn }: LidDrawingProps) {
     <svg
       ref={svg}
       viewBox={`0 0 ${String(FRAME.width)} ${String(FRAME.height)}`}
-      className="mx-auto block w-full max-w-[27rem] select-none print:max-w-[20rem]"
+      className="mx-auto block w-full max-w-[27rem] select-none print:max-w-[18rem]"
       fontSize="14"
     >
       <title>{name}</title>

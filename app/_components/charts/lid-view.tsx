@@ -88,7 +88,7 @@ function LidFigure({
             Least clearance, {units === 'metric' ? 'mm' : 'in'}, by how far the lid is turned. Grey: the
             middle 8 in 10.
           </p>
-          <p className="mt-3">By the quarter turn: {shape.quarterTurnWords}.</p>
+          <p className="mt-3 print:mt-1">By the quarter turn: {shape.quarterTurnWords}.</p>
           <Worked shape={shape} turned={turned} units={units} spigotOn={spigotOn} />
         </div>
       </div>

@@ -29,7 +29,7 @@ export function CutSheet({ choices, diameterMm }: CutSheetProps) {
   const isTurnedRound = form.values !== undefined && form.values.yearHighPct < form.values.yearLowPct
   return (
     <Sheet id="cut" title="Not cut yet?" aside="Whether the joint may be cut today.">
-      <FlowingSentence>
+      <FlowingSentence className="print:text-[16px]">
         The same wood and joint, still to be cut. It is at <FieldWord of={form} name="blankPct" />, give or
         take <FieldWord of={form} name="blankDoubtPct" />; its home goes from{' '}
         <FieldWord of={form} name="yearLowPct" /> to <FieldWord of={form} name="yearHighPct" /> in a year, and
@@ -48,21 +48,26 @@ export function CutSheet({ choices, diameterMm }: CutSheetProps) {
         more={isTurnedRound ? ['The dampest of the year must not be drier than the driest.'] : []}
       />
       {shown === undefined ? null : (
-        <div className={`mt-4 flex flex-col gap-5 ${isOld ? 'opacity-60' : ''}`}>
+        <div className={`mt-4 flex flex-col gap-5 print:mt-0 print:gap-1 ${isOld ? 'opacity-60' : ''}`}>
           <div aria-live="polite">
-            <p className="text-verdict">
+            <p className="text-verdict print:text-body">
               <RichText parts={shown.words.headline} />
             </p>
-            <p className="mt-1 max-w-words text-ink-soft">{shown.words.second}</p>
+            <p className="mt-1 max-w-words text-ink-soft print:max-w-none print:text-label">
+              {shown.words.second}
+            </p>
           </div>
           {shown.check.kind === 'verdict' ? (
-            <>
+            // Paper has room for the answer in words; the rule would make a second sheet of it.
+            <div className="flex flex-col gap-5 print:hidden">
               <FitCheckRule input={shown.input} check={shown.check} />
               <FitCheckAnswers answers={shown.answers} />
-            </>
+            </div>
           ) : null}
           {shown.words.assumed.length === 0 ? null : (
-            <p className="max-w-words text-label text-ink-soft">Assumed: {shown.words.assumed.join(' ')}</p>
+            <p className="max-w-words text-label text-ink-soft print:hidden">
+              Assumed: {shown.words.assumed.join(' ')}
+            </p>
           )}
         </div>
       )}

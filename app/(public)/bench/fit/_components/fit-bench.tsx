@@ -68,16 +68,14 @@ export function FitBench() {
           <Sheet>
             <Facts facts={fitFacts(shown, units)} />
           </Sheet>
-          {shown.kind === 'joint' && shown.courses.length > 0 ? (
-            <Sheet
-              id="grades"
-              title="Grade by grade"
-              aside="From when the joint was cut, tried at every turn."
-            >
-              <GradeTable courses={shown.courses} units={units} />
-            </Sheet>
-          ) : null}
-          <CutSheet choices={choices} diameterMm={shown.diameterMm} />
+          <div className="flex flex-col gap-7 print:grid print:grid-cols-[3fr_2fr] print:items-start">
+            {shown.kind === 'joint' && shown.courses.length > 0 ? (
+              <Sheet id="grades" title="Grade by grade" aside="From when it was cut, either way, about.">
+                <GradeTable courses={shown.courses} units={units} />
+              </Sheet>
+            ) : null}
+            <CutSheet choices={choices} diameterMm={shown.diameterMm} />
+          </div>
         </div>
       )}
       <div className="px-4 sm:px-0">

@@ -29,7 +29,7 @@ type FitSentenceProps = {
 export function FitSentence({ form, choices, setChoices }: FitSentenceProps) {
   const isAir = choices.tell === 'air'
   return (
-    <FlowingSentence>
+    <FlowingSentence className="print:text-[16px]">
       A box of{' '}
       <WoodWord
         label="Wood"

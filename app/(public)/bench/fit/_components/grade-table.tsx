@@ -8,8 +8,8 @@ import type { UnitSystem } from '@/lib/sites/site'
 
 type GradeTableProps = { courses: readonly GradeCourse[]; units: UnitSystem }
 
-const atMost = (pct: number | undefined, without: string): string =>
-  pct === undefined ? without : `${formatPoints(pct)} either way`
+const either = (pct: number | undefined, without: string): string =>
+  pct === undefined ? without : `± ${formatPoints(pct)}`
 
 /** Grade by grade: when each fit is gone in this joint, and when it may bind. */
 export function GradeTable({ courses, units }: GradeTableProps) {
@@ -23,21 +23,21 @@ export function GradeTable({ courses, units }: GradeTableProps) {
     },
     {
       id: 'gone',
-      header: 'Gone at about',
+      header: 'Gone at',
       phone: 'line',
       cell: ({ goneAtPct, isBeyondSensors }) => (
         <>
-          {atMost(goneAtPct, 'not worked out')}
-          {isBeyondSensors ? ', less than a sensor can call' : ''}
+          {either(goneAtPct, 'not worked out')}
+          {isBeyondSensors ? ', beyond any sensor' : ''}
         </>
       ),
     },
     {
       id: 'binds',
-      header: 'May bind at about',
+      header: 'May bind at',
       phone: 'line',
       cell: ({ grade, bindsAtPct }) =>
-        atMost(bindsAtPct, grade === 'snap' ? 'tight from the start' : 'not worked out'),
+        either(bindsAtPct, grade === 'snap' ? 'tight from the start' : 'not worked out'),
     },
   ]
   return (
