@@ -5,6 +5,7 @@ import { Cautions } from '@/app/_components/ui/caution'
 import { RichText } from '@/app/_components/ui/rich-text'
 import { Sheet } from '@/app/_components/ui/sheet'
 import { carryCautions } from '@/lib/carry/cautions'
+import { plainText } from '@/lib/format/sentence'
 import { BenchFoot } from '../../_components/bench-foot'
 import { BenchSentence } from '../../_components/bench-sentence'
 import { Facts } from '../../_components/facts'
@@ -26,6 +27,7 @@ import {
   timeOutTwin,
 } from './time-out-model'
 import { TimeOutSentence } from './time-out-sentence'
+import { UsedCurve } from './used-curve'
 
 const choiceParsers = {
   wood: parseAsString.withDefault('fraxinus-excelsior'),
@@ -69,6 +71,9 @@ export function TimeOutBench() {
               />
             </Sheet>
           ) : null}
+          <Sheet ticks>
+            <UsedCurve answer={shown.answer} sentence={plainText(timeOutSentence(shown))} />
+          </Sheet>
         </div>
       )}
       <div className="px-4 sm:px-0">

@@ -55,6 +55,14 @@ describe('the time-out bench', () => {
     expect(timeOutFacts(same, 'metric').map((fact) => fact.name)).not.toContain('Early edge')
   })
 
+  it('tells the early edge also where the middle keeps its fit', () => {
+    // Enough for the whole change by the middle of the reckoning, with little over.
+    const found = benchTimeOut({ ...values, allowanceMm: 0.36 }, { ...choices, fit: 'own', lid: 'any' })
+    expect(found.answer).toMatchObject({ binds: false, minutesEarly: expect.any(Number) })
+    expect(plainText(timeOutSentence(found))).toMatch(/^Bring it in within .* more likely keeps its fit/)
+    expect(timeOutFacts(found, 'metric').map((fact) => fact.name)).toContain('Early edge')
+  })
+
   it('names a wood that is not known, and how far it may be out', () => {
     const unknown = benchTimeOut(values, { ...choices, wood: 'quercus-imaginaria' })
     expect(timeOutFacts(unknown, 'metric').at(-1)).toMatchObject({

@@ -121,6 +121,8 @@ export function benchTimeOut(
 
 /** "Bring it in within 2 h 10 min; more likely good until about 4 h 40 min." */
 export function timeOutSentence({ answer }: BenchTimeOut): TextPart[] {
+  if (!answer.binds && answer.minutesEarly !== undefined)
+    return say`Bring it in within ${strong(formatDuration(answer.minutesEarly))}, though it more likely keeps its fit there for good.`
   if (!answer.binds) return say`${answer.words}`
   return say`Bring it in within ${strong(formatDuration(answer.minutesEarly))}; it is more likely good until about ${formatDuration(answer.minutes)}.`
 }
@@ -139,13 +141,17 @@ export function timeOutFacts({ query, answer, isWoodKnown, fit }: BenchTimeOut, 
       figure: `${formatEmc(query.fromMcPct)} to ${formatEmc(query.toEmcPct)}`,
       words: `The wood is taken to match the first; given time it ends at the second, ${formatPoints(apart)} ${apart < 0 ? 'drier' : 'damper'} (points are % MC).`,
     },
-    ...(answer.binds
-      ? [
+    ...(answer.minutesEarly === undefined
+      ? []
+      : [
           {
             name: 'Early edge',
             figure: formatDuration(answer.minutesEarly),
             words: 'By then 1 in 10 like it may bind. This is the one to keep.',
           },
+        ]),
+    ...(answer.binds
+      ? [
           {
             name: 'Middle',
             figure: `about ${formatDuration(answer.minutes)}`,
