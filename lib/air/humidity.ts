@@ -13,7 +13,7 @@ export const STANDARD_PRESSURE_PA = 101_325
 export const WATER_TO_AIR_MASS_RATIO = 0.621945
 
 /** Gas constant of water vapour, J/(kg K). Source: CODATA gas constant over the molar mass of water. */
-const VAPOUR_GAS_CONSTANT = 461.523
+export const VAPOUR_GAS_CONSTANT = 461.523
 const GRAMS_PER_KG = 1000
 
 export function assertAir(temperatureC: number, humidityPct: number): void {

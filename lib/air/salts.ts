@@ -8,7 +8,7 @@ export type SaltFixedPoint = { readonly salt: Salt; readonly humidityPct: number
 export const SALTS_MIN_C = 5
 export const SALTS_MAX_C = 35
 
-type SaltRow = {
+export type SaltRow = {
   readonly salt: Salt
   /** % RH, and per °C, °C² and °C³. */
   readonly polynomial: readonly [number, number, number, number]
@@ -20,7 +20,7 @@ type SaltRow = {
  * Source: Greenspan, J. Res. NBS 81A (1977), 89-96, Table 1; Mg(NO3)2 and K2SO4 from memory. The linear term of LiCl is
  * positive, or its own table of values is not met.
  */
-const SALTS: readonly SaltRow[] = [
+export const SALTS: readonly SaltRow[] = [
   {
     salt: 'LiCl',
     polynomial: [11.2323, 0.00824245, -0.00021489, 0],

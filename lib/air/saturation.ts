@@ -18,10 +18,10 @@ export const SATURATION_MAX_C = 200
  * Hyland and Wexler's coefficients, in ln(Pa) against kelvin: 1/K, constant, K, K², K³, K⁴, ln K.
  * Source: ASHRAE Handbook, Fundamentals (2017), ch. 1, eqs. 5 (ice) and 6 (water).
  */
-const OVER_ICE = [
+export const OVER_ICE = [
   -5.6745359e3, 6.3925247, -9.677843e-3, 6.2215701e-7, 2.0747825e-9, -9.484024e-13, 4.1635019,
 ] as const
-const OVER_WATER = [
+export const OVER_WATER = [
   -5.8002206e3, 1.3914993, -4.8640239e-2, 4.1764768e-5, -1.4452093e-8, 0, 6.5459673,
 ] as const
 
@@ -45,9 +45,9 @@ export function saturationPressurePa(temperatureC: number, over: SaturatedOver =
 }
 
 /** Magnus coefficients: Pa, none, °C. Source: WMO Guide to Instruments (WMO-No. 8), annex 4.B. Status: from memory. */
-const MAGNUS_PA = 611.2
-const MAGNUS_A = 17.62
-const MAGNUS_B_C = 243.12
+export const MAGNUS_PA = 611.2
+export const MAGNUS_A = 17.62
+export const MAGNUS_B_C = 243.12
 
 /**
  * A short form of the above for lines on charts, where a pixel is coarser than its error.

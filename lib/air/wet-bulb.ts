@@ -8,11 +8,11 @@ import { saturationPressurePa } from './saturation'
  * Below: heat of sublimation at 0 °C, kJ/kg, its fall and the heat capacity of ice, kJ/(kg K).
  * Source: ASHRAE Handbook, Fundamentals (2017), ch. 1, eqs. 33 and 35.
  */
-const VAPORISATION_FALL = 2.326
-const WATER_HEAT_CAPACITY = 4.186
-const SUBLIMATION_HEAT_AT_ZERO = 2830
-const SUBLIMATION_FALL = 0.24
-const ICE_HEAT_CAPACITY = 2.1
+export const VAPORISATION_FALL = 2.326
+export const WATER_HEAT_CAPACITY = 4.186
+export const SUBLIMATION_HEAT_AT_ZERO = 2830
+export const SUBLIMATION_FALL = 0.24
+export const ICE_HEAT_CAPACITY = 2.1
 
 /** Lowest wet bulb looked for in air without any water, °C: under that of the coldest air accepted. */
 const LOWEST_WET_BULB_C = -60

@@ -2,16 +2,16 @@ import { assertInRange } from '@/lib/assert'
 import { kelvinFromCelsius } from '@/lib/units'
 
 /* Siau, Transport Processes in Wood (1984): bound-water coefficient and cell geometry. Status: from memory. */
-const BOUND_WATER_M2_PER_S = 7e-6
-const ACTIVATION_J_PER_MOL = 38_500
-const ACTIVATION_FALL_J_PER_MOL_PCT = 290
-const GAS_CONSTANT_J_PER_MOL_K = 8.314462618
-const CELL_GEOMETRY_AT_DRY = 0.667
-const CELL_GEOMETRY_PER_PCT = 0.01
+export const BOUND_WATER_M2_PER_S = 7e-6
+export const ACTIVATION_J_PER_MOL = 38_500
+export const ACTIVATION_FALL_J_PER_MOL_PCT = 290
+export const GAS_CONSTANT_J_PER_MOL_K = 8.314462618
+export const CELL_GEOMETRY_AT_DRY = 0.667
+export const CELL_GEOMETRY_PER_PCT = 0.01
 /** Density at 12 % MC over this is the basic specific gravity, kg/m³. */
-const DENSITY_TO_GRAVITY_KG_M3 = 1120
+export const DENSITY_TO_GRAVITY_KG_M3 = 1120
 /** Above this the formula is not meant to be used, % MC. */
-const MC_CAP_PCT = 25
+export const MC_CAP_PCT = 25
 
 /** Range of wood that this product answers for, kg/m³ at 12 % MC. */
 export const DENSITY_MIN_KG_M3 = 200

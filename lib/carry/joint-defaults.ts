@@ -9,12 +9,12 @@ import type { PieceFacts } from './carry-check'
 import { jointLoss, type JointLoss } from './joint-loss'
 
 /** Where a size was not told. Status: guess, all of them. */
-const WALL_MM = 2.5
-const WALL_OF_BODY = 0.6
-const WALL_OF_BODY_MIN_MM = 2
-const WALL_OF_BODY_MAX_MM = 4
-const SPIGOT_MM = 6
-const PLUG_LID_MM = 8
+export const WALL_MM = 2.5
+export const WALL_OF_BODY = 0.6
+export const WALL_OF_BODY_MIN_MM = 2
+export const WALL_OF_BODY_MAX_MM = 4
+export const SPIGOT_MM = 6
+export const PLUG_LID_MM = 8
 
 export type WoodFacts = Pick<
   PieceFacts,

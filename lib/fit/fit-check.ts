@@ -60,10 +60,10 @@ export type FitCheck =
 export const WIDEST_DOUBT_PCT = 1
 
 /** A joint is cut no finer than this, mm. Common practice, no source. */
-const STEP_MM = 0.05
+export const STEP_MM = 0.05
 
 /** Most that may be left beyond the next looser grade's own clearance: none; and at all, mm. Status: guess. */
-const MOST_EXTRA_MM = 0.2
+export const MOST_EXTRA_MM = 0.2
 
 const LOOSER: Readonly<Partial<Record<FitGrade, FitGrade>>> = {
   suction: 'snug',

@@ -26,16 +26,16 @@ export const UNKNOWN_ALLOWANCE_LOW_MM = 0.08
 export const UNKNOWN_ALLOWANCE_HIGH_MM = 0.27
 
 /** Half the figure either way. Status: guess. */
-const GRADE_SPREAD = 0.5
+export const GRADE_SPREAD = 0.5
 /** Doubt of an allowance that the maker gave, fraction. Status: derived with the early edge (±30 %). */
-const TOLD_SPREAD = 0.3
+export const TOLD_SPREAD = 0.3
 
 /** Share of a measured clearance that may go. Status: guess, the ratio of snug, easy and loose above. */
-const ALLOWANCE_OF_CLEARANCE = 0.8
+export const ALLOWANCE_OF_CLEARANCE = 0.8
 /** A suction lid loses its sigh sooner. Status: guess, the ratio of the grade above. */
-const SUCTION_ALLOWANCE_OF_CLEARANCE = 0.6
+export const SUCTION_ALLOWANCE_OF_CLEARANCE = 0.6
 /** Below this nothing is left to share out, mm: the tightest grade's allowance. Status: guess. */
-const LEAST_ALLOWANCE_MM = 0.03
+export const LEAST_ALLOWANCE_MM = 0.03
 
 export type FitAsTold = {
   readonly fitGrade: FitGrade | null

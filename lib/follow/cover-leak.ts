@@ -13,9 +13,9 @@ export type ClosedCover =
   | { readonly kind: 'bag'; readonly areaM2: number; readonly massG: number }
 
 /** Air changes an hour of a lidded tub at rest. Status: guess, generous. */
-const TUB_CHANGES_PER_H = 0.5
+export const TUB_CHANGES_PER_H = 0.5
 /** Water through thin polyethylene across the difference of house and shop, g/(m² day). Status: guess. */
-const BAG_G_PER_M2_DAY = 3
+export const BAG_G_PER_M2_DAY = 3
 /** That difference, as vapour pressure: 3 g/m³ at 10 °C. Status: derived. */
 const BAG_REFERENCE_PA = 392
 

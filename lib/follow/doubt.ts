@@ -3,7 +3,7 @@ import type { WoodState } from './wood-state'
 /** Doubt of the EMC that a sensor in a house gives, ± % MC. Status: derived (±3 % RH near 50 % RH). */
 export const HOUSE_SENSOR_DOUBT_PCT = 0.5
 /** Doubt of wood that nobody followed: of hours without a reading, of the time before the record, ± % MC. Status: guess. */
-const UNFOLLOWED_DOUBT_PCT = 1.5
+export const UNFOLLOWED_DOUBT_PCT = 1.5
 
 /** How far wood may be out for what was not heard of it, ± % MC, 8 in 10. */
 export const startDoubtPct = ({ unknownShare }: Pick<WoodState, 'unknownShare'>): number =>

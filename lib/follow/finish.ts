@@ -16,7 +16,7 @@ export const FILM_M_PER_S: Readonly<Record<Film, number>> = {
 }
 
 /** Half of the resistance counts: a constant film promises 2 to 29 points too much after a week. Status: derived. */
-const COUNTED_SHARE = 0.5
+export const COUNTED_SHARE = 0.5
 
 const WORDS: readonly (readonly [RegExp, Film])[] = [
   [/epoxy|resin finish/i, 'epoxy'],

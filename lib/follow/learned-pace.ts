@@ -23,10 +23,10 @@ export type Pace = {
 }
 
 /** Below this part of the allowance a hand feels nothing; above the other the lid binds. Status: guess. */
-const FELT_FROM = 0.4
-const BINDS_FROM = 1.3
+export const FELT_FROM = 0.4
+export const BINDS_FROM = 1.3
 /** What else than the pace an outcome hangs on: movement, allowance, the hand that judged. Status: guess. */
-const OUTCOME_LOG_SPREAD = 0.45
+export const OUTCOME_LOG_SPREAD = 0.45
 
 const GRID = 81
 const GRID_HALF_WIDTH = 4

@@ -7,7 +7,7 @@ import type { PieceFilter } from './wood-state'
 export const ROUGHED_WALL_MM = 20
 export const BLANK_DIAMETER_MM = 75
 /** A blank in the round is taken to be twice as long as it is thick. Status: guess. */
-const BLANK_LENGTH_OF_DIAMETER = 2
+export const BLANK_LENGTH_OF_DIAMETER = 2
 
 /** The sizes of a piece that its wood is followed by, all told or filled in. */
 export type FilterFacts = {

@@ -96,7 +96,7 @@ export type CorrectedWeight<W> = W & {
 }
 
 /** MC taken for a piece of which nothing is known, % MC: a tenth off in the oven-dry mass is a tenth of a correction. */
-const ASSUMED_MC_PCT = 12
+export const ASSUMED_MC_PCT = 12
 
 /**
  * Weights with the room's drift taken away: W - m D/100.

@@ -7,7 +7,7 @@ const TRUSTED_FROM_PCT: Record<MeterKind, number> = { resistance: 6, dielectric:
 const TRUSTED_TO_PCT = 30
 
 /** 0.5 % MC for each 5.6 K (10 °F) away from calibration. Source: Wood Handbook (FPL-GTR-190, 2010), p. 13-3. */
-const TEMPERATURE_CORRECTION_PCT_PER_K = 0.5 / 5.6
+export const TEMPERATURE_CORRECTION_PCT_PER_K = 0.5 / 5.6
 
 /** What meters are calibrated at unless their paper says otherwise, °C (70 °F). Status: from memory. */
 export const METER_CALIBRATION_C = 21

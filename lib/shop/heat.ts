@@ -6,10 +6,10 @@ const SECONDS_PER_H = 3600
 const J_PER_KJ = 1000
 
 /** Heat that one m³ of air takes for each K, spread over an hour: 0.335 W h. Often rounded to 0.33. */
-const AIR_HEAT_WH_PER_M3_K = (AIR_DENSITY_KG_M3 * DRY_AIR_HEAT_CAPACITY * J_PER_KJ) / SECONDS_PER_H
+export const AIR_HEAT_WH_PER_M3_K = (AIR_DENSITY_KG_M3 * DRY_AIR_HEAT_CAPACITY * J_PER_KJ) / SECONDS_PER_H
 
 /** Heat to evaporate water at room temperature, MJ/kg. Source: ASHRAE Handbook, Fundamentals (2017), ch. 1, rounded. */
-const LATENT_HEAT_MJ_PER_KG = 2.45
+export const LATENT_HEAT_MJ_PER_KG = 2.45
 const MJ_PER_KWH = 3.6
 
 /** Heat to hold a room so much warmer than what is round it, W. */

@@ -6,7 +6,7 @@ import { mouldSurfaceHumidityPct, nearDewPointK } from './policy'
 import type { ShopAir } from './warm-to'
 
 /** Share of the way from outside to inside that a cold inner surface has come, without a sensor on it. From memory. */
-const SURFACE_FACTOR = 0.75
+export const SURFACE_FACTOR = 0.75
 
 /** A surface in the room: measured, or taken from the outdoor temperature. */
 export type Surface = { readonly temperatureC: number; readonly from: 'measured' | 'assumed' }

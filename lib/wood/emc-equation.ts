@@ -11,6 +11,9 @@ const K1 = [6.27, -0.00938, -0.000303] as const
 const K2 = [1.91, 0.0407, -0.000293] as const
 const PCT_SCALE = 1800
 
+/** The same by name, for the page that prints the equation. */
+export const EMC_PARAMETERS = { W, K, K1, K2, scale: PCT_SCALE } as const
+
 /** The warmest and coldest the printed table reaches, °C (30 and 200 °F). */
 const EQUATION_MIN_C = -1.2
 const EQUATION_MAX_C = 93.4
