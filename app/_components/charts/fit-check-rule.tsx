@@ -95,10 +95,18 @@ export function FitCheckRule({ input, check, pieceName = 'The piece now' }: FitC
             <text x={width - 8} y={BODY.bottom - 19} textAnchor="end" fill="var(--ink)">
               % MC
             </text>
+            <Piece mcPct={mcPct} mcDoubtPct={mcDoubtPct} words={pieceWords} x={x} width={width} />
             {inSight.map((stretch) => (
               <Stretch key={`${stretch.kind}-${String(stretch.fromMcPct)}`} stretch={stretch} x={x} />
             ))}
-            <Piece mcPct={mcPct} mcDoubtPct={mcDoubtPct} words={pieceWords} x={x} width={width} />
+            <circle
+              cx={x(mcPct)}
+              cy={STRETCH_Y}
+              r="6"
+              fill="var(--ink)"
+              stroke="var(--board)"
+              strokeWidth="1.5"
+            />
           </g>
         </svg>
       </div>
@@ -180,7 +188,14 @@ function Stretch({ stretch, x }: X & { stretch: FitStretch }) {
         strokeDasharray={dash}
       />
       {to - from > textWidth(words, true) + 6 ? (
-        <text x={(from + to) / 2} y={STRETCH_Y + 20} textAnchor="middle" fontWeight={weight} fill={colour}>
+        <text
+          className="halo"
+          x={(from + to) / 2}
+          y={STRETCH_Y + 20}
+          textAnchor="middle"
+          fontWeight={weight}
+          fill={colour}
+        >
           {words}
         </text>
       ) : null}
@@ -207,7 +222,6 @@ function Piece({ mcPct, mcDoubtPct, words, x, width }: PieceProps) {
         strokeWidth="6"
         opacity="0.35"
       />
-      <circle cx={at} cy={STRETCH_Y} r="6" fill="var(--ink)" stroke="var(--board)" strokeWidth="1.5" />
       <text className="halo" x={textX} y={HEIGHT - 10} textAnchor="middle" fontWeight="600" fill="var(--ink)">
         {words}
       </text>
