@@ -64,7 +64,7 @@ export function TimeOutSentence({ form, choices, setChoices }: TimeOutSentencePr
           with a wall of <FieldWord of={form} name="lidWallMm" />
         </>
       ) : null}
-      , fits{' '}
+      , which fits{' '}
       <Choice
         label="How the lid fits"
         of={fits}
