@@ -11,6 +11,17 @@ const mapleBox = {
 const answer = (more: Record<string, string> = {}) =>
   fitAnswer(fitQuerySchema.parse({ ...mapleBox, ...more }))
 
+describe('fit: the ends of its range', () => {
+  it('answers for the widest joint and clearance', () => {
+    expect(answer({ diameterMm: '1000', clearanceMm: '10', mcChangePct: '0' }).clearanceMm).toBeCloseTo(10, 9)
+  })
+
+  it('refuses a clearance that leaves no recess, and names it', () => {
+    const refused = fitQuerySchema.safeParse({ ...mapleBox, diameterMm: '4', clearanceMm: '-4.5' })
+    expect(refused.error?.issues.map(({ path }) => path)).toEqual([['clearanceMm']])
+  })
+})
+
 describe('fit: what is allowed, how it feels, grade by grade', () => {
   it('allows at any angle what it allows at a quarter turn, and more where it is turned less', () => {
     const { allowedMcChangePct, allowedAnyAngleMcChangePct, limitedAnyAngle } = answer()

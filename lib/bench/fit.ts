@@ -15,6 +15,8 @@ import { diameterMm, numberIn, perPct, refineWood, species } from './query'
 
 const mcChangePct = numberIn(-30, 30, '% MC')
 
+export const NO_RECESS = 'so far below 0 that no recess is left: more than the joint is wide'
+
 export const fitQuerySchema = z
   .strictObject({
     diameterMm,
@@ -33,6 +35,7 @@ export const fitQuerySchema = z
     const refuse = (path: string, message: string) => {
       context.addIssue({ code: 'custom', path: [path], message })
     }
+    if (query.diameterMm + query.clearanceMm <= 0) refuse('clearanceMm', NO_RECESS)
     refineWood(query, ['tangentialPerPct', 'radialPerPct'], refuse)
     if ((query.lidTangentialPerPct === undefined) !== (query.lidRadialPerPct === undefined)) {
       const missing = query.lidRadialPerPct === undefined ? 'lidRadialPerPct' : 'lidTangentialPerPct'

@@ -248,6 +248,12 @@ describe('lid fit, properties', () => {
     }
   })
 
+  it('works at the ends of its range', () => {
+    const widest = jointOfOneWood(1000, 10, 0.00353, 0.00165, 0)
+    expect(clearanceExactMm(widest, 90)).toBeCloseTo(10, 9)
+    expect(() => clearanceExactMm({ ...widest, diameterMm: 5, clearanceMm: -5 }, 0)).toThrow(/clearanceMm/)
+  })
+
   it('names the input that is wrong', () => {
     const case_ = jointOfOneWood(60, 0.2, 0.00353, 0.00165, 4)
     expect(() => clearanceFirstOrderMm(case_, NaN)).toThrow(/angleDeg/)

@@ -1,4 +1,4 @@
-import { assertInRange } from '@/lib/assert'
+import { assertFiniteAbove, assertInRange } from '@/lib/assert'
 import { assertDiameter, assertMovement, ovalOfJoint, type InPlaneMovement, type Oval } from './ovality'
 
 export const CLEARANCE_MAX_MM = 10
@@ -19,6 +19,8 @@ export type Joint = {
 function assertJoint(joint: Joint, angleDeg: number): void {
   assertDiameter(joint.diameterMm)
   assertInRange('clearanceMm', joint.clearanceMm, -CLEARANCE_MAX_MM, CLEARANCE_MAX_MM)
+  // Less, and there would be no recess at all.
+  assertFiniteAbove('clearanceMm', joint.clearanceMm, -joint.diameterMm)
   assertInRange('angleDeg', angleDeg, -360, 360)
   assertMovement(joint.spigot, joint.spigot.mcChangePct)
   assertMovement(joint.socket, joint.socket.mcChangePct)
@@ -35,7 +37,8 @@ const skew = (part: JointPart): number => ((part.tangentialPerPct - part.radialP
 
 /**
  * The tightest clearance all round, to first order.
- * @param joint diameter above 0 to 1000 mm, clearance -10 to 10 mm, both parts with their change of moisture content
+ * @param joint diameter above 0 to 1000 mm, clearance -10 to 10 mm and above the negative of the diameter, both parts
+ *   with their change of moisture content
  * @param angleDeg turn of the lid from where the grain lines up, degrees, -360 to 360
  * @returns diametral clearance, mm; below 0 the lid binds by that much
  * @throws RangeError for an input out of range or NaN

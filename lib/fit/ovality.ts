@@ -7,6 +7,8 @@ export type InPlaneMovement = {
 }
 
 export const JOINT_DIAMETER_MAX_MM = 1000
+/** A recess is larger than its joint by the clearance, 10 mm at most. */
+const RECESS_DIAMETER_MAX_MM = 1010
 export const PER_PCT_MAX = 0.01
 export const MC_CHANGE_MAX_PCT = 30
 
@@ -30,7 +32,7 @@ export type Oval = {
 
 /**
  * What a joint turned round becomes when its moisture content changes.
- * @param diameterMm diameter as turned, mm, above 0 to 1000
+ * @param diameterMm diameter as turned, mm, above 0 to 1010: a joint of 1000 and the clearance round it
  * @param movement fractions per % MC along the rings and across them, 0 to 0.01
  * @param mcChangePct change of moisture content since it was turned, % MC, -30 to 30
  * @returns the two diameters and their difference, mm
@@ -41,7 +43,8 @@ export type Oval = {
  * Source: derived from Wood Handbook (FPL-GTR-190, 2010), Eq. 13-2, taken in both directions.
  */
 export function ovalOfJoint(diameterMm: number, movement: InPlaneMovement, mcChangePct: number): Oval {
-  assertDiameter(diameterMm)
+  assertFiniteAbove('diameterMm', diameterMm, 0)
+  assertInRange('diameterMm', diameterMm, 0, RECESS_DIAMETER_MAX_MM)
   assertMovement(movement, mcChangePct)
   const tangentialDiameterMm = diameterMm * (1 + movement.tangentialPerPct * mcChangePct)
   const radialDiameterMm = diameterMm * (1 + movement.radialPerPct * mcChangePct)

@@ -5,6 +5,7 @@ import { LidView } from '@/app/_components/charts/lid-view'
 import { Cautions } from '@/app/_components/ui/caution'
 import { RichText } from '@/app/_components/ui/rich-text'
 import { Sheet } from '@/app/_components/ui/sheet'
+import { NO_RECESS } from '@/lib/bench/fit'
 import { carryCautions } from '@/lib/carry/cautions'
 import { BenchFoot } from '../../_components/bench-foot'
 import { BenchSentence } from '../../_components/bench-sentence'
@@ -15,7 +16,7 @@ import { useLastGood } from '../../_components/use-last-good'
 import { useUnits } from '../../_components/use-units'
 import { CutSheet } from './cut-sheet'
 import { fitFields, type FitField, fits, grains, idleFields, kinds, lidWays, tellings } from './fit-fields'
-import { benchFit, fitFacts, fitSentence, fitTwins } from './fit-model'
+import { benchFit, fitFacts, fitSentence, fitTwins, hasNoRecess } from './fit-model'
 import { FitSentence } from './fit-sentence'
 import { GradeTable } from './grade-table'
 
@@ -38,8 +39,14 @@ export function FitBench() {
   const angleDeg = Math.min(90, Math.max(0, typedAngle))
   const form = useFields<FitField>(fitFields, idleFields(choices))
   const { shown, isOld } = useLastGood(JSON.stringify([form.texts, choices]), () =>
-    form.values === undefined ? undefined : benchFit(form.values, choices),
+    form.values === undefined || hasNoRecess(form.values, choices)
+      ? undefined
+      : benchFit(form.values, choices),
   )
+  const noRecess =
+    form.values !== undefined && hasNoRecess(form.values, choices)
+      ? [`${fitFields.clearanceMm.label}: ${NO_RECESS}.`]
+      : []
   return (
     <>
       <BenchSentence above="Does the lid still turn?" isOld={isOld}>
@@ -51,7 +58,7 @@ export function FitBench() {
       </BenchSentence>
       <Sheet>
         <FitSentence form={form} choices={choices} setChoices={(change) => void setChoices(change)} />
-        <Refusals of={[form.refusals]} />
+        <Refusals of={[form.refusals]} more={noRecess} />
       </Sheet>
       {shown === undefined ? null : (
         <div className={isOld ? 'flex flex-col gap-7 opacity-60' : 'flex flex-col gap-7'}>

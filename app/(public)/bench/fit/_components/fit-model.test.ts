@@ -4,7 +4,7 @@ import { clearanceExactMm } from '@/lib/fit/lid-fit'
 import { plainText, strongTexts } from '@/lib/format/sentence'
 import { LONGITUDINAL_PER_PCT } from '@/lib/wood/movement'
 import { fitFields, idleFields, type FitChoices, type FitField, type FitValues } from './fit-fields'
-import { benchFit, fitFacts, fitSentence, fitTwins, moistureOf } from './fit-model'
+import { benchFit, fitFacts, fitSentence, fitTwins, hasNoRecess, moistureOf } from './fit-model'
 
 const values = Object.fromEntries(
   Object.entries(fitFields).map(([key, field]) => [key, Number(field.start)]),
@@ -106,6 +106,28 @@ describe('lid fit on the bench', () => {
 
   it('speaks inches to those who read them', () => {
     expect(plainText(fitSentence(benchFit(maple, choices), 'imperial'))).toContain('0.010\u00a0in')
+  })
+
+  it.each(['diameterMm', 'clearanceMm'] as const)('%s has the range of the API', (name) => {
+    const query = {
+      diameterMm: '60',
+      clearanceMm: '0.2',
+      angleDeg: '30',
+      mcChangePct: '4',
+      species: 'acer-saccharum',
+    }
+    const takes = (value: number) => fitQuerySchema.safeParse({ ...query, [name]: String(value) }).success
+    const { min, max } = fitFields[name]
+    expect([min, max].map(takes)).toEqual([true, true])
+    expect([min - 0.01, max + 0.01].map(takes)).toEqual([false, false])
+  })
+
+  it('asks again for a clearance that leaves no recess', () => {
+    expect(hasNoRecess({ ...maple, diameterMm: 4, clearanceMm: -4.5 }, choices)).toBe(true)
+    expect(hasNoRecess({ ...maple, diameterMm: 4, clearanceMm: -4.5 }, { ...choices, fit: 'easy' })).toBe(
+      false,
+    )
+    expect(hasNoRecess(maple, choices)).toBe(false)
   })
 
   it('leaves idle what the sentence does not ask', () => {

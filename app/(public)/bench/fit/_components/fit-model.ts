@@ -75,6 +75,10 @@ function clearanceOf(values: FitValues, { fit }: FitChoices): readonly [number, 
   return [clearanceMm, Math.abs(clearanceMm) * GRADE_SPREAD]
 }
 
+/** Whether the recess would be narrower than nothing. */
+export const hasNoRecess = (values: FitValues, choices: FitChoices): boolean =>
+  choices.fit !== 'threaded' && values.diameterMm + clearanceOf(values, choices)[0] <= 0
+
 const THREADED_WORDS = "Threads aren't worked out: leave them easy, try the lid, and note how it turned."
 
 /** The whole question: which joint that is, or why none is worked out. */
