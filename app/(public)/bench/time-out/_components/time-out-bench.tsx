@@ -4,6 +4,7 @@ import { parseAsString, parseAsStringLiteral, useQueryStates } from 'nuqs'
 import { Cautions } from '@/app/_components/ui/caution'
 import { RichText } from '@/app/_components/ui/rich-text'
 import { Sheet } from '@/app/_components/ui/sheet'
+import { TextLink } from '@/app/_components/ui/text-link'
 import { carryCautions } from '@/lib/carry/cautions'
 import { plainText } from '@/lib/format/sentence'
 import { BenchFoot } from '../../_components/bench-foot'
@@ -12,13 +13,14 @@ import { Facts } from '../../_components/facts'
 import { Refusals } from '../../_components/field-word'
 import { useFields } from '../../_components/use-fields'
 import { useLastGood } from '../../_components/use-last-good'
-import { useUnits } from '../../_components/use-units'
+import { useUnits, withUnits } from '../../_components/use-units'
 import { TimeBar } from './time-bar'
 import {
   benchTimeOut,
   covers,
   fits,
   idleFields,
+  lidFitAddress,
   lids,
   type TimeOutField,
   timeOutFacts,
@@ -75,6 +77,16 @@ export function TimeOutBench() {
             <UsedCurve answer={shown.answer} sentence={plainText(timeOutSentence(shown))} />
           </Sheet>
         </div>
+      )}
+      {shown === undefined || isOld ? null : (
+        <p className="no-print px-4 sm:px-0">
+          <TextLink
+            href={withUnits(lidFitAddress(form.texts, choices), units)}
+            className="inline-flex min-h-11 items-center"
+          >
+            Turn its lid: how far round it goes there, given time, and whether a joint may be cut
+          </TextLink>
+        </p>
       )}
       <div className="px-4 sm:px-0">
         <Cautions cautions={carryCautions.slice(0, 2)} />

@@ -1,11 +1,13 @@
 import { describe, expect, it } from 'vitest'
 import { timeOutAnswer, timeOutQuerySchema } from '@/lib/bench/time-out'
 import { plainText, strongTexts } from '@/lib/format/sentence'
+import { fitFields, fits as lidFits } from '../../fit/_components/fit-fields'
 import {
   benchTimeOut,
   covers,
   fits,
   idleFields,
+  lidFitAddress,
   lids,
   type TimeOutChoices,
   type TimeOutField,
@@ -69,6 +71,18 @@ describe('the time-out bench', () => {
       figure: 'not known',
       words: expect.stringContaining('40 %'),
     })
+  })
+
+  it('hands the box on to the page that turns its lid, in words which that page knows', () => {
+    const texts = Object.fromEntries(
+      Object.entries(timeOutFields).map(([key, field]) => [key, field.start]),
+    ) as Record<TimeOutField, string>
+    const query = new URL(lidFitAddress(texts, choices), 'http://here').searchParams
+    const known = [...Object.keys(fitFields), 'tell', 'wood', 'fit']
+    for (const key of query.keys()) expect(known).toContain(key)
+    expect(lidFits).toContain(query.get('fit'))
+    expect(query.get('nowRh')).toBe('71')
+    expect(lidFitAddress(texts, { ...choices, fit: 'own' })).not.toContain('fit=own')
   })
 
   it('asks only for the sizes that the choice needs', () => {

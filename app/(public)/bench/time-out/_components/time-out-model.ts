@@ -199,3 +199,21 @@ export function timeOutTwin({ query }: BenchTimeOut): Twin {
   )
   return { path: '/bench/time-out', query: Object.fromEntries(asked) }
 }
+
+/** The same box and airs on the page that turns its lid. An allowance is no clearance: that is asked there. */
+export function lidFitAddress(
+  texts: Readonly<Record<TimeOutField, string>>,
+  { wood, fit }: TimeOutChoices,
+): string {
+  const query = new URLSearchParams({
+    tell: 'air',
+    wood,
+    ...(fit === 'own' ? {} : { fit }),
+    diameterMm: texts.diameterMm,
+    cutC: texts.fromC,
+    cutRh: texts.fromRh,
+    nowC: texts.toC,
+    nowRh: texts.toRh,
+  })
+  return `/bench/fit?${query.toString()}`
+}
