@@ -3,6 +3,7 @@ import { type Kysely, sql } from 'kysely'
 import { newCode, takeIds } from '@/db/queries/counters'
 import { insertRoom } from '@/db/queries/rooms'
 import { insertSiteWood } from '@/db/queries/site-woods'
+import { insertWeighing } from '@/db/queries/weighings'
 import { insertSite, newTextId } from '@/db/queries/sites'
 import type { Database } from '@/db/schema'
 import type { Role } from '@/lib/sites/permissions'
@@ -16,6 +17,8 @@ export interface Things {
   shop: string
   sensor: string
   piece: string
+  /** A weighing of that piece. */
+  weighing: string
   carry: string
   /** A wood of the site's own. */
   wood: string
@@ -68,6 +71,7 @@ export async function makeSite(db: Kysely<Database>, team: Team): Promise<WorldS
     const shop = await insertRoom(trx, siteId, { name: 'Shop', kind: 'shop', isShared: false, note: '' }, now)
     const sensor = await makeSensor(trx, siteId, room.id)
     const piece = await makePiece(trx, siteId, room.id)
+    const weighing = await makeWeighing(trx, siteId, piece.id)
     const carry = await makeCarry(trx, siteId, { from: room.id, to: shop.id, piece: piece.id })
     const wood = await makeWood(trx, siteId)
     const notice = await makeNotice(trx, siteId)
@@ -95,6 +99,7 @@ export async function makeSite(db: Kysely<Database>, team: Team): Promise<WorldS
         shop: shop.code,
         sensor,
         piece: piece.code,
+        weighing,
         carry,
         wood,
         notice,
@@ -126,6 +131,12 @@ async function makeSensor(db: Kysely<Database>, siteId: number, roomId: number):
     .execute()
   await db.insertInto('sensor_state').values({ site_id: siteId, sensor_id: id }).execute()
   return code
+}
+
+async function makeWeighing(db: Kysely<Database>, siteId: number, pieceId: number): Promise<string> {
+  const at = new Date(Date.now() - 7_200_000)
+  const values = { pieceId, at, grams: 182.5, stepG: null, note: '', userId: null }
+  return insertWeighing(db, siteId, values, at)
 }
 
 async function makePiece(

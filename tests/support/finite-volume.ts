@@ -88,7 +88,7 @@ export function finiteVolume(
 ): Oracle {
   const dx = widths(across.depthM, cells)
   const dy = along === null ? [1] : widths(along.depthM, cells)
-  const grid = dy.map(() => new Float64Array(cells).fill(startPct))
+  const grid: Float64Array[] = dy.map(() => new Float64Array(cells).fill(startPct))
   const dtS = 3600 / stepsPerHour
   const step = (hour: OracleHour): void => {
     const surface = surfaceMPerS(hour.temperatureC)
