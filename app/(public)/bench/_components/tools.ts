@@ -8,7 +8,7 @@ export const tools = [
   {
     path: '/bench/fit',
     name: 'Lid fit',
-    question: 'Does the lid still turn after the wood has moved, and how far round?',
+    question: 'Does the lid still turn after the wood has moved, and may the joint be cut today?',
   },
   {
     path: '/bench/time-out',
