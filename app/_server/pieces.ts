@@ -18,6 +18,7 @@ import { ok } from '@/lib/result'
 import { decodeCursor, listQueryShape, type Page, pageOf } from './list'
 import { pieceView, shownRoom, viewerOf } from './piece-view'
 import { failField, notThere, type Outcome } from './problem'
+import { restOfPiece } from './rest'
 
 export const piecesQuerySchema = z.strictObject({
   ...pieceListQuerySchema.shape,
@@ -83,6 +84,8 @@ async function openDetail(
   const own = material.pieces.get(piece.id)
   const mc = own === undefined || isOnlooker ? null : mcNow(own, material, now)
   const room = shownRoom(piece.room, member)
+  const rest =
+    piece.stage === 'box' || isOnlooker ? undefined : await restOfPiece(db, member, piece, material, now)
   return {
     ...pieceView(piece, member),
     grain: piece.grain,
@@ -112,7 +115,7 @@ async function openDetail(
       keepRoomName: own?.isKeepRoomAssumed === true ? await keepName(db, member, own) : null,
       isCutAssumed: own?.cut === null,
     }),
-    headline: pieceHeadline({ ...piece, roomName: room?.name ?? null, mc }),
+    headline: pieceHeadline({ ...piece, roomName: room?.name ?? null, mc, restWords: rest?.words }),
     mc,
     places: places.map((place) => ({
       room: { id: place.room.id, name: place.room.name, mark: place.room.mark },

@@ -65,8 +65,8 @@ export async function changeSite(
       await allowLongStatements(trx)
       await rebuildSiteFigures(trx, member.siteId)
     }
-    const { id, name, timeZone, unitSystem, quietFrom, quietTo, lockUpAt } = member.site
-    const before = { name, timeZone, unitSystem, quietFrom, quietTo, lockUpAt }
+    const { id, name, timeZone, unitSystem, quietFrom, quietTo, lockUpAt, scaleStepG } = member.site
+    const before = { name, timeZone, unitSystem, quietFrom, quietTo, lockUpAt, scaleStepG }
     await insertChange(trx, member.siteId, {
       userId: member.userId,
       subjectKind: 'site',

@@ -13,6 +13,7 @@ export const siteColumns = [
   'site.quiet_from',
   'site.quiet_to',
   'site.lock_up_at',
+  'site.scale_step_g',
   'site.is_demo',
   'site.version',
 ] as const
@@ -26,6 +27,7 @@ type SiteRow = Pick<
   | 'quiet_from'
   | 'quiet_to'
   | 'lock_up_at'
+  | 'scale_step_g'
   | 'is_demo'
   | 'version'
 >
@@ -40,6 +42,7 @@ export function siteOf(row: SiteRow, role: Role): Site {
     quietFrom: row.quiet_from.slice(0, 5),
     quietTo: row.quiet_to.slice(0, 5),
     lockUpAt: row.lock_up_at.slice(0, 5),
+    scaleStepG: row.scale_step_g,
     isDemo: row.is_demo,
     version: row.version,
     role,
@@ -125,6 +128,7 @@ export async function updateSite(
       quiet_from: change.quietFrom,
       quiet_to: change.quietTo,
       lock_up_at: change.lockUpAt,
+      scale_step_g: change.scaleStepG,
       version: eb('version', '+', 1),
     }))
     .where('id', '=', siteId)
@@ -134,6 +138,22 @@ export async function updateSite(
   if (row === undefined) return undefined
   const { role: _role, ...site } = siteOf(row, 'owner')
   return site
+}
+
+/** Keeps the step of the scale that was told first; what is known already stays. */
+export async function rememberScaleStep(
+  db: Kysely<Database>,
+  siteId: number,
+  stepG: number,
+): Promise<boolean> {
+  const row = await db
+    .updateTable('site')
+    .set((eb) => ({ scale_step_g: stepG, version: eb('version', '+', 1) }))
+    .where('id', '=', siteId)
+    .where('scale_step_g', 'is', null)
+    .returning('id')
+    .executeTakeFirst()
+  return row !== undefined
 }
 
 /** Lets one writer at a time change who belongs to a site, so that two owners can't both step down at once. */

@@ -23,6 +23,13 @@ export function formatDay(at: Date | string, timeZone: string, now: Date): strin
   return format(local, sameYear ? 'EEE d MMM' : 'EEE d MMM yyyy')
 }
 
+/** "8 December", with the year only when it is another one: for sentences. */
+export function formatDate(at: Date | string, timeZone: string, now: Date): string {
+  const local = inZone(at, timeZone)
+  const sameYear = local.getFullYear() === inZone(now, timeZone).getFullYear()
+  return format(local, sameYear ? 'd MMMM' : 'd MMMM yyyy')
+}
+
 /** The day as one would say it: "today", "tomorrow", "yesterday", "on Friday" within six days, else "on Thu 5 Mar". */
 export function formatRelativeDay(at: Date | string, timeZone: string, now: Date): string {
   const days = differenceInCalendarDays(inZone(at, timeZone), inZone(now, timeZone))

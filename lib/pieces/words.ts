@@ -15,6 +15,8 @@ export interface PieceForWords extends PieceFacts {
   isOut: boolean
   archivedAt: Date | null
   mc: McNow | null
+  /** Where a blank or a roughed piece stands, in words; left out where it is not to be told. */
+  restWords?: string | undefined
 }
 
 /** One sentence of where it stands and what to do next. */
@@ -24,7 +26,7 @@ export function pieceHeadline(piece: PieceForWords): string {
   if (piece.archivedAt !== null) return `${title} ${piece.number} has been put away.`
   if (piece.isOut) return `${title} ${piece.number} is out${where}: bring it back by the time on its carry.`
   if (piece.stage !== 'box')
-    return `${title} ${piece.number} rests${where}. Weigh it to know when it is ready.`
+    return `${title} ${piece.number} rests${where}. ${piece.restWords ?? 'Weigh it to know when it is ready.'}`
   if (piece.woodKind === 'wild')
     return `${title} ${piece.number}${where} moves its own way: fit it easy, test it.`
   if (piece.woodKind === 'stabilised')

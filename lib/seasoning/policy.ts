@@ -48,3 +48,10 @@ export const meterBesideWeightMs = 3 * dayMs
 
 /** Drift is not corrected for when more than this share of what the wood remembers has no record. A guess. */
 export const driftMissingShareMax = 0.25
+
+/** A weight further than this from the last one, as a share of it, is asked about before it is kept. A guess: green wood
+ * loses a fifth of its weight in a month at most. */
+export const oddWeightShare = 0.2
+
+/** Days of record that a room needs before its middle counts as that of a year. As for the band of a keep room. */
+export const yearDaysMin = 60

@@ -31,6 +31,8 @@ export const whoMay = {
   'pieces:see': ['owner', 'maker', 'hand', 'onlooker'],
   'pieces:change': ['owner', 'maker'],
   'pieces:move': ['owner', 'maker', 'hand'],
+  'pieces:weigh': ['owner', 'maker', 'hand'],
+  'pieces:record': ['owner', 'maker', 'hand'],
   'woods:see': ['owner', 'maker', 'hand'],
   'woods:change': ['owner', 'maker'],
   'carries:see': ['owner', 'maker', 'hand'],

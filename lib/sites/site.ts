@@ -22,6 +22,9 @@ export const timeZoneSchema = z
 
 export const timeOfDaySchema = z.string().regex(/^([01]\d|2[0-3]):[0-5]\d$/, 'a time such as 22:00')
 
+/** Smallest change that a scale shows, g. */
+export const scaleStepSchema = z.number().min(0.001, '0.001 to 100 g').max(100, '0.001 to 100 g')
+
 export const siteNameSchema = z.string().trim().min(1, 'give it a name').max(80, '80 letters at most')
 
 export const newSiteSchema = z.strictObject({
@@ -42,6 +45,8 @@ export const siteChangeSchema = z.strictObject({
   quietFrom: timeOfDaySchema.optional(),
   quietTo: timeOfDaySchema.optional(),
   lockUpAt: timeOfDaySchema.optional(),
+  /** Step of the scale, g; null for not told. */
+  scaleStepG: scaleStepSchema.nullable().optional(),
 })
 export type SiteChange = z.infer<typeof siteChangeSchema>
 
@@ -53,6 +58,7 @@ export const siteSchema = z.object({
   quietFrom: z.string(),
   quietTo: z.string(),
   lockUpAt: z.string(),
+  scaleStepG: z.number().nullable(),
   isDemo: z.boolean(),
   version: z.int(),
   /** The signed-in member's role here. */
