@@ -1,6 +1,6 @@
 import { assertInRange } from '@/lib/assert'
 import { err, ok, type Result } from '@/lib/result'
-import { emcEquationPct, emcEquationSlope } from './emc-equation'
+import { emcEquationPct, emcEquationSlope, emcUncheckedPct } from './emc-equation'
 
 /** Range of air this product answers for, °C and percent. Colder or warmer air is refused, never guessed. */
 export const EMC_TEMPERATURE_MIN_C = -10
@@ -44,8 +44,16 @@ function assertAir(temperatureC: number, humidityPct: number): void {
  * Source: Wood Handbook (FPL-GTR-190, 2010), ch. 4, Eq. 4-5 and Table 4-2 (p. 4-3, 4-4).
  */
 export function emcPct(temperatureC: number, humidityPct: number): number {
-  assertAir(temperatureC, humidityPct)
-  return Math.min(EMC_MAX_PCT, emcEquationPct(equationC(temperatureC), humidityPct))
+  // One look for all that is right; what is wrong is named by the slower way. Written so that NaN fails too.
+  if (!(
+    temperatureC >= EMC_TEMPERATURE_MIN_C &&
+    temperatureC <= EMC_TEMPERATURE_MAX_C &&
+    humidityPct >= 0 &&
+    humidityPct <= 100
+  ))
+    assertAir(temperatureC, humidityPct)
+  const emc = emcUncheckedPct(temperatureC > 0 ? temperatureC : 0, humidityPct)
+  return emc > EMC_MAX_PCT ? EMC_MAX_PCT : emc
 }
 
 /**
