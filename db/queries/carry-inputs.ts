@@ -108,7 +108,7 @@ function cutOf(
     return {
       ringMcPct: piece.fitMcPct,
       lidMcPct: piece.fitLidMcPct ?? piece.fitMcPct,
-      doubtPct: followedCutDoubtPct,
+      doubtPct: piece.fitDoubtPct ?? followedCutDoubtPct,
     }
   const month = cutMonth(piece, keepRoomId)
   const mean = month && monthMeans.get(monthKey(month.roomId, month.firstOn))

@@ -31,7 +31,7 @@ import { findRoomYears } from './room-figures'
 
 const dayMs = 24 * HOUR_MS
 /** For how long before its record a piece is taken to have been in its first room: longer for a blank's slow wood. */
-const beforeMs = (stage: FactsRow['facts']['stage']): number => (stage === 'box' ? 60 : 180) * dayMs
+export const beforeMs = (stage: FactsRow['facts']['stage']): number => (stage === 'box' ? 60 : 180) * dayMs
 /** No piece remembers air from before this; the solid dense blank is the slowest. */
 const memoryMs = 400 * dayMs
 
@@ -42,7 +42,7 @@ export interface FollowCounts {
   rebuilt: number
 }
 
-interface Subject {
+export interface Subject {
   row: FactsRow
   filter: PieceFilter
   stays: readonly Stay[]
@@ -156,7 +156,7 @@ export async function followPieces(
   return { carriedOn: kept.length, rebuilt: rows.length - kept.length }
 }
 
-async function listSubjects(
+export async function listSubjects(
   db: Kysely<Database>,
   siteId: number,
   pieceIds: readonly number[] | null,
@@ -217,10 +217,10 @@ async function stillGood(
   return atMs === untilMs ? 'as-is' : followed
 }
 
-const firstMs = ({ stays, row }: Subject, untilMs: number): number =>
+export const firstMs = ({ stays, row }: Subject, untilMs: number): number =>
   Math.max(untilMs - memoryMs, (stays[0]?.fromAt.getTime() ?? untilMs) - beforeMs(row.facts.stage))
 
-async function roomsOf(
+export async function roomsOf(
   db: Kysely<Database>,
   { siteId, timeZone }: { siteId: number; timeZone: string },
   subjects: readonly Subject[],

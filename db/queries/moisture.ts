@@ -171,7 +171,8 @@ export async function findPaces(db: Kysely<Database>, siteId: number): Promise<M
     .selectFrom('outcome')
     .where('site_id', '=', siteId)
     .where('undone_at', 'is', null)
-    .where('used_middle', 'is not', null)
+    // A lid turned at rest says nothing of the pace: only those from a stay count, of which all three are known.
+    .where('used_slow', 'is not', null)
     .select(['movement_class', 'turned', 'used_slow', 'used_middle', 'used_fast'])
     .orderBy('at', 'desc')
     .limit(outcomesMax)

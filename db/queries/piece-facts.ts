@@ -27,6 +27,8 @@ export interface FactsRow {
   fittedOn: string | null
   fitMcPct: number | null
   fitLidMcPct: number | null
+  /** How well that is known, ± % MC; null where the fit was not entered as it was made. */
+  fitDoubtPct: number | null
 }
 
 /** @param pieceIds null for every piece in use */
@@ -69,6 +71,19 @@ export async function listPieceFacts(
       'fit_mc_pct',
       'fit_lid_mc_pct',
     ])
+    .select((eb) =>
+      eb
+        .selectFrom('piece_event as fit')
+        .whereRef('fit.site_id', '=', 'piece.site_id')
+        .whereRef('fit.piece_id', '=', 'piece.id')
+        .whereRef('fit.at', '=', 'piece.fitted_at')
+        .where('fit.kind', 'in', ['final-fit', 're-true'])
+        .where('fit.undone_at', 'is', null)
+        .select(sql<number | null>`(fit.data->>'doubtPct')::float8`.as('doubt_pct'))
+        .orderBy('fit.id', 'desc')
+        .limit(1)
+        .as('fit_doubt_pct'),
+    )
     .execute()
   const siteWoods = await listSiteWoods(db, siteId)
   return rows.map((row) => {
@@ -105,6 +120,7 @@ export async function listPieceFacts(
       fittedOn: row.fitted_on,
       fitMcPct: row.fit_mc_pct,
       fitLidMcPct: row.fit_lid_mc_pct,
+      fitDoubtPct: row.fit_doubt_pct,
     }
   })
 }

@@ -1,5 +1,5 @@
 import { z } from 'zod'
-import { fitGradeSchema } from './piece'
+import { fitGradeSchema, pieceEventSchema } from './piece'
 
 /** What happened to a piece. Every entry can be undone by a later one; nothing is erased. */
 export const eventKindSchema = z.enum([
@@ -43,14 +43,21 @@ export const closesSeries: ReadonlySet<EventKind> = new Set([
   'label',
 ])
 
+/** Kinds from which the oval of a joint counts anew. */
+export const isFitKind = (kind: EventKind): kind is 'final-fit' | 're-true' =>
+  kind === 'final-fit' || kind === 're-true'
+
 const instant = z.iso.datetime()
 
 export const eventDataSchema = z.object({
   ringMcPct: z.number().optional(),
   lidMcPct: z.number().optional(),
   doubtPct: z.number().optional(),
+  /** Where the moisture content at a fit comes from: the piece as followed, or its keep room's mean of that month. */
+  basis: z.enum(['followed', 'month-mean']).optional(),
   fitGrade: fitGradeSchema.nullable().optional(),
   clearanceMm: z.number().nullable().optional(),
+  jointDiameterMm: z.number().optional(),
   mcPct: z.number().optional(),
   ovenDryG: z.number().optional(),
 })
@@ -65,6 +72,8 @@ export const newEventSchema = z
     /** For a final fit or a re-true: how the lid fits now. */
     fitGrade: fitGradeSchema.nullable().optional(),
     clearanceMm: z.number().min(0).max(5).nullable().optional(),
+    /** The joint as it was cut, outside of the spigot; left out where it is what it was. */
+    jointDiameterMm: z.number().min(5, '5 to 600 mm').max(600, '5 to 600 mm').optional(),
     /** For a meter reading, % MC. */
     mcPct: z.number().min(4, '4 to 30 % MC').max(30, '4 to 30 % MC').optional(),
     /** For an oven-dry mass, g. */
@@ -79,8 +88,14 @@ export const newEventSchema = z
     }
     needs('mcPct', 'meter')
     needs('ovenDryG', 'oven-dry')
+    for (const path of ['fitGrade', 'clearanceMm', 'jointDiameterMm'] as const)
+      if (!isFitKind(event.kind) && event[path] !== undefined)
+        context.addIssue({ code: 'custom', path: [path], message: 'goes with a final fit or a re-true' })
   })
 export type NewEvent = z.infer<typeof newEventSchema>
+
+/** What can be entered for a piece: a move to another room, or something that happened to it. */
+export const enteredEventSchema = z.discriminatedUnion('kind', [pieceEventSchema, newEventSchema])
 
 export const pieceEventViewSchema = z.object({
   id: z.string(),

@@ -1,4 +1,5 @@
 import { z } from 'zod'
+import type { Learned } from './learned-words'
 
 /** How the lid turned after a carry, or at any other time: what the site's wood is learned from. */
 export const turnedSchema = z.enum(['as-before', 'tighter', 'binds', 'looser'])
@@ -29,3 +30,6 @@ export const outcomeSchema = z.object({
   isUndone: z.boolean(),
 })
 export type Outcome = z.infer<typeof outcomeSchema>
+
+/** How the lids of a piece turned, newest first, and what the site has learned of such wood; null: nothing yet. */
+export type PieceOutcomes = { readonly items: Outcome[]; readonly learned: Learned | null }

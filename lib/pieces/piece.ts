@@ -117,7 +117,7 @@ export const pieceMoveSchema = z.strictObject({
   at: instant.optional(),
 })
 
-/** What happens to a piece. So far it can be moved. */
+/** A piece goes to stay in another room. What else can happen to it: `enteredEventSchema`. */
 export const pieceEventSchema = z.strictObject({ kind: z.literal('move'), ...pieceMoveSchema.shape })
 
 export const pieceSortSchema = z.enum([

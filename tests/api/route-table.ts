@@ -260,6 +260,36 @@ export const routeTable: Record<string, Row> = {
     status: 201,
     prepare: callOff,
   },
+  'GET /api/v1/sites/[site]/pieces/[piece]/events': { action: 'pieces:record' },
+  'POST /api/v1/sites/[site]/pieces/[piece]/events/[event]/undo': { action: 'pieces:record' },
+  'POST /api/v1/sites/[site]/pieces/[piece]/events/[event]/restore': { action: 'pieces:record' },
+  'GET /api/v1/sites/[site]/pieces/[piece]/fit': {
+    action: 'pieces:record',
+    query: ({ shop }) => ({ room: shop, stayMinutes: '60', cover: 'bagged', fitGrade: 'easy' }),
+  },
+  'GET /api/v1/sites/[site]/pieces/[piece]/outcomes': { action: 'pieces:record' },
+  'POST /api/v1/sites/[site]/pieces/[piece]/outcomes': {
+    action: 'pieces:record',
+    body: ({ carry }) => ({ turned: 'tighter', carryId: carry }),
+    status: 201,
+    prepare: async (arranging) => {
+      await start(arranging)
+      await arranging.asOwner('POST', `/carries/${arranging.site.things.carry}/bring-back`, {})
+    },
+  },
+  'POST /api/v1/sites/[site]/pieces/[piece]/outcomes/[outcome]/undo': { action: 'pieces:record' },
+  'POST /api/v1/sites/[site]/pieces/[piece]/outcomes/[outcome]/restore': { action: 'pieces:record' },
+  'GET /api/v1/sites/[site]/pieces/[piece]/weighings': {
+    action: 'pieces:weigh',
+    query: () => ({ limit: '20' }),
+  },
+  'POST /api/v1/sites/[site]/pieces/[piece]/weighings': {
+    action: 'pieces:weigh',
+    body: () => ({ grams: 183, stepG: 0.1 }),
+    status: 201,
+  },
+  'DELETE /api/v1/sites/[site]/pieces/[piece]/weighings/[weighing]': { action: 'pieces:weigh', status: 204 },
+  'POST /api/v1/sites/[site]/pieces/[piece]/weighings/[weighing]/restore': { action: 'pieces:weigh' },
 
   'GET /api/v1/sites/[site]/notices': { action: 'notices:see', query: () => ({ unseen: 'yes' }) },
   'PATCH /api/v1/sites/[site]/notices/[notice]': {

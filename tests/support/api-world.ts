@@ -1,6 +1,8 @@
 import { randomBytes } from 'node:crypto'
 import { type Kysely, sql } from 'kysely'
 import { newCode, takeIds } from '@/db/queries/counters'
+import { insertOutcome } from '@/db/queries/outcomes'
+import { insertPieceEvent } from '@/db/queries/piece-events'
 import { insertRoom } from '@/db/queries/rooms'
 import { insertSiteWood } from '@/db/queries/site-woods'
 import { insertWeighing } from '@/db/queries/weighings'
@@ -23,6 +25,10 @@ export interface Things {
   /** A wood of the site's own. */
   wood: string
   notice: string
+  /** A note about the piece, by the hand. */
+  event: string
+  /** How the piece's lid turned, at rest. */
+  outcome: string
   /** The membership of a maker. */
   member: string
   invitation: string
@@ -75,6 +81,8 @@ export async function makeSite(db: Kysely<Database>, team: Team): Promise<WorldS
     const carry = await makeCarry(trx, siteId, { from: room.id, to: shop.id, piece: piece.id })
     const wood = await makeWood(trx, siteId)
     const notice = await makeNotice(trx, siteId)
+    const event = await makeEvent(trx, siteId, piece.id, team.hand)
+    const outcome = await makeOutcome(trx, siteId, piece.id)
     const invitation = newTextId()
     await trx
       .insertInto('invitation')
@@ -103,6 +111,8 @@ export async function makeSite(db: Kysely<Database>, team: Team): Promise<WorldS
         carry,
         wood,
         notice,
+        event,
+        outcome,
         member: others[0]?.id ?? '',
         invitation,
       },
@@ -240,10 +250,41 @@ async function makeNotice(db: Kysely<Database>, siteId: number): Promise<string>
   return code
 }
 
+/** The hand's own, so that every role that may enter one may take it back. */
+async function makeEvent(
+  db: Kysely<Database>,
+  siteId: number,
+  pieceId: number,
+  userId: string,
+): Promise<string> {
+  const note = {
+    pieceId,
+    kind: 'note',
+    at: new Date(),
+    roomId: null,
+    data: {},
+    note: 'a note',
+    userId,
+  } as const
+  return (await insertPieceEvent(db, siteId, note, new Date())).code
+}
+
+const makeOutcome = (db: Kysely<Database>, siteId: number, pieceId: number): Promise<string> =>
+  insertOutcome(
+    db,
+    siteId,
+    {
+      ...{ pieceId, carryId: null, turned: 'as-before', movementClass: 'medium', note: '', userId: null },
+      used: { slow: null, middle: null, fast: null },
+    },
+    new Date(),
+  )
+
 // What requests may change of a site. That somebody was here is noted by reading, so it does not count.
 const tables = [
   ...['room', 'sensor', 'placement', 'piece', 'piece_place', 'carry', 'carry_piece', 'notice', 'notice_seen'],
   ...['episode', 'delivery', 'change', 'site_wood', 'reading', 'room_hour', 'room_day', 'refused'],
+  ...['piece_event', 'outcome'],
 ]
 
 /** Everything of a site in one text: equal before and after means that nothing was changed. */
