@@ -28,11 +28,14 @@ export const perPct = numberIn(0, 0.01, 'per % MC, as a fraction')
 export const diameterMm = numberIn(1, 1000, 'mm')
 export const wallMm = numberIn(0.5, 60, 'mm')
 
+/** Stands for a wood that nobody can name: one of medium movement, with the wider doubt of it. */
+export const UNKNOWN_SPECIES = 'unknown'
+
 export const species = z
   .string()
   .max(60)
-  .refine((slug) => findSpecies(slug) !== undefined, {
-    error: 'a Latin name in lower case with hyphens, of a wood that is known here',
+  .refine((slug) => slug === UNKNOWN_SPECIES || findSpecies(slug) !== undefined, {
+    error: 'a Latin name in lower case with hyphens, of a wood that is known here; or unknown',
   })
 
 /** A wood is told either by its name or by its figures: both at once could disagree. */

@@ -95,7 +95,9 @@ export function timeOutAnswer(query: TimeOutQuery): TimeOutAnswer {
     toEmcPct: query.toEmcPct,
     temperatureC: query.temperatureC,
     spreads: {
-      movementLog: movementLogSpread({ assumed: movement.assumed.includes('movement') ? ['movement'] : [] }),
+      movementLog: movementLogSpread({
+        assumed: query.species === undefined ? [] : woodMovement(query.species).assumed,
+      }),
       allowanceLog: logSpreadNineInTen(TOLD_ALLOWANCE_FACTOR),
       airPct: 0,
       startPct: 0,

@@ -47,6 +47,31 @@ describe('words instead of a verdict', () => {
   })
 })
 
+describe('ring and lid out of step', () => {
+  it('tells that a lagging plug lid tightens all round, and one of the ring’s own pace by the quarter turn', () => {
+    const lagging = judged(carry({}, { lidForm: 'plug', lidMm: 20 }))
+    expect(lagging.reason).toContain('whichever way it is turned')
+    expect(lagging.second).toContain('tightens all round')
+    expect(lagging.lidMcPct).toBeCloseTo(lagging.ringMcPct, 6)
+    const inStep = judged(carry())
+    expect(inStep.reason).toContain('turned a quarter')
+    expect(inStep.second).not.toContain('not in step')
+  })
+
+  it('tells that it sits looser first on the way to dry', () => {
+    const drying = carry(
+      {
+        history: hoursUntil(NOW, 480, 13.6, 'closed', 10),
+        baselineEmcPct: 13.6,
+        cutMcPct: 13.6,
+        there: airAt(8.5, 19),
+      },
+      { lidForm: 'plug', lidMm: 20 },
+    )
+    expect(judged(drying).second).toContain('sits looser all round')
+  })
+})
+
 describe('without a fresh reading there is no verdict', () => {
   it('says since when, or that it was never read', () => {
     const since = NOW - 4 * HOUR_MS

@@ -136,6 +136,7 @@ function judged(input: CarryCheckInput, joint: ResolvedJoint, start: Start, ther
   )
   const changePct = ringAt(stayHours) - start.ringPct
   const usedLossMm = (isPast ? usedAtStart : usedAtEnd) * allowanceMm
+  const allRoundMm = allRound(joint, run, cut, stayHours)
   const binds =
     clearanceMm !== undefined && clearanceMm > allowanceMm
       ? spread.early(clearanceMm / allowanceMm)
@@ -152,6 +153,7 @@ function judged(input: CarryCheckInput, joint: ResolvedJoint, start: Start, ther
       lossMm: usedLossMm,
       allowanceMm,
       isPast,
+      allRoundMm,
     }),
     second: secondWords({
       isPast,
@@ -159,6 +161,7 @@ function judged(input: CarryCheckInput, joint: ResolvedJoint, start: Start, ther
       allowedMcPct: joint.allowedMcPct,
       mayBindAfterMinutes: binds === undefined ? undefined : binds * 60,
       isWithinDoubt: middle === undefined && early !== undefined,
+      allRoundMm,
     }),
     earlyAt: toldAt(early),
     middleAt: toldAt(middle),
@@ -177,6 +180,18 @@ function judged(input: CarryCheckInput, joint: ResolvedJoint, start: Start, ther
     curve: curveOf(usedAfter, spread, startsAt, curveHours(stayHours, nowHours, late)),
     assumed: [...joint.assumed],
   }
+}
+
+/** What the joint loses all round by the end of a stay, because its parts are not in step, mm. */
+function allRound(
+  { loss }: ResolvedJoint,
+  run: StayRun,
+  cut: { ring: number; lid: number },
+  hours: number,
+): number {
+  const ring = valueAt(run.middle.ring, run.hours, hours) - cut.ring
+  const lid = valueAt(run.middle.lid, run.hours, hours) - cut.lid
+  return loss.swellMmPerPct * (loss.isRingInside ? ring - lid : lid - ring)
 }
 
 const earlier = (one: number | undefined, other: number | undefined): number | undefined =>

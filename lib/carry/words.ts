@@ -27,19 +27,28 @@ export type ReasonFigures = {
   readonly lossMm: number
   readonly allowanceMm: number
   readonly isPast: boolean
+  /** What of the loss comes all round, because the two parts are not in step; below 0 the lid sits looser. */
+  readonly allRoundMm: number
 }
+
+/** From this share of the loss on, the quarter turn is no longer what tells. */
+const MOSTLY = 0.5
 
 /** Why: in points of % MC, in the quarter turn, and in mm. */
 export function reasonWords(figures: ReasonFigures): string {
   const sentences = [airWords(figures.thereEmcPct, figures.cutMcPct)]
-  const lossWords = `it is ${millimetres(figures.lossMm)} tighter one way and easier the other`
+  const isAllRound = figures.allRoundMm > MOSTLY * figures.lossMm && figures.lossMm >= TOLD_FROM_MM
+  const lossWords = isAllRound
+    ? `it is ${millimetres(figures.lossMm)} tighter all round`
+    : `it is ${millimetres(figures.lossMm)} tighter one way and easier the other`
   if (figures.isPast) {
     sentences.push(
       `Its joint has already moved past its allowance of ${allowanceWords(figures.allowanceMm)}: turned a quarter, ${lossWords}.`,
     )
     return sentences.join(' ')
   }
-  sentences.push(`${changeWords(figures.changePct, figures.stayMinutes)}; turned a quarter, ${lossWords}.`)
+  const turned = isAllRound ? 'whichever way it is turned' : 'turned a quarter'
+  sentences.push(`${changeWords(figures.changePct, figures.stayMinutes)}; ${turned}, ${lossWords}.`)
   sentences.push(`Its allowance is ${allowanceWords(figures.allowanceMm)}.`)
   return sentences.join(' ')
 }
@@ -71,6 +80,8 @@ export type SecondFigures = {
   readonly mayBindAfterMinutes: number | undefined
   /** The middle never uses up the allowance there, but 1 in 10 would. */
   readonly isWithinDoubt: boolean
+  /** At the end of the stay, all round: above 0 the outer part lags and it tightens, below 0 it sits looser. */
+  readonly allRoundMm: number
 }
 
 /** The second line: when it may bind, a suction lid's sigh, a fit that no sensor can call. Empty with nothing to add. */
@@ -90,6 +101,10 @@ export function secondWords(figures: SecondFigures): string {
   } else if (bind !== undefined) {
     sentences.push(`It may bind at a quarter turn after about ${formatDuration(bind)}.`)
   }
+  if (figures.allRoundMm >= TOLD_FROM_MM)
+    sentences.push('Lid and base are not in step: it tightens all round before the quarter turn tells.')
+  if (figures.allRoundMm <= -TOLD_FROM_MM)
+    sentences.push('Lid and base are not in step: for some hours it sits looser all round.')
   if (figures.isWithinDoubt) {
     sentences.push(
       'By the middle of the reckoning it would keep its fit there; the doubt is wider than that. Try the lid.',

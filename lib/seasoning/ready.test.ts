@@ -92,7 +92,7 @@ describe('a blank is ready', () => {
   })
 
   it('not unless its MC is known to a point', () => {
-    expect(codes({ mc: { pct: 8.6, doubtPct: 1.01 } })).toEqual(['doubt-too-wide'])
+    expect(codes({ mc: { pct: 8.6, doubtPct: 1.06 } })).toEqual(['doubt-too-wide'])
     expect(codes({ mc: undefined })).toEqual(['mc-unknown'])
     expect(codes({ target: undefined })).toEqual(['target-unknown'])
   })

@@ -114,7 +114,8 @@ function missingMatch({ mc, target }: ReadyQuestion): MissingCode[] {
   const codes: MissingCode[] = []
   if (target === undefined) codes.push('target-unknown')
   else if (!isMatched(mc.pct, target.pct)) codes.push('mc-off')
-  if (mc.doubtPct > readyDoubtPctMax) codes.push('doubt-too-wide')
+  // As it is told, to a tenth: a good meter on a piece that the scale weighs well is just within it.
+  if (Math.round(mc.doubtPct * 10) / 10 > readyDoubtPctMax) codes.push('doubt-too-wide')
   return codes
 }
 

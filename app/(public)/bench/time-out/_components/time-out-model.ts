@@ -1,4 +1,5 @@
 import type { Field } from '@/lib/bench/fields'
+import { UNKNOWN_SPECIES } from '@/lib/bench/query'
 import { timeOutAnswer, type TimeOutAnswer, type TimeOutQuery } from '@/lib/bench/time-out'
 import { GRADE_FIGURES } from '@/lib/fit/grades'
 import { formatEmc, formatFineLength, formatPoints } from '@/lib/format/figures'
@@ -6,7 +7,6 @@ import { say, strong, type TextPart } from '@/lib/format/sentence'
 import { formatDuration } from '@/lib/format/times'
 import type { UnitSystem } from '@/lib/sites/site'
 import { emcPct } from '@/lib/wood/emc'
-import { woodMovement } from '@/lib/wood/movement-class'
 import { findSpecies } from '@/lib/wood/species'
 import type { Twin } from '../../_components/api-twin'
 import type { Fact } from '../../_components/facts'
@@ -80,17 +80,10 @@ export function timeOutQuery(
   { wood, fit, cover, lid }: TimeOutChoices,
 ): TimeOutQuery {
   const known = findSpecies(wood)
-  const unknown = woodMovement(undefined)
   const allowanceMm =
     fit === 'own' ? values.allowanceMm : (GRADE_FIGURES[fit].allowanceMm ?? values.allowanceMm)
   return {
-    ...(known === undefined
-      ? {
-          densityKgM3: unknown.densityKgM3,
-          tangentialPerPct: rounded(unknown.tangentialPerPct),
-          radialPerPct: rounded(unknown.radialPerPct),
-        }
-      : { species: known.slug }),
+    species: known?.slug ?? UNKNOWN_SPECIES,
     diameterMm: values.diameterMm,
     wallMm: values.wallMm,
     spigotMm: values.spigotMm,
@@ -116,7 +109,12 @@ export function benchTimeOut(
   choices: TimeOutChoices,
 ): BenchTimeOut {
   const query = timeOutQuery(values, choices)
-  return { query, answer: timeOutAnswer(query), isWoodKnown: query.species !== undefined, fit: choices.fit }
+  return {
+    query,
+    answer: timeOutAnswer(query),
+    isWoodKnown: query.species !== UNKNOWN_SPECIES,
+    fit: choices.fit,
+  }
 }
 
 /** "Bring it in within 2 h 10 min; more likely good until about 4 h 40 min." */
