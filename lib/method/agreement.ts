@@ -256,3 +256,12 @@ export const measuredPoints = () => [
       'Sanchez-Ferrer and Engelhardt (2026), thin sheets, across and along the rings, read; here at 10 % MC, 430 kg/m³',
   },
 ]
+
+const KIND_WORDS: Readonly<Record<Agreement['kind'], string>> = {
+  printed: 'printed',
+  recalled: 'printed, but from memory here',
+  derived: 'worked out here, printed nowhere',
+}
+
+/** How the values of a comparison were come by, in words. */
+export const kindWords = (kind: Agreement['kind']): string => KIND_WORDS[kind]

@@ -129,7 +129,7 @@ const woodGroup: DefaultGroup = {
     {
       what: 'Fibre saturation',
       value: figureWithUnit(FIBRE_SATURATION_PCT, 0, '% MC'),
-      status: 'read',
+      status: 'from memory',
       why: 'Wood Handbook (2010), ch. 4, the usual average. Some dense oily woods saturate at 22 to 23 %.',
     },
     {
