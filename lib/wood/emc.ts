@@ -2,9 +2,13 @@ import { assertInRange } from '@/lib/assert'
 import { err, ok, type Result } from '@/lib/result'
 import { emcEquationPct, emcEquationSlope, emcUncheckedPct } from './emc-equation'
 
+/* Not exported, so that the innermost loops find them as plain numbers. */
+const COLDEST_C = -10
+const WARMEST_C = 50
+
 /** Range of air this product answers for, °C and percent. Colder or warmer air is refused, never guessed. */
-export const EMC_TEMPERATURE_MIN_C = -10
-export const EMC_TEMPERATURE_MAX_C = 50
+export const EMC_TEMPERATURE_MIN_C = COLDEST_C
+export const EMC_TEMPERATURE_MAX_C = WARMEST_C
 
 /**
  * Fibre saturation as a round figure: no moisture content above it is ever given for wood in air.
@@ -44,16 +48,21 @@ function assertAir(temperatureC: number, humidityPct: number): void {
  * Source: Wood Handbook (FPL-GTR-190, 2010), ch. 4, Eq. 4-5 and Table 4-2 (p. 4-3, 4-4).
  */
 export function emcPct(temperatureC: number, humidityPct: number): number {
-  // One look for all that is right; what is wrong is named by the slower way. Written so that NaN fails too.
-  if (!(
-    temperatureC >= EMC_TEMPERATURE_MIN_C &&
-    temperatureC <= EMC_TEMPERATURE_MAX_C &&
-    humidityPct >= 0 &&
-    humidityPct <= 100
-  ))
+  // Written so that NaN fails too. What is wrong is named out of line: this stands in the innermost loops.
+  if (!(temperatureC >= COLDEST_C && temperatureC <= WARMEST_C && humidityPct >= 0 && humidityPct <= 100))
+    throw outsideOf(temperatureC, humidityPct)
+  // At 100 % RH the curve ends at 29.0 (0 °C), so that nothing needs to be held under `EMC_MAX_PCT` (tested).
+  return emcUncheckedPct(temperatureC > 0 ? temperatureC : 0, humidityPct)
+}
+
+/** Names the input that is out of range. */
+function outsideOf(temperatureC: number, humidityPct: number): Error {
+  try {
     assertAir(temperatureC, humidityPct)
-  const emc = emcUncheckedPct(temperatureC > 0 ? temperatureC : 0, humidityPct)
-  return emc > EMC_MAX_PCT ? EMC_MAX_PCT : emc
+  } catch (error) {
+    if (error instanceof Error) return error
+  }
+  return new RangeError('the range of the air and the range that is named differ')
 }
 
 /**
