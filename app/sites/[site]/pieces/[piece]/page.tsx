@@ -4,6 +4,8 @@ import { database } from '@/app/_server/database'
 import { getPiece } from '@/app/_server/pieces'
 import { listRooms } from '@/app/_server/rooms'
 import { requireMember } from '@/app/_server/session'
+import { getWeighings, weighingsQuerySchema } from '@/app/_server/weighings'
+import { may } from '@/lib/sites/permissions'
 import { readerOf } from '@/lib/sites/reader'
 import { PieceView } from '../_components/piece-view'
 
@@ -18,10 +20,15 @@ export default async function PiecePage({ params }: Props) {
   const db = database()
   const [piece, rooms] = await Promise.all([getPiece(db, member, code, now), listRooms(db, member, now)])
   if (!piece.ok) notFound()
+  const seesWeights = may(member.role, 'pieces:weigh') && piece.value.isHidden !== true
+  const weighings = seesWeights
+    ? await getWeighings(db, member, code, weighingsQuerySchema.parse({}), now)
+    : null
   return (
     <PieceView
       reader={readerOf(member, now)}
       initial={piece.value}
+      weighings={weighings?.ok === true ? weighings.value : null}
       rooms={rooms.map(({ id, name, mark }) => ({ id, name, mark }))}
     />
   )

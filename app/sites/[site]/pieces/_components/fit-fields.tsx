@@ -14,7 +14,7 @@ const grades = fitGradeSchema.options.map((value) => ({ value, label: fitGradeWo
 
 export function FitFields({ reader, rooms, problem }: EditFieldsProps) {
   const { control, register, formState } = useFormContext<PieceChange>()
-  const [stage, fitGrade] = useWatch({ control, name: ['stage', 'fitGrade'] })
+  const [stage, fitGrade, lidForm] = useWatch({ control, name: ['stage', 'fitGrade', 'lidForm'] })
   const shared = { problem, reader }
   return (
     <div className="grid gap-5 md:grid-cols-2">
@@ -35,6 +35,9 @@ export function FitFields({ reader, rooms, problem }: EditFieldsProps) {
             options={{ base: 'on the base: the lid goes over', lid: 'on the lid: it drops in' }}
           />
           <ListField name="lidForm" label="The lid is" options={{ plug: 'solid', hollow: 'hollow' }} />
+          {lidForm === 'hollow' ? (
+            <LengthField name="lidWallMm" label="Wall of the lid" hint="Round the recess." {...shared} />
+          ) : null}
           <div className="md:col-span-2">
             <Controller
               control={control}

@@ -22,7 +22,12 @@ export function PieceFactsList({ piece, reader, rooms }: PieceFactsListProps) {
     ['Wall at the spigot', length(piece.wallMm)],
     ['Spigot', spigotWords(piece, length(piece.spigotMm))],
     ['Lid', lidWords(piece, length(piece.lidMm))],
-    ['Body wall', length(piece.bodyWallMm)],
+    ['Body wall', piece.stage === 'blank' ? null : length(piece.bodyWallMm)],
+    ['Wall of the lid', piece.stage === 'box' ? length(piece.lidWallMm) : null],
+    ['Thick', piece.stage === 'blank' ? length(piece.blankDiameterMm) : null],
+    ['Ends', piece.stage !== 'box' && piece.endsSealed ? 'sealed' : null],
+    ['Roughed out', piece.stage === 'box' || piece.roughedOn === null ? null : roughedWords(piece.roughedOn)],
+    ['Ready', piece.stage !== 'box' && piece.isReadyByWeight ? 'by weight alone, as its maker set it' : null],
     ['Fit, by hand', piece.fitGrade === null ? null : fitGradeWords[piece.fitGrade].label.toLowerCase()],
     ['Clearance, measured', fine(piece.clearanceMm)],
     ['It may lose', fine(piece.allowanceMm)],
@@ -73,6 +78,10 @@ function lidWords(piece: PieceDetail, length: string | null): string | null {
   const form = piece.lidForm === 'plug' ? 'solid' : 'hollow'
   return length === null ? form : `${form}, ${length} thick`
 }
+
+/** A calendar day has no zone, so it is written as that of UTC. */
+const roughedWords = (on: string): string =>
+  new Intl.DateTimeFormat('en-GB', { dateStyle: 'long', timeZone: 'UTC' }).format(new Date(on))
 
 /** "in March 2026, in the cupboard". The month counts, so the day is not shown. */
 function fittedWords(fittedOn: string | null, room: string | undefined): string | null {

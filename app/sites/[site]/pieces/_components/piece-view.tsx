@@ -10,16 +10,24 @@ import { TextLink } from '@/app/_components/ui/text-link'
 import { formatLength } from '@/lib/format/figures'
 import type { PieceDetail } from '@/lib/pieces/piece'
 import { pieceOutline } from '@/lib/pieces/title'
+import type { WeighingsPage } from '@/lib/seasoning/rest-view'
 import type { Reader } from '@/lib/sites/reader'
+import { RestingSheets } from '../[piece]/_components/resting-sheets'
 import type { RoomChoice } from './first-piece'
 import { FitSoFar } from './fit-so-far'
 import { PieceActions } from './piece-actions'
 import { PieceFactsList } from './piece-facts-list'
 import { PiecePlaces } from './piece-places'
 
-type PieceViewProps = { reader: Reader; initial: PieceDetail; rooms: readonly RoomChoice[] }
+type PieceViewProps = {
+  reader: Reader
+  initial: PieceDetail
+  /** Null for those who don’t see them. */
+  weighings: WeighingsPage | null
+  rooms: readonly RoomChoice[]
+}
 
-export function PieceView({ reader, initial, rooms }: PieceViewProps) {
+export function PieceView({ reader, initial, weighings, rooms }: PieceViewProps) {
   const { data, isError } = useSiteQuery<PieceDetail>({
     site: reader.site,
     area: 'pieces',
@@ -51,24 +59,25 @@ export function PieceView({ reader, initial, rooms }: PieceViewProps) {
           This piece could not be fetched just now. Nothing is lost; these are the last known.
         </StaleState>
       ) : null}
-      <PieceActions reader={reader} piece={piece} rooms={rooms} />
+      <PieceActions reader={reader} piece={piece} weighings={weighings} rooms={rooms} />
       {piece.isHidden === true ? (
         <Sheet>
           <p>This piece is private to its maker: others see its number, its room and its time out.</p>
         </Sheet>
       ) : (
-        <PieceSheets reader={reader} piece={piece} rooms={rooms} />
+        <PieceSheets reader={reader} piece={piece} weighings={weighings} rooms={rooms} />
       )}
     </>
   )
 }
 
-type PieceProps = { reader: Reader; piece: PieceDetail; rooms: readonly RoomChoice[] }
+type PieceProps = Omit<PieceViewProps, 'initial'> & { piece: PieceDetail }
 
-function PieceSheets({ reader, piece, rooms }: PieceProps) {
+function PieceSheets({ reader, piece, weighings, rooms }: PieceProps) {
   return (
     <>
-      <FitSoFar piece={piece} units={reader.units} />
+      {piece.stage === 'box' || weighings === null ? <FitSoFar piece={piece} units={reader.units} /> : null}
+      <RestingSheets reader={reader} piece={piece} initial={weighings} />
       <div className="grid gap-7 xl:grid-cols-2">
         <Sheet title="What is known of it" id="facts">
           <PieceFactsList piece={piece} rooms={rooms} reader={reader} />

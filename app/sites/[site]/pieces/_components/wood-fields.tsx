@@ -12,7 +12,7 @@ import { WoodField } from './wood-field'
 
 export function WoodFields({ reader, problem, woods }: EditFieldsProps & { woods: readonly WoodChoice[] }) {
   const { control, register, formState, setValue } = useFormContext<PieceChange>()
-  const [wood, woodKind] = useWatch({ control, name: ['wood', 'woodKind'] })
+  const [wood, woodKind, stage] = useWatch({ control, name: ['wood', 'woodKind', 'stage'] })
   return (
     <div className="grid gap-5 md:grid-cols-2">
       <Field label="Number" error={formState.errors.number?.message ?? problem?.errorOf('number')}>
@@ -44,7 +44,17 @@ export function WoodFields({ reader, problem, woods }: EditFieldsProps & { woods
         hint="Wild grain moves its own way; stabilised wood isn’t worked out to move."
       />
       <ListField name="grain" label="Grain" options={grainWords} />
-      <LengthField name="bodyWallMm" label="Body wall" problem={problem} reader={reader} />
+      {stage === 'blank' ? (
+        <LengthField
+          name="blankDiameterMm"
+          label="How thick it is"
+          hint="Straight across the blank, at its thickest."
+          problem={problem}
+          reader={reader}
+        />
+      ) : (
+        <LengthField name="bodyWallMm" label="Body wall" problem={problem} reader={reader} />
+      )}
       <div className="md:col-span-2">
         <WoodCare wood={woods.find((one) => one.slug === wood)} />
       </div>

@@ -1,14 +1,16 @@
 import { Sheet } from '@/app/_components/ui/sheet'
-import type { Site } from '@/lib/sites/site'
+import { formatMass } from '@/lib/format/figures'
+import type { Site, UnitSystem } from '@/lib/sites/site'
 
 /** For those who may look and not change. */
-export function PlaceFacts({ site }: { site: Site }) {
+export function PlaceFacts({ site, units }: { site: Site; units: UnitSystem }) {
   const facts = [
     ['Name', site.name],
     ['Time zone', site.timeZone.replaceAll('_', ' ')],
     ['Units', site.unitSystem === 'metric' ? 'metric' : 'imperial'],
     ['Quiet hours', site.quietFrom === site.quietTo ? 'none' : `${site.quietFrom} to ${site.quietTo}`],
     ['Lock-up', site.lockUpAt],
+    ['Scale step', site.scaleStepG === null ? 'not told: 1 g is taken' : formatMass(site.scaleStepG, units)],
   ] as const
   return (
     <Sheet title="The place" id="place" aside="Only an owner changes it">

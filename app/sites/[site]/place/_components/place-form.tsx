@@ -12,6 +12,7 @@ import { SentenceInput } from '@/app/_components/ui/sentence-control'
 import { FlowingSentence } from '@/app/sites/_components/flowing-sentence'
 import { Sheet } from '@/app/_components/ui/sheet'
 import { useAction } from '@/app/_components/use-action'
+import { scaleSteps } from '@/lib/format/scale-steps'
 import type { Reader } from '@/lib/sites/reader'
 import { type Site, type SiteChange, siteChangeSchema } from '@/lib/sites/site'
 
@@ -20,13 +21,17 @@ const units = [
   { value: 'imperial' as const, label: 'Imperial', detail: '°F, inch, oz' },
 ]
 
+/** The list gives texts; what was stored comes as a number, and nothing as null. */
+const stepOf = (value: string | number | null): number | null =>
+  value === null || value === '' ? null : Number(value)
+
 type PlaceFormProps = { reader: Reader; site: Site; timeZones: readonly string[] }
 
 export function PlaceForm({ reader, site, timeZones }: PlaceFormProps) {
-  const { name, timeZone, unitSystem, quietFrom, quietTo, lockUpAt } = site
+  const { name, timeZone, unitSystem, quietFrom, quietTo, lockUpAt, scaleStepG } = site
   const form = useForm({
     resolver: zodResolver(siteChangeSchema),
-    defaultValues: { name, timeZone, unitSystem, quietFrom, quietTo, lockUpAt },
+    defaultValues: { name, timeZone, unitSystem, quietFrom, quietTo, lockUpAt, scaleStepG },
   })
   const values = useWatch({ control: form.control })
   const save = useAction<SiteChange, Site>({
@@ -78,6 +83,20 @@ export function PlaceForm({ reader, site, timeZones }: PlaceFormProps) {
           }}
           hint="For those who have chosen none of their own."
         />
+        <Field
+          label="The smallest step that your scale shows"
+          hint="Weights of resting wood are the same within it. Taken as 1 g until told."
+          error={errorOf('scaleStepG')}
+        >
+          <Select {...form.register('scaleStepG', { setValueAs: stepOf })}>
+            <option value="">Not told</option>
+            {scaleSteps(reader.units, scaleStepG).map(({ stepG, words }) => (
+              <option key={stepG} value={String(stepG)}>
+                {words}
+              </option>
+            ))}
+          </Select>
+        </Field>
         <div>
           <FlowingSentence>
             Quiet from <SentenceInput type="time" label="Quiet hours begin" {...form.register('quietFrom')} />{' '}

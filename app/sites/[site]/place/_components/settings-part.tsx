@@ -21,7 +21,7 @@ export function SettingsPart({ reader, site, settings, timeZones }: SettingsPart
         // A new version begins the form anew, so that it never shows what somebody else has changed since.
         <PlaceForm key={site.version} reader={reader} site={site} timeZones={timeZones} />
       ) : (
-        <PlaceFacts site={site} />
+        <PlaceFacts site={site} units={reader.units} />
       )}
       <OwnSettingsForm reader={reader} site={site} initial={settings} />
     </>
