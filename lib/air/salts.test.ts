@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import { referenceRows } from '@/tests/support/reference'
-import { saltFixedPoints } from './salts'
+import { saltFixedPoints, SALTS } from './salts'
 
 describe('saturated salts, against Greenspan (1977), Table 2', () => {
   const confirmed = referenceRows('saturated_salts.csv').filter((row) =>
@@ -30,5 +30,29 @@ describe('saturated salts, against Greenspan (1977), Table 2', () => {
   it('names the input that is wrong', () => {
     expect(() => saltFixedPoints(NaN)).toThrow(/temperatureC/)
     expect(() => saltFixedPoints(4)).toThrow(/temperatureC/)
+  })
+})
+
+describe('the polynomials of saturated salts, against Greenspan (1977), Table 1', () => {
+  const rows = referenceRows('saturated_salts_polynomials.csv')
+
+  it('are those of the file, salt by salt and term by term, as printed there', () => {
+    expect(SALTS.map(({ salt, polynomial }) => [salt, ...polynomial])).toEqual(
+      rows.map((row) => [row.text('salt'), ...['a0', 'a1', 'a2', 'a3'].map((term) => row.number(term))]),
+    )
+  })
+
+  it('give the same humidity at every degree from 5 to 35 °C, to 1e-9 % RH', () => {
+    for (let temperatureC = 5; temperatureC <= 35; temperatureC += 1) {
+      const points = saltFixedPoints(temperatureC)
+      for (const row of rows) {
+        const humidityPct = [0, 1, 2, 3].reduce(
+          (sum, power) => sum + row.number(`a${String(power)}`) * temperatureC ** power,
+          0,
+        )
+        const point = points.find((one) => one.salt === row.text('salt'))
+        expect(point?.humidityPct).toBeCloseTo(humidityPct, 9)
+      }
+    }
   })
 })
