@@ -7,7 +7,7 @@ import { listStandingPieces, type PieceRecord } from '@/db/queries/pieces'
 import { listSensorRecords, type SensorRecord } from '@/db/queries/sensors'
 import { countPieces } from '@/db/queries/site-counts'
 import type { Database } from '@/db/schema'
-import type { Carry } from '@/lib/carry/carry'
+import { type Carry, hasLid } from '@/lib/carry/carry'
 import { type CarryMaterial, woodAt } from '@/lib/carry/material'
 import { undoBringBackMs } from '@/lib/notices/policy'
 import { nowHeadline } from '@/lib/now/headline'
@@ -139,9 +139,11 @@ function justBack(
     piece.backAt !== null && new Date(piece.backAt).getTime() > now.getTime() - undoBringBackMs
       ? {
           carryId: carry.id,
+          pieceId: piece.id,
           number: piece.number,
           roomName: roomOfBack.get(piece.backAt) ?? '',
           at: piece.backAt,
+          hasLid: hasLid(piece),
         }
       : [],
   )

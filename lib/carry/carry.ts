@@ -56,6 +56,10 @@ export const carryPieceSchema = z.object({
 })
 export type CarryPiece = z.infer<typeof carryPieceSchema>
 
+/** Whether it can be told how its lid turned: blanks, pairs and what is private to others are drawn otherwise. */
+export const hasLid = ({ outline }: Pick<CarryPiece, 'outline'>): boolean =>
+  outline === 'low' || outline === 'tall'
+
 export const carrySchema = z.object({
   id: z.string(),
   state: carryStateSchema,

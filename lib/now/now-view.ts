@@ -63,7 +63,17 @@ export const nowViewSchema = z.object({
     shelf: z.array(ruleShelfSchema),
   }),
   /** Pieces just brought back, for the undo line. */
-  justBack: z.array(z.object({ carryId: z.string(), number: z.string(), roomName: z.string(), at: instant })),
+  justBack: z.array(
+    z.object({
+      carryId: z.string(),
+      pieceId: z.string(),
+      number: z.string(),
+      roomName: z.string(),
+      at: instant,
+      /** A box, of which it can be told how its lid turned. */
+      hasLid: z.boolean(),
+    }),
+  ),
   needs: z.array(needSchema),
   silent: z.array(
     z.object({

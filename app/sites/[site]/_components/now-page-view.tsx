@@ -1,6 +1,6 @@
 'use client'
 
-import { useState } from 'react'
+import { Fragment, useState } from 'react'
 import { describeError } from '@/app/_components/api'
 import { MoistureRule, apartWords } from '@/app/_components/charts/moisture-rule'
 import { useSiteQuery } from '@/app/_components/live/use-site-query'
@@ -20,6 +20,7 @@ import { furthestApart, nowRule } from './now-rule'
 import { OutAnnouncer } from './out-announcer'
 import { OutSheet, isDueSoon, piecesOut } from './out-sheet'
 import { PlannedSheet } from './planned-sheet'
+import { TurnedAfterCarry } from './turned-after-carry'
 import { useCarryActions } from './use-carry-actions'
 
 const TWO_HOURS_MS = 2 * 3_600_000
@@ -109,20 +110,30 @@ export function NowPageView({ reader, initial }: { reader: Reader; initial: NowV
           {justBack.map((back) => {
             const key = `${back.carryId} ${back.number} ${back.at}`
             return (
-              <UndoLine
-                key={key}
-                pending={actions.undo.pending}
-                onUndo={() => {
-                  actions.undo.act({ carryId: back.carryId })
-                }}
-                seconds={600}
-                onGone={() => {
-                  setPassed((gone) => [...gone, key])
-                }}
-              >
-                {back.number} is back in <strong>{back.roomName}</strong>,{' '}
-                {formatClock(back.at, reader.timeZone)}.
-              </UndoLine>
+              <Fragment key={key}>
+                <UndoLine
+                  pending={actions.undo.pending}
+                  onUndo={() => {
+                    actions.undo.act({ carryId: back.carryId })
+                  }}
+                  seconds={600}
+                  onGone={() => {
+                    setPassed((gone) => [...gone, key])
+                  }}
+                >
+                  {back.number} is back in <strong>{back.roomName}</strong>,{' '}
+                  {formatClock(back.at, reader.timeZone)}.
+                </UndoLine>
+                {back.hasLid && may(reader.role, 'pieces:record') ? (
+                  <TurnedAfterCarry
+                    reader={reader}
+                    pieceId={back.pieceId}
+                    number={back.number}
+                    carryId={back.carryId}
+                    className="border-l-[6px] border-l-good bg-board p-4"
+                  />
+                ) : null}
+              </Fragment>
             )
           })}
         </div>
