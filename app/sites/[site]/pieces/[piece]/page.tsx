@@ -1,6 +1,7 @@
 import type { Metadata } from 'next'
 import { notFound } from 'next/navigation'
 import { database } from '@/app/_server/database'
+import { findPieceRecordPart } from '@/app/_server/piece-page'
 import { getPiece } from '@/app/_server/pieces'
 import { listRooms } from '@/app/_server/rooms'
 import { requireMember } from '@/app/_server/session'
@@ -18,7 +19,11 @@ export default async function PiecePage({ params }: Props) {
   const member = await requireMember(site, 'pieces:see')
   const now = new Date()
   const db = database()
-  const [piece, rooms] = await Promise.all([getPiece(db, member, code, now), listRooms(db, member, now)])
+  const [piece, rooms, record] = await Promise.all([
+    getPiece(db, member, code, now),
+    listRooms(db, member, now),
+    findPieceRecordPart(db, member, code, now),
+  ])
   if (!piece.ok) notFound()
   const seesWeights = may(member.role, 'pieces:weigh') && piece.value.isHidden !== true
   const weighings = seesWeights
@@ -29,6 +34,7 @@ export default async function PiecePage({ params }: Props) {
       reader={readerOf(member, now)}
       initial={piece.value}
       weighings={weighings?.ok === true ? weighings.value : null}
+      record={record}
       rooms={rooms.map(({ id, name, mark }) => ({ id, name, mark }))}
     />
   )

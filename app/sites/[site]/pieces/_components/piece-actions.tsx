@@ -5,6 +5,7 @@ import type { PieceDetail } from '@/lib/pieces/piece'
 import { may } from '@/lib/sites/permissions'
 import type { WeighingsPage } from '@/lib/seasoning/rest-view'
 import type { Reader } from '@/lib/sites/reader'
+import { ReTrue } from '../[piece]/_components/re-true'
 import { WeighIt } from '../[piece]/_components/weigh-it'
 import type { RoomChoice } from './first-piece'
 import { MovePiece } from './move-piece'
@@ -40,6 +41,7 @@ export function PieceActions({ reader, piece, weighings, rooms }: PieceActionsPr
         </ButtonLink>
       ) : null}
       {mayMove ? <MovePiece reader={reader} piece={piece} rooms={rooms} /> : null}
+      {mayChange && isAround && piece.stage === 'box' ? <ReTrue reader={reader} piece={piece} /> : null}
       {mayChange && isAround ? (
         <ButtonLink href={`${base}/pieces/${piece.id}/edit`} className="max-sm:grow">
           Put facts right

@@ -9,9 +9,12 @@ import { StaleState } from '@/app/_components/ui/states'
 import { TextLink } from '@/app/_components/ui/text-link'
 import { formatLength } from '@/lib/format/figures'
 import type { PieceDetail } from '@/lib/pieces/piece'
+import type { PieceFit } from '@/lib/pieces/piece-fit'
 import { pieceOutline } from '@/lib/pieces/title'
 import type { WeighingsPage } from '@/lib/seasoning/rest-view'
 import type { Reader } from '@/lib/sites/reader'
+import { FitSheets } from '../[piece]/_components/fit-sheets'
+import { type PieceRecordView, RecordSheet } from '../[piece]/_components/record-sheet'
 import { RestingSheets } from '../[piece]/_components/resting-sheets'
 import type { RoomChoice } from './first-piece'
 import { FitSoFar } from './fit-so-far'
@@ -24,10 +27,12 @@ type PieceViewProps = {
   initial: PieceDetail
   /** Null for those who don’t see them. */
   weighings: WeighingsPage | null
+  /** Likewise, and null for a piece that is private to somebody else. */
+  record: (PieceRecordView & { readonly fit: PieceFit }) | null
   rooms: readonly RoomChoice[]
 }
 
-export function PieceView({ reader, initial, weighings, rooms }: PieceViewProps) {
+export function PieceView({ reader, initial, weighings, record, rooms }: PieceViewProps) {
   const { data, isError } = useSiteQuery<PieceDetail>({
     site: reader.site,
     area: 'pieces',
@@ -65,7 +70,7 @@ export function PieceView({ reader, initial, weighings, rooms }: PieceViewProps)
           <p>This piece is private to its maker: others see its number, its room and its time out.</p>
         </Sheet>
       ) : (
-        <PieceSheets reader={reader} piece={piece} weighings={weighings} rooms={rooms} />
+        <PieceSheets reader={reader} piece={piece} weighings={weighings} record={record} rooms={rooms} />
       )}
     </>
   )
@@ -73,11 +78,14 @@ export function PieceView({ reader, initial, weighings, rooms }: PieceViewProps)
 
 type PieceProps = Omit<PieceViewProps, 'initial'> & { piece: PieceDetail }
 
-function PieceSheets({ reader, piece, weighings, rooms }: PieceProps) {
+function PieceSheets({ reader, piece, weighings, record, rooms }: PieceProps) {
+  const fit = record === null ? null : <FitSheets reader={reader} piece={piece} initial={record.fit} />
   return (
     <>
       {piece.stage === 'box' || weighings === null ? <FitSoFar piece={piece} units={reader.units} /> : null}
+      {piece.stage === 'box' ? fit : null}
       <RestingSheets reader={reader} piece={piece} initial={weighings} />
+      {piece.stage === 'box' ? null : fit}
       <div className="grid gap-7 xl:grid-cols-2">
         <Sheet title="What is known of it" id="facts">
           <PieceFactsList piece={piece} rooms={rooms} reader={reader} />
@@ -86,6 +94,7 @@ function PieceSheets({ reader, piece, weighings, rooms }: PieceProps) {
           <PiecePlaces piece={piece} reader={reader} />
         </Sheet>
       </div>
+      {record === null ? null : <RecordSheet reader={reader} piece={piece} initial={record} />}
       <Sheet title="Take care" id="care">
         <div className="flex flex-col gap-3">
           {piece.dust.map((note) => (
