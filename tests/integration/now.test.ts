@@ -67,7 +67,10 @@ describe('Now', () => {
     const after = await getNow(database.db, maker, minutesAfter(21))
     expect(after.out).toEqual([])
     expect(after.justBack).toEqual([
-      { carryId: out.id, number: '601', roomName: 'Landing cupboard', at: minutesAfter(20).toISOString() },
+      {
+        ...{ carryId: out.id, pieceId: box.code, number: '601', hasLid: true },
+        ...{ roomName: 'Landing cupboard', at: minutesAfter(20).toISOString() },
+      },
     ])
     expect((await getNow(database.db, maker, minutesAfter(31))).justBack).toEqual([])
   })
