@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import { FILM_M_PER_S } from '@/lib/follow/finish'
 import { agreements, emcByTemperature, spreadOf } from './agreement'
-import { filmEffectiveness } from './film-effectiveness'
+import { filmEffectiveness, mostOverPromisedPct } from './film-effectiveness'
 import { EFFECTIVENESS_TABLE } from './published/effectiveness-table'
 
 const found = (id: string) => {
@@ -76,6 +76,12 @@ describe('a film', () => {
       expect(before - share).toBeLessThan(0.005)
       before = share
     }
+  })
+
+  it('is not trusted whole, for it promises more the longer it lasts', () => {
+    expect(mostOverPromisedPct(1)).toBeLessThan(1.5)
+    expect(mostOverPromisedPct(7)).toBeGreaterThan(20)
+    expect(mostOverPromisedPct(14)).toBeGreaterThan(mostOverPromisedPct(7))
   })
 
   it('names the input that is wrong', () => {

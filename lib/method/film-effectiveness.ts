@@ -1,4 +1,6 @@
 import { assertFiniteAbove, assertInRange } from '@/lib/assert'
+import { FILM_M_PER_S } from '@/lib/follow/finish'
+import { EFFECTIVENESS_DAYS, EFFECTIVENESS_TABLE } from './published/effectiveness-table'
 
 /** Diffusion across the grain that the films' figures were worked out with, m²/s: pine at 27 °C. Status: derived. */
 export const FILM_WOOD_M2_PER_S = 1e-10
@@ -39,4 +41,20 @@ export function filmEffectiveness(filmMPerS: number, days: number): number {
   assertInRange('days', days, 0, 3650)
   const z = filmMPerS * Math.sqrt((days * DAY_S) / FILM_WOOD_M2_PER_S)
   return ((1 - scaledErfc(z)) * Math.sqrt(Math.PI)) / (2 * z)
+}
+
+/**
+ * The most that a film which stays as it was promises too much, over the finishes of the table.
+ * @param days 1, 7 or 14, as the table has them
+ * @returns percentage points
+ */
+export function mostOverPromisedPct(days: (typeof EFFECTIVENESS_DAYS)[number]): number {
+  const column = EFFECTIVENESS_DAYS.indexOf(days)
+  return Math.max(
+    ...EFFECTIVENESS_TABLE.flatMap(({ film, afterDaysPct }) =>
+      film === undefined
+        ? []
+        : [100 * filmEffectiveness(FILM_M_PER_S[film], days) - (afterDaysPct[column] ?? Number.NaN)],
+    ),
+  )
 }

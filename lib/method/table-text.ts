@@ -11,6 +11,7 @@ import { perPctFromShrinkage } from '@/lib/wood/movement'
 import { agreements, airPointHere, emcByTemperature, kindWords } from './agreement'
 import { figure, figureWithUnit, percent } from './figure'
 import { filmEffectiveness } from './film-effectiveness'
+import { formatCount } from '@/lib/format/figures'
 
 type Column = { readonly header: string; readonly align?: 'right' }
 
@@ -97,10 +98,10 @@ function movementTable(): ComparisonTable {
     title: 'Coefficients of Table 13-5 from the shrinkage of Table 4-3, Wood Handbook (2010)',
     columns: [
       { header: 'Wood' },
-      right('C_R printed'),
-      right('C_R here'),
-      right('C_T printed'),
-      right('C_T here'),
+      right('Across rings, printed'),
+      right('Here, across'),
+      right('Along rings, printed'),
+      right('Here, along'),
     ],
     rows: MOVEMENT_TABLE.map((row) => [
       CARRIES_A_RELATIVES_FIGURE.includes(row.wood) ? `${row.wood} (a relative’s in print)` : row.wood,
@@ -158,9 +159,7 @@ export function effectivenessTable(): ComparisonTable {
     columns: [
       { header: 'Finish' },
       { header: 'Coats' },
-      ...EFFECTIVENESS_DAYS.map((days) => ({
-        header: days === 1 ? 'After 1 day: printed, film, counted' : `After ${String(days)} days`,
-      })),
+      ...EFFECTIVENESS_DAYS.map((days) => ({ header: `After ${formatCount(days, 'day')}` })),
       { header: 'Print' },
     ],
     rows: EFFECTIVENESS_TABLE.map(({ finish, coats, afterDaysPct, status, film }) => [

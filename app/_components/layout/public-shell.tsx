@@ -1,6 +1,7 @@
 import Link from 'next/link'
 import type { ReactNode } from 'react'
 import { Logo } from '../ui/icons'
+import { TextLink } from '../ui/text-link'
 import { ThemeChoice } from './theme-choice'
 
 type PublicShellProps = {
@@ -32,7 +33,10 @@ export function PublicShell({ actions, narrow = false, children }: PublicShellPr
       </main>
       <footer className="flex flex-wrap items-center justify-between gap-4 px-4 py-6 text-label text-ink-soft sm:px-0">
         <p className="max-w-words">
-          Readings stay on the machine that runs Lidfast. It advises; it switches nothing on or off.
+          Readings stay on the machine that runs Lidfast. It advises; it switches nothing on or off.{' '}
+          <TextLink href="/method" prefetch={false} className="inline-flex min-h-11 items-center sm:min-h-9">
+            Where its figures come from
+          </TextLink>
         </p>
         <ThemeChoice />
       </footer>

@@ -1,4 +1,5 @@
 import type { FormulaFacts } from './formula-facts'
+import { Lettered } from './lettered'
 import { MathLines } from './math'
 
 /** A formula: in words, in signs, and with its papers. */
@@ -6,6 +7,7 @@ export function Formula({ facts }: { facts: FormulaFacts }) {
   const papers = [
     ['Letters', facts.letters],
     ['Source', facts.source],
+    ['Status', facts.status],
     ['Range', facts.range],
     ['Limits', facts.limits],
     ['Doubt', facts.doubt],
@@ -15,24 +17,16 @@ export function Formula({ facts }: { facts: FormulaFacts }) {
       <h3 className="font-semibold">{facts.title}</h3>
       <p className="max-w-words">{facts.plain}</p>
       <MathLines lines={facts.lines} label={`${facts.title}, as a formula`} />
-      <dl className="grid max-w-words gap-x-4 gap-y-1 text-label sm:grid-cols-[4.5rem_1fr]">
-        {papers.slice(0, 2).map(([term, text]) => (
-          <Paper key={term} term={term} text={text} />
-        ))}
-        <Paper term="Status" text={facts.status} />
-        {papers.slice(2).map(([term, text]) => (
-          <Paper key={term} term={term} text={text} />
+      <dl className="grid gap-x-8 gap-y-2 text-label sm:grid-cols-2">
+        {papers.map(([term, text]) => (
+          <div key={term} className="grid grid-cols-[3.5rem_1fr] gap-x-3">
+            <dt className="text-ink-soft">{term}</dt>
+            <dd>
+              <Lettered text={text} />
+            </dd>
+          </div>
         ))}
       </dl>
     </article>
-  )
-}
-
-function Paper({ term, text }: { term: string; text: string }) {
-  return (
-    <div className="contents">
-      <dt className="text-ink-soft max-sm:mt-1">{term}</dt>
-      <dd>{text}</dd>
-    </div>
   )
 }

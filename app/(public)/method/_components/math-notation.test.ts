@@ -20,6 +20,12 @@ describe('formulas as typed', () => {
     ['(1 − h)^2', '<msup><mrow><mo>(</mo><mn>1</mn><mo>−</mo><mi>h</mi><mo>)</mo></mrow><mn>2</mn></msup>'],
     ['sin θ', '<mrow><mi>sin</mi>·</mrow>·<mi>θ</mi>'],
     ['∑_{n} w', '<munder><mo>∑</mo><mi>n</mi></munder>·<mi>w</mi>'],
+    ['Δ t', '<mi>Δ</mi><mi>t</mi>'],
+    ['|m|', '<mrow><mo>|</mo><mi>m</mi><mo>|</mo></mrow>'],
+    [
+      '({a}/{b})',
+      '<mrow><mpadded><mo>(</mo></mpadded><mfrac><mi>a</mi><mi>b</mi></mfrac><mpadded><mo>)</mo></mpadded></mrow>',
+    ],
     ['"or" x', '<mtext>or</mtext>·<mi>x</mi>'],
   ])('%s', (notation, expected) => {
     expect(of(notation)).toBe(expected)

@@ -17,8 +17,19 @@ const THIN: MathNode = { tag: 'mspace', attributes: { width: '0.16em' } }
 const row = (children: readonly MathNode[]): MathNode =>
   children.length === 1 && children[0] !== undefined ? children[0] : { tag: 'mrow', children }
 const operator = (text: string): MathNode => ({ tag: 'mo', text })
+/** Brackets round a fraction are as tall as it is. Not every font can stretch its own, so they are set larger and lower. */
+const fence = (text: string, isTall: boolean): MathNode =>
+  isTall
+    ? {
+        tag: 'mpadded',
+        attributes: { voffset: '-0.4em' },
+        children: [{ tag: 'mo', text, attributes: { mathsize: '210%', stretchy: 'false' } }],
+      }
+    : operator(text)
+const holdsFraction = (node: MathNode): boolean =>
+  node.tag === 'mfrac' || (node.children ?? []).some(holdsFraction)
 const isOperand = (node: MathNode | undefined): boolean =>
-  node !== undefined && node.tag !== 'mo' && node.tag !== 'mspace'
+  node !== undefined && node.tag !== 'mo' && node.tag !== 'mspace' && node.text !== 'Δ'
 
 /**
  * MathML of a formula as one would type it: names, numbers and operators as they are, `_` and `^` for scripts, `{a}/{b}` for
@@ -27,8 +38,7 @@ const isOperand = (node: MathNode | undefined): boolean =>
  */
 export function mathOf(notation: string): readonly MathNode[] {
   const reader = new Reader(notation)
-  const nodes = sequence(reader, undefined)
-  return nodes
+  return sequence(reader, undefined)
 }
 
 class Reader {
@@ -105,14 +115,18 @@ function atom(reader: Reader): MathNode {
   const closing = CLOSING[first]
   if (closing === undefined) return operator(first)
   const inside = sequence(reader, closing)
-  return first === '{'
-    ? row(inside)
-    : { tag: 'mrow', children: [operator(first), ...inside, operator(closing)] }
+  if (first === '{') return row(inside)
+  const isTall = inside.some(holdsFraction)
+  return { tag: 'mrow', children: [fence(first, isTall), ...inside, fence(closing, isTall)] }
 }
 
 function named(reader: Reader, name: string): MathNode {
   reader.take(name.length)
-  const node: MathNode = { tag: 'mi', text: name }
+  // One letter is slanted by its style and not by another alphabet, which the page's own font lacks.
+  const isOneLetter = [...name].length === 1 && name !== 'Δ'
+  const node: MathNode = isOneLetter
+    ? { tag: 'mi', text: name, attributes: { mathvariant: 'normal', class: 'italic' } }
+    : { tag: 'mi', text: name }
   const isBare = FUNCTIONS.has(name) && !/^[(_^]/.test(reader.rest)
   return isBare ? { tag: 'mrow', children: [node, THIN] } : node
 }

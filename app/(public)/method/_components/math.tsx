@@ -1,8 +1,10 @@
 import { createElement, type ReactElement } from 'react'
 import { mathOf, type MathNode } from './math-notation'
 
-const elementOf = ({ tag, text, children, attributes }: MathNode, key: number): ReactElement =>
-  createElement(tag, { key, ...attributes }, text ?? children?.map(elementOf))
+const elementOf = ({ tag, text, children, attributes }: MathNode, key: number): ReactElement => {
+  const { class: className, ...rest } = attributes ?? {}
+  return createElement(tag, { key, className, ...rest }, text ?? children?.map(elementOf))
+}
 
 /** A formula as the browser's own MathML. */
 const mathElement = (notation: string): ReactElement =>

@@ -9,7 +9,7 @@ export function Worked({ example }: { example: WorkedExample }) {
         Worked example
       </h3>
       <p className="max-w-words">{example.given}</p>
-      <dl className="grid max-w-words gap-x-6 gap-y-1 sm:grid-cols-[minmax(0,1fr)_minmax(0,1.3fr)]">
+      <dl className="grid max-w-[46rem] gap-x-6 gap-y-1 sm:grid-cols-[minmax(0,2fr)_minmax(0,3fr)]">
         {example.lines.map(({ what, value }) => (
           <div key={what} className="contents">
             <dt className="text-ink-soft max-sm:mt-2">{what}</dt>

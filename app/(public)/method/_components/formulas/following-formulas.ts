@@ -15,7 +15,8 @@ import {
 import { COUNTED_SHARE } from '@/lib/follow/finish'
 import { RUNG_RATIO, RUNGS } from '@/lib/follow/exponentials'
 import { DIFFUSION_TOWARDS_AIR } from '@/lib/follow/wood-state'
-import { exactly, percent } from '@/lib/method/figure'
+import { exactly, figure, percent } from '@/lib/method/figure'
+import { mostOverPromisedPct } from '@/lib/method/film-effectiveness'
 import { type FormulaFacts, powerOfTen } from '../formula-facts'
 
 const CRANK = 'Crank, The Mathematics of Diffusion (1975)'
@@ -122,6 +123,6 @@ export const followingFormulas: readonly FormulaFacts[] = [
     status: 'derived',
     range: 'Oil, lacquer, shellac, varnish, epoxy; wax and other words count as none',
     limits: `${percent(COUNTED_SHARE)} of the resistance counts. Handled, open, bagged or in the tub a piece counts as bare, and its rim always`,
-    doubt: 'A constant film promises up to 29 points too much after a week: see the table below',
+    doubt: `A film that stays as it was promises up to ${figure(mostOverPromisedPct(7), 0)} points too much after a week, ${figure(mostOverPromisedPct(14), 0)} after two: see the tables`,
   },
 ]
