@@ -13,10 +13,13 @@ import { HOUR_MS, type RoomHours } from '@/lib/follow/record'
 import { ok } from '@/lib/result'
 import { isFresh, settledTo } from '@/lib/rooms/air'
 import type { FeltQuery, RoomFelt } from '@/lib/rooms/felt'
+import { type FindableWood, inOrder } from '@/lib/wood/find-woods'
 import { movementOfWood, UNKNOWN_WOOD_CLASS } from '@/lib/wood/movement-class'
 import { resolveWood } from '@/lib/wood/site-wood'
+import { SPECIES } from '@/lib/wood/species'
 import { failField, notThere, type Outcome } from './problem'
 import { isOnlooker } from './rooms'
+import { offeredWoods } from './woods'
 
 const dayMs = 24 * HOUR_MS
 
@@ -54,6 +57,19 @@ export async function getRoomFelt(
   const memoryMs = Math.max(...woods.map(feltMemoryMs))
   const air = await airOf(db, member, room.id, new Date((times[0] ?? 0) - memoryMs), until)
   return ok({ wood: wood.view, ...settled, ...feltOf(air, woods, times) })
+}
+
+/** The woods that it can be reckoned for: all that are offered at the site; for onlookers those of the table. */
+export async function feltWoods(db: Kysely<Database>, member: SiteMember): Promise<FindableWood[]> {
+  const woods: readonly FindableWood[] = isOnlooker(member)
+    ? SPECIES.toSorted(inOrder)
+    : await offeredWoods(db, member.siteId)
+  return woods.map(({ slug, commonName, latinName, isOwn }) => ({
+    slug,
+    commonName,
+    latinName,
+    ...(isOwn === true && { isOwn }),
+  }))
 }
 
 async function woodOf(db: Kysely<Database>, member: SiteMember, asked: string | undefined) {

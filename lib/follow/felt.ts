@@ -4,8 +4,8 @@ import { PACE_LOG_SPREAD } from '@/lib/doubt/causes'
 import { EDGE_OF_EIGHT_IN_TEN } from '@/lib/doubt/spread'
 import { mcDoubtPct, startDoubtPct } from './doubt'
 import { partFilter } from './part'
-import { type AirFrom, airsOf, HOUR_MS, type RoomHours } from './record'
-import { evenState, type PieceFilter, stepWood, type WoodState } from './wood-state'
+import { airsOf, HOUR_MS, type RoomHours } from './record'
+import { type AirFrom, evenState, type PieceFilter, stepWood, type WoodState } from './wood-state'
 
 /** Felt EMC: what wood of a thickness, open on both faces, has followed so far of a room's changing air. */
 

@@ -1,10 +1,13 @@
 import type { Metadata } from 'next'
 import { notFound } from 'next/navigation'
 import { database } from '@/app/_server/database'
+import { feltWoods, getRoomFelt } from '@/app/_server/felt'
 import { getRoom } from '@/app/_server/rooms'
 import { getRoomSeries } from '@/app/_server/series'
 import { requireMember } from '@/app/_server/session'
+import { feltQuerySchema } from '@/lib/rooms/felt'
 import { readerOf } from '@/lib/sites/reader'
+import { feltAskedOf, feltQueryOf } from './_components/felt-asked'
 import { RoomView } from './_components/room-view'
 import { seriesQueryOf, spanOf } from './_components/span'
 
@@ -19,11 +22,15 @@ export default async function RoomPage({ params, searchParams }: Props) {
   const { site, room: code } = await params
   const member = await requireMember(site, 'rooms:see')
   const now = new Date()
-  const span = spanOf((await searchParams).span, member.role)
+  const search = await searchParams
+  const span = spanOf(search.span, member.role)
+  const asked = feltAskedOf(search.wood, search.thicknessMm)
   const db = database()
-  const [room, series] = await Promise.all([
+  const [room, series, felt, woods] = await Promise.all([
     getRoom(db, member, code, now),
     getRoomSeries(db, member, code, seriesQueryOf(span, now), now),
+    getRoomFelt(db, member, code, feltQuerySchema.parse(feltQueryOf(asked)), now),
+    feltWoods(db, member),
   ])
   if (!room.ok || !series.ok) notFound()
   return (
@@ -31,6 +38,9 @@ export default async function RoomPage({ params, searchParams }: Props) {
       reader={readerOf(member, now)}
       initial={room.value}
       initialSeries={{ span, series: series.value }}
+      // A wood that was put away since, say: the sheet asks again, and says what is wrong.
+      initialFelt={felt.ok ? { asked, felt: felt.value } : undefined}
+      woods={woods}
     />
   )
 }

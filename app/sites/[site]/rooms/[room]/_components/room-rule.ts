@@ -1,10 +1,18 @@
-import type { RuleModel } from '@/app/_components/charts/rule-model'
+import type { RuleModel, RuleShelfItem } from '@/app/_components/charts/rule-model'
 import { formatEmc } from '@/lib/format/figures'
 import { formatShortMoment } from '@/lib/format/times'
 import type { RoomDetail } from '@/lib/rooms/room'
 
-/** A room's own rule: now, its year's middle and its year above; the other rooms beside; today's range below. */
-export function roomRule(room: RoomDetail, timeZone: string, now: Date): RuleModel {
+/**
+ * A room's own rule: now, its year's middle and its year above; the other rooms beside; today's range and what wood has
+ * felt below.
+ */
+export function roomRule(
+  room: RoomDetail,
+  felt: readonly RuleShelfItem[],
+  timeZone: string,
+  now: Date,
+): RuleModel {
   const { air, year, today } = room
   const isFresh = air.kind === 'fresh'
   const flags: RuleModel['flags'] = [
@@ -57,18 +65,19 @@ export function roomRule(room: RoomDetail, timeZone: string, now: Date): RuleMod
             },
           ]
         : [],
-    shelf: [],
-    sentence: sentence(room, flags),
+    shelf: felt,
+    sentence: sentence(room, flags, felt),
   }
 }
 
 const clamp = (at: number, today: { emcPctMin: number; emcPctMax: number }) =>
   Math.min(Math.max(at, today.emcPctMin), today.emcPctMax)
 
-function sentence(room: RoomDetail, flags: RuleModel['flags']): string {
+function sentence(room: RoomDetail, flags: RuleModel['flags'], felt: readonly RuleShelfItem[]): string {
   if (flags.length === 0) return `${room.name} on the moisture rule: no reading yet.`
   const today = room.today
     ? `; today from ${formatEmc(room.today.emcPctMin)} to ${formatEmc(room.today.emcPctMax)}`
     : ''
-  return `${room.name} on the moisture rule: ${flags.map((flag) => `${flag.name} ${flag.value}`).join(', ')}${today}.`
+  const marks = felt.length === 0 ? '' : `; ${felt.map((mark) => `${mark.label} ${mark.sub}`).join(', ')}`
+  return `${room.name} on the moisture rule: ${flags.map((flag) => `${flag.name} ${flag.value}`).join(', ')}${today}${marks}.`
 }

@@ -23,20 +23,27 @@ import { formatMoment } from '@/lib/format/times'
 import { type RoomDetail, roomKindWords, type RoomSeries } from '@/lib/rooms/room'
 import { may } from '@/lib/sites/permissions'
 import type { Reader } from '@/lib/sites/reader'
+import type { FindableWood } from '@/lib/wood/find-woods'
 import { EditRoom } from './edit-room'
+import { feltMarks } from './felt-marks'
+import { FeltSheet } from './felt-sheet'
 import { RoomChart } from './room-chart'
 import { roomRule } from './room-rule'
 import type { Span } from './span'
 import { TypeReading } from './type-reading'
+import { type InitialFelt, useFelt } from './use-felt'
 
 type RoomViewProps = {
   reader: Reader
   initial: RoomDetail
   initialSeries: { span: Span; series: RoomSeries }
+  initialFelt: InitialFelt | undefined
+  /** The woods that its felt EMC can be reckoned for. */
+  woods: readonly FindableWood[]
 }
 
 /** What this room does to wood: now, today, this month, in numbers and in plain words. */
-export function RoomView({ reader, initial, initialSeries }: RoomViewProps) {
+export function RoomView({ reader, initial, initialSeries, initialFelt, woods }: RoomViewProps) {
   const { data: room = initial } = useSiteQuery<RoomDetail>({
     site: reader.site,
     area: 'rooms',
@@ -44,6 +51,7 @@ export function RoomView({ reader, initial, initialSeries }: RoomViewProps) {
     path: `/rooms/${initial.id}`,
     initial,
   })
+  const felt = useFelt(reader.site, initial.id, initialFelt)
   const now = useNow(reader.at)
   const base = `/sites/${reader.site}`
   return (
@@ -71,9 +79,9 @@ export function RoomView({ reader, initial, initialSeries }: RoomViewProps) {
         {may(reader.role, 'rooms:change') ? <EditRoom site={reader.site} room={room} /> : null}
       </div>
       <MoistureRule
-        model={roomRule(room, reader.timeZone, now)}
+        model={roomRule(room, feltMarks(felt.query.data, reader.units), reader.timeZone, now)}
         title="What this room does to wood"
-        aside="Where wood would end, given time"
+        aside="Where wood would end, given time; felt: what it has followed so far"
         note={<AirNow room={room} reader={reader} now={now} />}
       />
       {room.cautions.length > 0 ? (
@@ -82,6 +90,7 @@ export function RoomView({ reader, initial, initialSeries }: RoomViewProps) {
         </div>
       ) : null}
       <RoomChart reader={reader} roomId={room.id} initial={initialSeries} now={now} />
+      <FeltSheet reader={reader} felt={felt} woods={woods} now={now} />
       <div className="grid gap-7 lg:grid-cols-2 lg:items-start">
         <Sheet id="words" title="In plain words">
           {room.words.length === 0 ? (
