@@ -6,8 +6,8 @@ describe('what a change has fetched again', () => {
     expect(areasOf.reading).toEqual(expect.arrayContaining(['now', 'rooms', 'carries', 'sensors']))
   })
 
-  it('fetches verdicts again when the figures of a wood change', () => {
-    expect(areasOf.wood).toEqual(expect.arrayContaining(['woods', 'now', 'carries', 'pieces']))
+  it('fetches verdicts, and what wood has felt of a room, again when the figures of a wood change', () => {
+    expect(areasOf.wood).toEqual(expect.arrayContaining(['woods', 'now', 'carries', 'pieces', 'rooms']))
   })
 
   it('knows its own kinds and nothing that an object happens to have', () => {

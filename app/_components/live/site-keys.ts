@@ -16,7 +16,7 @@ export const areasOf: Record<LiveKind, readonly Area[] | 'all'> = {
   room: ['now', 'rooms', 'sensors', 'pieces', 'carries', 'frame'],
   sensor: ['now', 'rooms', 'sensors', 'refused', 'frame'],
   // Other figures for a wood give other verdicts.
-  wood: ['woods', 'now', 'carries', 'pieces'],
+  wood: ['woods', 'now', 'carries', 'pieces', 'rooms'],
   notice: ['now', 'notices', 'frame'],
   site: 'all',
 }
