@@ -8,6 +8,7 @@ import { dayOfInstant } from '@/lib/climate/days'
 import { insertHistory } from './history'
 import { makeNotices } from './notices'
 import { makePieces } from './make-pieces'
+import { makeWeighings } from './make-weighings'
 import { makePlace, type MadePlace, type MadeSensor } from './make-place'
 import { historyDays, placeSeed, placeSensors, placeTimeZone, type PlaceSensor } from './place'
 import { settleJoints } from './settle-joints'
@@ -49,7 +50,8 @@ export async function makeDemo(
     await followPieces(trx, site, null, now)
     const unsettled = await settleJoints(trx, place, made, now)
     if (unsettled.length > 0) say(`In this season no joint tells the whole story of ${unsettled.join(', ')}.`)
-    // Settling changed the joints of some: their wood is followed as they are now.
+    await makeWeighings(trx, place, made, now)
+    // Settling changed the joints of some: and weights tell more of others: their wood is followed anew.
     await followPieces(trx, site, null, now)
     await makeNotices(trx, place, made, now)
     await makeArrivals(trx, place, now)

@@ -116,9 +116,9 @@ async function pieceRow(
     lidMm: piece.lidMm ?? null,
     bodyWallMm: piece.bodyWallMm ?? null,
     lidWallMm: null,
-    blankDiameterMm: null,
-    endsSealed: false,
-    roughedOn: piece.stage === 'roughed' ? dayOfInstant(bornAt, placeTimeZone) : null,
+    blankDiameterMm: piece.blankDiameterMm ?? null,
+    endsSealed: piece.endsSealed ?? false,
+    roughedOn: roughedOn(piece, bornAt, now),
     isReadyByWeight: false,
     fitGrade: piece.fitGrade ?? null,
     clearanceMm: piece.clearanceMm ?? null,
@@ -136,6 +136,12 @@ async function pieceRow(
     createdAt: bornAt,
     places: placesOf(place, piece, carries, bornAt, now),
   }
+}
+
+/** A pair was roughed out when it came into the record; a blank only where it says so. */
+function roughedOn({ stage, roughedDaysAgo }: PlacePiece, bornAt: Date, now: Date): string | null {
+  if (roughedDaysAgo !== undefined) return dayOfInstant(daysBefore(now, roughedDaysAgo), placeTimeZone)
+  return stage === 'roughed' ? dayOfInstant(bornAt, placeTimeZone) : null
 }
 
 /** What wood that rested in a room before the cut has come to: the mean of the room's last days. */

@@ -20,6 +20,10 @@ export interface PlacePiece {
   spigotMm?: number
   lidMm?: number
   bodyWallMm?: number
+  /** Of a blank: how thick it is, whether its ends are sealed, and when it was turned round, if it was. */
+  blankDiameterMm?: number
+  endsSealed?: boolean
+  roughedDaysAgo?: number
   fitGrade?: FitGrade
   allowanceMm?: number
   clearanceMm?: number
@@ -258,6 +262,14 @@ export const placePieces: readonly PlacePiece[] = [
   blank('121', 'fraxinus-excelsior'),
   blank('122', 'fraxinus-excelsior'),
   blank('125', 'taxus-baccata', { bornDaysAgo: 310, note: 'Split from one log, pith cut away.' }),
-  blank('127', 'quercus-robur-petraea', { bornDaysAgo: 330 }),
+  // A plank's end that lay in the house for years before it was turned round.
+  blank('127', 'quercus-robur-petraea', {
+    room: 'cupboard',
+    bornDaysAgo: 395,
+    blankDiameterMm: 96,
+    endsSealed: true,
+    roughedDaysAgo: 118,
+    note: 'Turned round and left in the cupboard.',
+  }),
   blank('130', 'laburnum-anagyroides', { bornDaysAgo: 140, isPrivate: true, owner: 'owner' }),
 ]
