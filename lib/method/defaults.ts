@@ -61,7 +61,7 @@ const gradeRows = (['suction', 'snap', 'snug', 'easy', 'loose', 'threaded'] as c
     const { clearanceMm, allowanceMm } = GRADE_FIGURES[grade]
     return {
       what: `Fit: ${grade}`,
-      value: `clearance ${mm(clearanceMm)}; may lose ${allowanceMm === undefined ? 'no figure given' : mm(allowanceMm)}`,
+      value: `clearance ${mm(clearanceMm)}; ${allowanceMm === undefined ? 'no figure for what it may lose' : `may lose ${mm(allowanceMm)}`}`,
       status: 'guess',
       why: `Judged by hand; spread ± ${percent(GRADE_SPREAD)} of the figure. To be learned from how lids turned out.`,
     }

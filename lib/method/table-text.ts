@@ -117,7 +117,7 @@ function saltTable(): ComparisonTable {
   return {
     id: 'salt-points',
     title: 'Saturated salts, Greenspan (1977), Table 2',
-    columns: [{ header: 'Salt' }, right('°C'), right('Printed, % RH'), right('Here'), { header: 'Print' }],
+    columns: [{ header: 'Salt' }, right('°C'), right('Printed, % RH'), right('Here'), { header: 'Status' }],
     rows: SALT_TABLE.flatMap(({ salt, humidityPct, status }) =>
       SALT_TABLE_TEMPERATURES_C.map((temperatureC, n) => {
         const here = saltFixedPoints(temperatureC).find((point) => point.salt === salt)
@@ -160,7 +160,7 @@ export function effectivenessTable(): ComparisonTable {
       { header: 'Finish' },
       { header: 'Coats' },
       ...EFFECTIVENESS_DAYS.map((days) => ({ header: `After ${formatCount(days, 'day')}` })),
-      { header: 'Print' },
+      { header: 'Status' },
     ],
     rows: EFFECTIVENESS_TABLE.map(({ finish, coats, afterDaysPct, status, film }) => [
       finish,

@@ -39,6 +39,7 @@ const pages: { as?: DemoRole; addresses: string[] }[] = [
       '/bench/shop',
       '/bench/salts',
       '/bench/salts?temperatureC=80',
+      '/method',
     ],
   },
   {

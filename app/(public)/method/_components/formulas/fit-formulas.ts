@@ -4,7 +4,7 @@ import { exactly, figure } from '@/lib/method/figure'
 import type { FormulaFacts } from '../formula-facts'
 
 const FROM_OVALS = 'Derived from Wood Handbook (FPL-GTR-190, 2010), Eq. 13-2, taken in both directions'
-const JOINT_RANGE = `joints up to ${exactly(JOINT_DIAMETER_MAX_MM)} mm, 30 points either way`
+const JOINT_RANGE = `Joints up to ${exactly(JOINT_DIAMETER_MAX_MM)} mm, 30 points either way`
 const UPPER_FIGURE =
   'Blank away from the pith, axis along the grain, rings nearly parallel across the joint; walls do not hold each other back. An upper figure'
 const MOVEMENT_DOUBT = 'That of the wood’s movement: a lid is not known to better than 0.05 mm'
