@@ -161,71 +161,74 @@ describe.each(seasons.flatMap((day) => hours.map((hour) => `${day}T${hour}:00Z`)
 )
 
 // The driest and the dampest of the year: what lies between is easier.
-describe.each(['2026-01-18T09:05:00Z', '2026-07-29T09:05:00Z'])('the resting pieces of a demo made at %s', (at) => {
-  const now = new Date(at)
-  let database: TestDatabase
-  let maker: SiteMember
-  const rests = new Map<string, RestView>()
+describe.each(['2026-01-18T09:05:00Z', '2026-07-29T09:05:00Z'])(
+  'the resting pieces of a demo made at %s',
+  (at) => {
+    const now = new Date(at)
+    let database: TestDatabase
+    let maker: SiteMember
+    const rests = new Map<string, RestView>()
 
-  beforeAll(async () => {
-    database = await createTestDatabase()
-    const { db } = database
-    // Long enough for the middle of a year to mean something, and for a series of weights.
-    const place = await makeDemo(db, {
-      now,
-      ...long,
-      say: () => undefined,
-      keepRoster: async () => undefined,
+    beforeAll(async () => {
+      database = await createTestDatabase()
+      const { db } = database
+      // Long enough for the middle of a year to mean something, and for a series of weights.
+      const place = await makeDemo(db, {
+        now,
+        ...long,
+        say: () => undefined,
+        keepRoster: async () => undefined,
+      })
+      const user = await db
+        .selectFrom('user')
+        .where('email', '=', 'maker@example.org')
+        .select('id')
+        .executeTakeFirstOrThrow()
+      const member = await findSiteMember(db, place.siteCode, user.id)
+      if (member === undefined) throw new Error('no maker')
+      maker = member
+      const pieces = await db
+        .selectFrom('piece')
+        .where('is_private', '=', false)
+        .select(['code', 'number'])
+        .execute()
+      for (const { code, number } of pieces) {
+        const page = await getWeighings(db, maker, code, weighingsQuerySchema.parse({}), now)
+        if (page.ok && page.value.rest !== null) rests.set(number, page.value.rest)
+      }
     })
-    const user = await db
-      .selectFrom('user')
-      .where('email', '=', 'maker@example.org')
-      .select('id')
-      .executeTakeFirstOrThrow()
-    const member = await findSiteMember(db, place.siteCode, user.id)
-    if (member === undefined) throw new Error('no maker')
-    maker = member
-    const pieces = await db
-      .selectFrom('piece')
-      .where('is_private', '=', false)
-      .select(['code', 'number'])
-      .execute()
-    for (const { code, number } of pieces) {
-      const page = await getWeighings(db, maker, code, weighingsQuerySchema.parse({}), now)
-      if (page.ok && page.value.rest !== null) rests.set(number, page.value.rest)
+    afterAll(() => database.drop())
+
+    const restOf = (number: string): RestView => {
+      const rest = rests.get(number)
+      if (rest === undefined) throw new Error(`nothing of ${number}`)
+      return rest
     }
-  })
-  afterAll(() => database.drop())
+    const missing = (number: string) => restOf(number).missing.map(({ code }) => code)
 
-  const restOf = (number: string): RestView => {
-    const rest = rests.get(number)
-    if (rest === undefined) throw new Error(`nothing of ${number}`)
-    return rest
-  }
-  const missing = (number: string) => restOf(number).missing.map(({ code }) => code)
+    test('hold a blank that is ready by the rule', () => {
+      expect(missing('127')).toEqual([])
+      expect(restOf('127').state).toBe('ready')
+    })
 
-  test('hold a blank that is ready by the rule', () => {
-    expect(missing('127')).toEqual([])
-    expect(restOf('127').state).toBe('ready')
-  })
+    test('hold one that looks ready, for it keeps its weight, and is not', () => {
+      expect(missing('94')).toEqual(['mc-off'])
+      expect(restOf('94').met.join(' ')).toMatch(/weighed the same for eight weeks/)
+    })
 
-  test('hold one that looks ready, for it keeps its weight, and is not', () => {
-    expect(missing('94')).toEqual(['mc-off'])
-    expect(restOf('94').met.join(' ')).toMatch(/weighed the same for eight weeks/)
-  })
+    test('hold one that is on its way, with a range of days', () => {
+      expect(restOf('103').state).toBe('not-ready')
+      expect(restOf('103').forecast?.direction).toBe('drying')
+      expect(Date.parse(restOf('103').readyToAt ?? '')).toBeGreaterThan(now.getTime())
+    })
 
-  test('hold one that is on its way, with a range of days', () => {
-    expect(restOf('103').state).toBe('not-ready')
-    expect(restOf('103').forecast?.direction).toBe('drying')
-    expect(Date.parse(restOf('103').readyToAt ?? '')).toBeGreaterThan(now.getTime())
-  })
-
-  test('hold one whose series was closed by a cut, and one with too few weights', () => {
-    expect(restOf('102').series).toMatchObject({ openedBy: { kind: 'cut' }, weights: 2, earlierWeights: 5 })
-    expect(missing('110')).toContain('too-few-weights')
-    expect(restOf('110').series).toEqual({ openedBy: null, weights: 2, earlierWeights: 0 })
-  })
-})
+    test('hold one whose series was closed by a cut, and one with too few weights', () => {
+      expect(restOf('102').series).toMatchObject({ openedBy: { kind: 'cut' }, weights: 2, earlierWeights: 5 })
+      expect(missing('110')).toContain('too-few-weights')
+      expect(restOf('110').series).toEqual({ openedBy: null, weights: 2, earlierWeights: 0 })
+    })
+  },
+)
 
 describe('looking after the demo', () => {
   const now = new Date('2026-03-05T13:10:00Z')
