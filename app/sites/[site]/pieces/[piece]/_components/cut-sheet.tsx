@@ -16,7 +16,12 @@ import type { CutQuestion, PieceFit } from '@/lib/pieces/piece-fit'
 import type { Reader } from '@/lib/sites/reader'
 import { LengthInput, lengthError } from '../../_components/length-input'
 
-type CutSheetProps = { reader: Reader; piece: PieceDetail; initial: PieceFit; children?: ReactNode }
+type CutSheetProps = {
+  reader: Reader
+  piece: PieceDetail
+  initial: PieceFit
+  children?: (diameterMm: number | null) => ReactNode
+}
 
 const grades: Readonly<Record<FitGrade, string>> = {
   suction: 'a suction lid',
@@ -81,7 +86,7 @@ export function CutSheet({ reader, piece, initial, children }: CutSheetProps) {
       <div className="mt-4">
         <Answer cut={fit.cut} piece={piece} reader={reader} />
       </div>
-      {children ? <div className="mt-6 border-t border-line pt-5">{children}</div> : null}
+      {children ? <div className="mt-6 border-t border-line pt-5">{children(diameterMm)}</div> : null}
     </Sheet>
   )
 }

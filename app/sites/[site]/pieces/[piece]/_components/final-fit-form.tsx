@@ -16,16 +16,19 @@ type FinalFitFormProps = {
   reader: Reader
   piece: PieceDetail
   kind: 'final-fit' | 're-true'
+  /** Of the joint, where the page has asked for it already; else this form asks. */
+  diameterMm?: number | null
   onDone?: () => void
 }
 
 const grades = fitGradeSchema.options.map((value) => ({ value, label: fitGradeWords[value].label }))
 
 /** The joint has just been cut: how the lid fits. Room, hour and moisture are kept with it by the server. */
-export function FinalFitForm({ reader, piece, kind, onDone }: FinalFitFormProps) {
+export function FinalFitForm({ reader, piece, kind, diameterMm: toldMm, onDone }: FinalFitFormProps) {
   const [grade, setGrade] = useState<FitGrade>()
   const [clearanceMm, setClearance] = useState<number | null>(null)
-  const [diameterMm, setDiameter] = useState(piece.jointDiameterMm)
+  const [typedMm, setDiameter] = useState(piece.jointDiameterMm)
+  const diameterMm = toldMm === undefined ? typedMm : toldMm
   const [when, setWhen] = useState('')
   const [refusal, setRefusal] = useState('')
   const { enter } = usePieceRecord(reader.site, piece.id)
@@ -34,7 +37,8 @@ export function FinalFitForm({ reader, piece, kind, onDone }: FinalFitFormProps)
     const at = when === '' ? undefined : instantOfLocalField(when, reader.timeZone)
     if (grade === undefined && clearanceMm === null)
       return setRefusal('Say how the lid fits by hand, or what clearance you measured.')
-    if (diameterMm === null || Number.isNaN(diameterMm) || Number.isNaN(clearanceMm))
+    if (diameterMm === null) return setRefusal('Say how wide the joint is.')
+    if (Number.isNaN(diameterMm) || Number.isNaN(clearanceMm))
       return setRefusal('Lengths are numbers, such as 62 or 62.5.')
     setRefusal('')
     enter.act(
@@ -74,12 +78,14 @@ export function FinalFitForm({ reader, piece, kind, onDone }: FinalFitFormProps)
         >
           <LengthInput valueMm={null} onChange={setClearance} units={reader.units} />
         </Field>
-        <Field
-          label="Joint, outside of the spigot"
-          error={lengthError(diameterMm, problem?.errorOf('jointDiameterMm'))}
-        >
-          <LengthInput valueMm={piece.jointDiameterMm} onChange={setDiameter} units={reader.units} />
-        </Field>
+        {toldMm === undefined ? (
+          <Field
+            label="Joint, outside of the spigot"
+            error={lengthError(diameterMm, problem?.errorOf('jointDiameterMm'))}
+          >
+            <LengthInput valueMm={piece.jointDiameterMm} onChange={setDiameter} units={reader.units} />
+          </Field>
+        ) : null}
         <Field
           label="When, if not just now"
           hint="Before its record begins, its keep room’s month is taken, and the doubt is wide."

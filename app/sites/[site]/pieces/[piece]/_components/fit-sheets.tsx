@@ -29,12 +29,14 @@ export function FitSheets({ reader, piece, initial }: FitSheetsProps) {
     )
   return (
     <CutSheet reader={reader} piece={piece} initial={initial}>
-      {mayCut ? (
-        <>
-          <h3 className="mb-3 text-title font-semibold">When you have cut it</h3>
-          <FinalFitForm reader={reader} piece={piece} kind="final-fit" />
-        </>
-      ) : null}
+      {mayCut
+        ? (diameterMm) => (
+            <>
+              <h3 className="mb-3 text-title font-semibold">When you have cut it</h3>
+              <FinalFitForm reader={reader} piece={piece} kind="final-fit" diameterMm={diameterMm} />
+            </>
+          )
+        : undefined}
     </CutSheet>
   )
 }

@@ -63,11 +63,14 @@ describe('a choice', () => {
 describe('the lid as chosen', () => {
   it('is shown beside how it was cut, or, elsewhere, how it is now', () => {
     expect(seenLid(joined, { kind: 'now' })).toMatchObject({
-      where: 'Now',
+      words: 'Now: easy all the way round',
       other: { label: 'as it was cut' },
     })
     const shop = seenLid(joined, { ...overnight, stayMinutes: null })
-    expect(shop).toMatchObject({ where: 'In Shop, given time', other: { label: 'now' } })
+    expect(shop).toMatchObject({
+      words: 'In Shop, given time: easy, may bind, easy, may bind',
+      other: { label: 'now' },
+    })
     expect(shop?.joint.spigot.mcChangePct).toBeCloseTo(5.1, 6)
   })
 

@@ -1,5 +1,7 @@
 import { jointAt, type LidPlace } from '@/lib/fit/lid-place'
 import { clearanceCurve, type CurvePoint, type DoubtfulJoint } from '@/lib/fit/clearance-curve'
+import { feelOfCut, feelWords } from '@/lib/fit/feel'
+import { clearanceExactMm } from '@/lib/fit/lid-fit'
 import { formatEmc } from '@/lib/format/figures'
 import { formatDuration } from '@/lib/format/times'
 import type { Cover } from '@/lib/pieces/piece'
@@ -71,8 +73,8 @@ export function choiceQuery(choice: LidChoice): string {
 export type SeenLid = {
   readonly joint: DoubtfulJoint
   readonly place: LidPlace
-  /** "In Shop after 2 h, open in work" */
-  readonly where: string
+  /** "In Shop after 2 h, open in work: easy, tight, easy, tight" */
+  readonly words: string
   readonly other: { readonly label: string; readonly curve: readonly CurvePoint[] }
 }
 
@@ -82,11 +84,12 @@ export function seenLid(fit: Joined, choice: LidChoice): SeenLid | undefined {
   const place = placeOf(fit, choice)
   if (place === undefined) return undefined
   const isNow = choice.kind === 'now'
+  const joint = jointAt(lid.joint, place)
   const beside = isNow ? { ...lid.joint.cut, doubtPct: 0 } : lid.now
   return {
-    joint: jointAt(lid.joint, place),
+    joint,
     place,
-    where: whereWords(fit, choice),
+    words: `${whereWords(fit, choice)}: ${feltWords(joint)}`,
     other: { label: isNow ? 'as it was cut' : 'now', curve: clearanceCurve(jointAt(lid.joint, beside)) },
   }
 }
@@ -106,6 +109,14 @@ function whereWords(fit: Joined, choice: LidChoice): string {
   return choice.stayMinutes === null
     ? `In ${name}, given time`
     : `In ${name} after ${formatDuration(choice.stayMinutes)}, ${coverWords[choice.cover]}`
+}
+
+/** As the trade tells it: with the grain lined up and at each quarter turn on. */
+function feltWords(joint: DoubtfulJoint): string {
+  const felt = (angleDeg: number) =>
+    feelWords[feelOfCut(clearanceExactMm(joint, angleDeg), joint.clearanceMm)]
+  const [one, other] = [felt(0), felt(90)]
+  return one === other ? `${one} all the way round` : [one, other, one, other].join(', ')
 }
 
 /** "Its wood at about 9.4 % MC, its lid at 10.2 % MC; it was cut at 8.9 % MC." */

@@ -7,7 +7,6 @@ import { Caution } from '@/app/_components/ui/caution'
 import { Sheet } from '@/app/_components/ui/sheet'
 import { TextLink } from '@/app/_components/ui/text-link'
 import { carryCautions } from '@/lib/carry/cautions'
-import { lidShape } from '@/lib/fit/lid-view'
 import { formatMoment } from '@/lib/format/times'
 import type { PieceFit } from '@/lib/pieces/piece-fit'
 import { may } from '@/lib/sites/permissions'
@@ -32,10 +31,6 @@ export function LidSheet({ reader, pieceId, initial }: LidSheetProps) {
     keepLast: true,
   })
   const seen = useMemo(() => (isJoined(fit) ? seenLid(fit, choice) : undefined), [fit, choice])
-  const words = useMemo(
-    () => (seen === undefined ? '' : lidShape(seen.joint, reader.units).quarterTurnWords),
-    [seen, reader.units],
-  )
   if (fit.lid.kind === 'words') {
     if (fit.lid.reason === 'not-a-box') return null
     return (
@@ -66,9 +61,7 @@ export function LidSheet({ reader, pieceId, initial }: LidSheetProps) {
             <p className="text-ink-soft">Being worked out.</p>
           ) : (
             <>
-              <p className="text-verdict font-semibold">
-                {seen.where}: {words}.
-              </p>
+              <p className="text-verdict font-semibold">{seen.words}.</p>
               <p className="mt-1 max-w-words text-ink-soft">{woodWords(fit, seen.place)}</p>
             </>
           )}
