@@ -100,13 +100,15 @@ function roomsOfRule(rooms: readonly SeenRoom[]): RuleRoom[] {
   }))
 }
 
-/** Boxes only: a blank's wall isn't known, and its wood lags too far behind for the ring's reckoning. */
+/** Of what a blank was before its record nothing is known (it may have been green): told once that counts for less. */
+const unknownShareMost = 0.25
+
+/** Pieces whose wood can be placed: plain boxes, and blanks that have been followed for long enough. */
 function shelfPiece(piece: PieceRecord, material: CarryMaterial): ShelfPiece | undefined {
   const own = material.pieces.get(piece.id)
-  if (own === undefined || piece.isHidden || piece.stage !== 'box' || piece.woodKind !== 'plain')
-    return undefined
+  if (own === undefined || piece.isHidden || piece.woodKind !== 'plain') return undefined
   const wood = woodAt(material, own, material.now.getTime())
-  if (wood === null) return undefined
+  if (wood === null || (piece.stage !== 'box' && wood.unknownShare > unknownShareMost)) return undefined
   return {
     number: piece.number,
     title: pieceTitle(piece),

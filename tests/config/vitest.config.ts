@@ -31,6 +31,8 @@ export default defineConfig({
           ...shared,
           name: 'unit',
           include: ['{lib,app,db,workers,fake-sensors}/**/*.test.{ts,tsx}', 'tests/support/**/*.test.ts'],
+          // Properties draw hundreds of cases; a test that hangs is told all the same.
+          testTimeout: 60_000,
           maxWorkers: 2,
         },
       },
