@@ -52,7 +52,7 @@ export default function MethodPage() {
                 {examples
                   .filter((example) => example.id === section.id)
                   .map((example) => (
-                    <Worked key={example.id} example={example} />
+                    <Worked key={example.id} example={example} of={section.title} />
                   ))}
               </div>
             </Sheet>
