@@ -15,6 +15,7 @@ type FitCheckRuleProps = {
   check: FitCheck & { kind: 'verdict' }
   /** What the piece is called beside its dot: "230 now", "the piece now". */
   pieceName?: string
+  title?: string
 }
 
 const HEIGHT = 196
@@ -23,7 +24,12 @@ const STRETCH_Y = 124
 const EDGE = 14
 
 /** A short rule: the home's year above, what to do at each moisture content below, the piece a dot with its doubt. */
-export function FitCheckRule({ input, check, pieceName = 'The piece now' }: FitCheckRuleProps) {
+export function FitCheckRule({
+  input,
+  check,
+  pieceName = 'The piece now',
+  title = 'May I cut the fit?',
+}: FitCheckRuleProps) {
   const [ref, width] = useWidth<HTMLDivElement>(720)
   const span = fitCheckSpan(input, check)
   const x = (mcPct: number) =>
@@ -39,7 +45,7 @@ export function FitCheckRule({ input, check, pieceName = 'The piece now' }: FitC
 
   return (
     <FigureFrame
-      title="May I cut the fit?"
+      title={title}
       aside={target.basis === 'home' ? 'Judged against the home it is for' : 'Judged against its keep room'}
       tableName="Rule as a table"
       table={

@@ -24,14 +24,24 @@ type TurnedAskProps = {
   question: string
   /** What was answered already. */
   told?: Outcome | undefined
+  /** Outcomes that were taken back elsewhere on the page. */
+  undoneIds?: readonly string[]
   /** For a carry: not now. */
   onSkip?: () => void
 }
 
 /** "How did the lid turn?": one press answers it. What is answered teaches the site's figures. */
-export function TurnedAsk({ site, pieceId, carryId, question, told, onSkip }: TurnedAskProps) {
+export function TurnedAsk({
+  site,
+  pieceId,
+  carryId,
+  question,
+  told,
+  undoneIds = [],
+  onSkip,
+}: TurnedAskProps) {
   const [justTold, setJustTold] = useState<Outcome>()
-  const shown = told ?? justTold
+  const shown = told ?? (justTold && !undoneIds.includes(justTold.id) ? justTold : undefined)
   const path = `/sites/${site}/pieces/${pieceId}/outcomes`
   const invalidates = [siteKey(site, 'pieces'), siteKey(site, 'carries'), siteKey(site, 'now')]
   const tell = useAction({

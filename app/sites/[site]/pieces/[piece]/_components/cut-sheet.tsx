@@ -109,7 +109,12 @@ function Answer({ cut, piece, reader }: AnswerProps) {
       </div>
       {check.kind === 'verdict' ? (
         <>
-          <FitCheckRule input={input} check={check} pieceName={`${piece.number} now`} />
+          <FitCheckRule
+            input={input}
+            check={check}
+            pieceName={`${piece.number} now`}
+            title="Its wood beside the year"
+          />
           <FitCheckAnswers answers={fitAnswers(input, check, reader.units)} />
         </>
       ) : null}

@@ -49,7 +49,12 @@ export function RecordSheet({ reader, piece, initial }: RecordSheetProps) {
       {isAround ? (
         <div className="mb-5 grid gap-x-10 gap-y-5 lg:grid-cols-2">
           {piece.stage === 'box' ? (
-            <TurnedAsk site={reader.site} pieceId={piece.id} question="You tried the lid? How did it turn?" />
+            <TurnedAsk
+              site={reader.site}
+              pieceId={piece.id}
+              question="You tried the lid? How did it turn?"
+              undoneIds={outcomes.items.flatMap(({ id, isUndone }) => (isUndone ? [id] : []))}
+            />
           ) : null}
           <NoteForm reader={reader} pieceId={piece.id} />
         </div>
