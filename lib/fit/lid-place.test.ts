@@ -87,13 +87,18 @@ describe('the year of a lid', () => {
 
   it('names the snuggest month, and what 1 in 10 like it would do', () => {
     const words = plainText(lidYearSentence('Landing cupboard', year([9, 10, 11, 10.5]), false))
-    expect(words).toMatch(/^Left in Landing cupboard, the lid is snuggest in July, with about 0\.05\smm to spare/)
+    expect(words).toMatch(
+      /^Left in Landing cupboard, the lid is snuggest in July, with about 0\.05\smm to spare/,
+    )
     expect(words).toMatch(/1 in 10 like it would bind for a while\. The room’s months run from 9\.0 to 11\.0/)
   })
 
   it('names the months in which it may bind', () => {
-    const words = plainText(lidYearSentence('Shop', year([9, 12, 13, 9]), false))
-    expect(words).toMatch(/it may bind in June and July at a quarter turn/)
+    const words = (emcs: readonly number[]) => plainText(lidYearSentence('Shop', year(emcs), false))
+    expect(words([9, 12, 13, 9])).toMatch(/it may bind in June and July at a quarter turn/)
+    expect(words([9, 12, 13, 12, 9])).toMatch(/it may bind from June to August at a quarter turn/)
+    expect(words([9, 12, 9, 12, 13])).toMatch(/it may bind in June, August and September at/)
+    expect(words([12, 13, 12])).toMatch(/it may bind in every month at/)
   })
 
   it('does not call a snap lid binding for being tight', () => {

@@ -12,10 +12,17 @@ const MONTHS = [
 /** "August", of the first of it. */
 export const monthName = (monthOn: string): string => MONTHS[Number(monthOn.slice(5, 7)) - 1] ?? monthOn
 
-const monthsWords = (months: readonly MonthClearance[]): string => {
+/** "in June and July", "from May to October", "in every month" that there is. */
+function monthsWords(months: readonly MonthClearance[], year: readonly MonthClearance[]): string {
   const names = months.map(({ monthOn }) => monthName(monthOn))
-  const last = names.at(-1) ?? ''
-  return names.length < 2 ? last : `${names.slice(0, -1).join(', ')} and ${last}`
+  const [first, last] = [names[0] ?? '', names.at(-1) ?? '']
+  if (names.length === 1) return `in ${last}`
+  if (months.length === year.length) return 'in every month'
+  const from = year.findIndex(({ monthOn }) => monthOn === months[0]?.monthOn)
+  const isOneRun = months.every(({ monthOn }, n) => year[from + n]?.monthOn === monthOn)
+  return isOneRun && names.length > 2
+    ? `from ${first} to ${last}`
+    : `in ${names.slice(0, -1).join(', ')} and ${last}`
 }
 
 /**
@@ -43,7 +50,7 @@ export function lidYearSentence(
   const binding = year.filter(({ middleMm }) => middleMm < 0)
   if (binding.length > 0)
     return [
-      ...say`Left in ${roomName}, it ${strong(`may bind in ${monthsWords(binding)}`)} at a quarter turn.`,
+      ...say`Left in ${roomName}, it ${strong(`may bind ${monthsWords(binding, year)}`)} at a quarter turn.`,
       ...span,
     ]
   const doubtful = first.lowMm < 0 ? '; 1 in 10 like it would bind for a while' : ''
