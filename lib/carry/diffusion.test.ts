@@ -3,7 +3,7 @@ import { describe, expect, it } from 'vitest'
 import { referenceRows } from '@/tests/support/reference'
 import { cylinderRoots } from './bessel'
 import { cylinderResponse } from './cylinder-response'
-import { diffusionMcPct, LONGITUDINAL_RATIO, transverseDiffusionM2PerS } from './diffusion'
+import { LONGITUDINAL_RATIO, transverseDiffusionM2PerS } from './diffusion'
 import { plugLidFractionChanged, ringFractionChanged, type RingSize } from './joint'
 import { slabResponse, slabRoots } from './slab-response'
 
@@ -40,11 +40,6 @@ describe('diffusion coefficient, against computed values (0.1 %)', () => {
     )
     expect(transverseDiffusionM2PerS(20, 30, 640)).toBe(transverseDiffusionM2PerS(20, 25, 640))
     expect(transverseDiffusionM2PerS(20, 25, 1300)).toBe(transverseDiffusionM2PerS(20, 25, 1400))
-  })
-
-  it('stands at six tenths of the way', () => {
-    expect(diffusionMcPct(8, 13)).toBeCloseTo(11, 10)
-    expect(diffusionMcPct(13, 8)).toBeCloseTo(10, 10)
   })
 
   it('names the input that is wrong', () => {

@@ -64,15 +64,3 @@ export function diffusionUncheckedM2PerS(temperatureC: number, mcPct: number, gr
   const filled = gravity * (CELL_GEOMETRY_AT_DRY + CELL_GEOMETRY_PER_PCT * mc)
   return filled >= 1 ? boundWater : boundWater / (filled * (1 - Math.sqrt(1 - filled)))
 }
-
-/**
- * The moisture content at which a constant diffusion coefficient stands best for a change between two.
- * @param fromMcPct moisture content before, % MC
- * @param toMcPct moisture content it is on its way to, % MC
- * @returns % MC
- *
- * Source: derived; within 0.04 in the fraction changed against a coefficient that varies (8 to 16, 8 to 18, 16 to 8 %).
- */
-export function diffusionMcPct(fromMcPct: number, toMcPct: number): number {
-  return fromMcPct + 0.6 * (toMcPct - fromMcPct)
-}

@@ -15,7 +15,8 @@ export const FILM_M_PER_S: Readonly<Record<Film, number>> = {
   epoxy: 8e-10,
 }
 
-/** Half of the resistance counts: a constant film promises 2 to 29 points too much after a week. Status: derived. */
+/** Half of the resistance counts: a constant film promises up to 23 points too much after a week and 38 after two,
+ * of the table that it comes from. Status: derived. */
 export const COUNTED_SHARE = 0.5
 
 const WORDS: readonly (readonly [RegExp, Film])[] = [
