@@ -34,12 +34,14 @@ export function restWords(
   return first === undefined ? 'Not ready yet.' : `Not ready: ${lowered(first.words)}`
 }
 
-/** "between 10 May and 14 June": a range, and never a day. */
-export const rangeWords = (
+/** "between 10 May and 14 June": a range, and never a day. The year stands once, where it is another one. */
+export function rangeWords(
   { fromAt, toAt }: { readonly fromAt: number; readonly toAt: number },
   { now, timeZone }: Clock,
-): string =>
-  `between ${formatDate(new Date(fromAt), timeZone, new Date(now))} and ${formatDate(new Date(toAt), timeZone, new Date(now))}`
+): string {
+  const [from, to] = [new Date(fromAt), new Date(toAt)]
+  return `between ${formatDate(from, timeZone, to)} and ${formatDate(to, timeZone, new Date(now))}`
+}
 
 /** When to weigh it next. */
 export function weighNextWords({ dueAt, isDue }: Due, isWeighed: boolean, { now, timeZone }: Clock): string {

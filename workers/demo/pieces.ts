@@ -234,18 +234,18 @@ export const placePieces: readonly PlacePiece[] = [
   }),
   // Has kept its weight for months, and is still on its way: so dense a wood loses less than a scale can show.
   roughed('94', 'dalbergia-melanoxylon', {
-    bodyWallMm: 18,
+    bodyWallMm: 44,
     bornDaysAgo: 300,
     before: { room: 'store', untilDaysAgo: 232 },
     note: 'Same weight three times running.',
   }),
   roughed('102', 'fagus-sylvatica', {
-    bodyWallMm: 12,
+    bodyWallMm: 24,
     bornDaysAgo: 210,
     before: { room: 'store', untilDaysAgo: 96 },
   }),
   roughed('103', 'fraxinus-excelsior', {
-    bodyWallMm: 14,
+    bodyWallMm: 26,
     bornDaysAgo: 190,
     before: { room: 'store', untilDaysAgo: 84 },
   }),
@@ -255,7 +255,7 @@ export const placePieces: readonly PlacePiece[] = [
     before: { room: 'shop', untilDaysAgo: 61 },
   }),
   roughed('110', 'acer-pseudoplatanus', {
-    bodyWallMm: 12,
+    bodyWallMm: 22,
     bornDaysAgo: 90,
     before: { room: 'shop', untilDaysAgo: 20 },
   }),

@@ -6,6 +6,7 @@ import { Hatch } from '@/app/_components/charts/hatch'
 import { useWidth } from '@/app/_components/charts/use-width'
 import { formatMass } from '@/lib/format/figures'
 import { formatDate } from '@/lib/format/times'
+import { rangeWords } from '@/lib/seasoning/rest-words'
 import type { RestView } from '@/lib/seasoning/rest-view'
 import type { Reader } from '@/lib/sites/reader'
 import { CurveLegend } from './curve-legend'
@@ -64,12 +65,7 @@ function Drawing({ figure, width, reader, now }: DrawingProps) {
     `M${line.map(({ at, value }) => `${String(x(at))} ${String(y(value))}`).join('L')}`
   const { span, ribbon, doubt } = figure
   const spanLines =
-    span === null
-      ? []
-      : [
-          'may be ready between',
-          `${formatDate(new Date(span.fromAt), reader.timeZone, now)} and ${formatDate(new Date(span.toAt), reader.timeZone, now)}`,
-        ]
+    span === null ? [] : ['may be ready', rangeWords(span, { now: now.getTime(), timeZone: reader.timeZone })]
   return (
     <g aria-hidden="true">
       <defs>

@@ -4,7 +4,14 @@ import { formatEmc, formatMass, formatPoints } from '@/lib/format/figures'
 import type { RestView } from '@/lib/seasoning/rest-view'
 import type { UnitSystem } from '@/lib/sites/site'
 
-const waiting = new Set(['rest-after-roughing', 'rest-after-near-final', 'mc-off', 'weights-differ'])
+/** What time brings has the hourglass, what a scale tells the balance; the rest has to be found out. */
+const marks: Readonly<Record<string, 'keep-short' | 'weigh'>> = {
+  'rest-after-roughing': 'keep-short',
+  'rest-after-near-final': 'keep-short',
+  'mc-off': 'keep-short',
+  'weights-differ': 'keep-short',
+  'too-few-weights': 'weigh',
+}
 
 /** What the ready rule still asks for, then what it has; and what the moisture is known from. */
 export function StillMissing({ rest, units }: { rest: RestView; units: UnitSystem }) {
@@ -12,7 +19,7 @@ export function StillMissing({ rest, units }: { rest: RestView; units: UnitSyste
     <div className="flex flex-col gap-3">
       <ul className="flex flex-col gap-3">
         {rest.missing.map(({ code, words }) => (
-          <Line key={code} mark={waiting.has(code) ? 'keep-short' : 'weigh'}>
+          <Line key={code} mark={marks[code] ?? 'unknown'}>
             {words}
           </Line>
         ))}
@@ -22,7 +29,9 @@ export function StillMissing({ rest, units }: { rest: RestView; units: UnitSyste
           </Line>
         ))}
       </ul>
-      {rest.noForecast === null || rest.state !== 'not-ready' ? null : (
+      {rest.noForecast === null ||
+      rest.noForecast.code === 'too-few-weights' ||
+      rest.state !== 'not-ready' ? null : (
         <p className="max-w-words text-ink-soft">{rest.noForecast.words}</p>
       )}
       <p className="max-w-words text-label text-ink-soft">{moistureWords(rest, units)}</p>
@@ -35,7 +44,13 @@ export function StillMissing({ rest, units }: { rest: RestView; units: UnitSyste
   )
 }
 
-function Line({ mark, children }: { mark: 'keep-short' | 'weigh' | 'fine'; children: ReactNode }) {
+function Line({
+  mark,
+  children,
+}: {
+  mark: 'keep-short' | 'weigh' | 'unknown' | 'fine'
+  children: ReactNode
+}) {
   return (
     <li className="flex gap-3">
       <Mark kind={mark} size={20} className="mt-0.5" />

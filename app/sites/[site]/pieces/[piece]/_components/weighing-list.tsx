@@ -1,11 +1,10 @@
 'use client'
 
-import type { ReactNode } from 'react'
+import { type ReactNode, useState } from 'react'
 
 import { apiFetch } from '@/app/_components/api'
 import { siteKey } from '@/app/_components/live/site-keys'
 import { Button } from '@/app/_components/ui/button'
-import { type Column, DataTable } from '@/app/_components/ui/data-table'
 import { useAction } from '@/app/_components/use-action'
 import type { WeighingsPage } from '@/lib/seasoning/rest-view'
 import type { Reader } from '@/lib/sites/reader'
@@ -18,67 +17,93 @@ type WeighingListProps = {
   now: Date
 }
 
+/** The rest stands behind a press. */
+const SHOWN_FIRST = 8
+
 /** What it weighed, the newest first. A slip is undone and stays to be seen; it can be brought back. */
 export function WeighingList({ reader, pieceId, page, now }: WeighingListProps) {
+  const [isAll, setIsAll] = useState(false)
   const rows = weighingRows(page.items, page.rest, reader, now)
   const words = page.rest === null ? null : seriesWords(page.rest, reader, now)
   if (rows.length === 0) return <p className="text-ink-soft">It has not been weighed yet.</p>
   return (
     <>
       {words === null ? null : <p className="mb-3 max-w-words">{words}</p>}
-      <DataTable
-        caption="Weighings"
-        columns={columnsOf(rows, (row) => (
-          <UndoButton reader={reader} pieceId={pieceId} row={row} />
-        ))}
-        rows={rows}
-        rowKey={(row) => row.id}
+      <WeighingTable
+        rows={isAll ? rows : rows.slice(0, SHOWN_FIRST)}
+        action={(row) => <UndoButton reader={reader} pieceId={pieceId} row={row} />}
       />
-      {page.nextCursor === null ? null : (
+      {isAll || rows.length <= SHOWN_FIRST ? null : (
+        <Button
+          variant="link"
+          onClick={() => {
+            setIsAll(true)
+          }}
+        >
+          All {rows.length} weighings
+        </Button>
+      )}
+      {page.nextCursor === null || !isAll ? null : (
         <p className="mt-3 text-label text-ink-soft">The newest {page.items.length} are shown.</p>
       )}
     </>
   )
 }
 
-const struck = (row: WeighingRow, words: string) => (row.isUndone ? <s>{words}</s> : words)
-
-function columnsOf(
-  rows: readonly WeighingRow[],
-  action: (row: WeighingRow) => ReactNode,
-): Column<WeighingRow>[] {
-  const columns: Column<WeighingRow>[] = [
-    {
-      id: 'when',
-      header: 'When',
-      cell: (row) => (
-        <>
-          {row.when}
-          {row.isEarlier ? <span className="text-ink-soft"> (earlier series)</span> : null}
-          {row.note === '' ? null : <span className="block text-label text-ink-soft">{row.note}</span>}
-        </>
-      ),
-      phone: 'title',
-    },
-    { id: 'mass', header: 'Mass', cell: (row) => struck(row, row.mass), align: 'right', phone: 'line' },
-    {
-      id: 'change',
-      header: 'Change',
-      cell: (row) => <span className="text-ink-soft">{row.isUndone ? 'undone' : row.change}</span>,
-      align: 'right',
-      phone: 'bare',
-    },
-  ]
-  if (rows.some((row) => row.mc !== ''))
-    columns.push({
-      id: 'mc',
-      header: '% MC, about',
-      cell: (row) => row.mc,
-      align: 'right',
-      phone: 'line',
-    })
-  columns.push({ id: 'undo', header: 'Undo', cell: action, align: 'right', phone: 'bare' })
-  return columns
+/** Figures under one another on a phone too; there the change is left out. */
+function WeighingTable({
+  rows,
+  action,
+}: {
+  rows: readonly WeighingRow[]
+  action: (row: WeighingRow) => ReactNode
+}) {
+  const hasMc = rows.some((row) => row.mc !== '')
+  const head = 'border-b border-edge py-2 pr-3 text-label font-semibold text-ink-soft'
+  const cell = 'border-b border-line py-1 pr-3 align-middle'
+  return (
+    <table className="w-full border-collapse text-left">
+      <caption className="sr-only">Weighings</caption>
+      <thead>
+        <tr>
+          <th scope="col" className={head}>
+            When
+          </th>
+          <th scope="col" className={`${head} text-right`}>
+            Mass
+          </th>
+          <th scope="col" className={`${head} text-right max-sm:hidden`}>
+            Change
+          </th>
+          {hasMc ? (
+            <th scope="col" className={`${head} text-right`}>
+              % MC, about
+            </th>
+          ) : null}
+          <th scope="col" className={`${head} pr-0 text-right`}>
+            <span className="sr-only">Undo</span>
+          </th>
+        </tr>
+      </thead>
+      <tbody>
+        {rows.map((row) => (
+          <tr key={row.id}>
+            <th scope="row" className={`${cell} font-normal`}>
+              {row.when}
+              {row.isEarlier ? <span className="text-ink-soft"> (earlier series)</span> : null}
+              {row.note === '' ? null : <span className="block text-label text-ink-soft">{row.note}</span>}
+            </th>
+            <td className={`${cell} text-right`}>{row.isUndone ? <s>{row.mass}</s> : row.mass}</td>
+            <td className={`${cell} text-right text-ink-soft max-sm:hidden`}>
+              {row.isUndone ? 'undone' : row.change}
+            </td>
+            {hasMc ? <td className={`${cell} text-right`}>{row.mc}</td> : null}
+            <td className={`${cell} pr-0 text-right`}>{action(row)}</td>
+          </tr>
+        ))}
+      </tbody>
+    </table>
+  )
 }
 
 function UndoButton({ reader, pieceId, row }: { reader: Reader; pieceId: string; row: WeighingRow }) {
