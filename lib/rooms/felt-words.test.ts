@@ -69,6 +69,16 @@ describe('what wood has felt, in words', () => {
     ])
   })
 
+  it('says so where the wood is slower than what is looked at', () => {
+    const slow = felt({
+      recordFrom: '2024-12-01T00:00:00.000Z',
+      felt: [one(60, 14.7, { unknownShare: 0.66, memoryDays: 400 })],
+    })
+    expect(feltGapWords(slow, told).map(plain)).toEqual([
+      'About two thirds of what 60 mm has felt rests on air of more than 400 days ago, which is not looked at, or on hours without a reading: the doubt is wider for it.',
+    ])
+  })
+
   it('says since when nothing was heard, and that onlookers see whole days', () => {
     const silent = felt({ completeTo: '2026-03-05T09:40:00.000Z' })
     expect(feltGapWords(silent, told)[0]).toContain('Nothing was heard here since 09:40.')

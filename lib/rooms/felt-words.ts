@@ -3,7 +3,7 @@ import { say, strong, type TextPart } from '@/lib/format/sentence'
 import { formatDate, formatMoment } from '@/lib/format/times'
 import type { Role } from '@/lib/sites/permissions'
 import type { UnitSystem } from '@/lib/sites/site'
-import type { RoomFelt } from './felt'
+import { FELT_DAYS_MAX, type RoomFelt } from './felt'
 
 /** What wood has felt of a room, in words. */
 
@@ -73,15 +73,21 @@ export function feltGapWords(
   const shares = doubtful.map(
     (one) => `${shareWords(one.unknownShare)} of what ${formatLength(one.thicknessMm, units)} has felt`,
   )
-  const isShort = doubtful.some((one) => isBeforeRecord(felt, one.memoryDays))
-  const why =
-    isShort && felt.recordFrom !== null
-      ? `the time before the record began on ${formatDate(felt.recordFrom, timeZone, now)}, or on hours without a reading`
-      : 'hours without a reading'
+  const why = whyUnknown(felt, doubtful, timeZone, now)
   words.push(
     `${capital(listed(shares))} ${shares.length === 1 ? 'rests' : 'rest'} on ${why}: the doubt is wider for it.`,
   )
   return words
+}
+
+/** The record that is too short for the wood, else the wood that is too slow for what is looked at, else its gaps. */
+function whyUnknown(felt: RoomFelt, doubtful: RoomFelt['felt'], timeZone: string, now: Date): string {
+  const memoryDays = Math.max(...doubtful.map((one) => one.memoryDays))
+  if (felt.recordFrom !== null && isBeforeRecord(felt, memoryDays))
+    return `the time before the record began on ${formatDate(felt.recordFrom, timeZone, now)}, or on hours without a reading`
+  if (memoryDays >= FELT_DAYS_MAX)
+    return `air of more than ${String(FELT_DAYS_MAX)} days ago, which is not looked at, or on hours without a reading`
+  return 'hours without a reading'
 }
 
 /** Whether the wood remembers further back than the room's record goes, by more than a day. */
