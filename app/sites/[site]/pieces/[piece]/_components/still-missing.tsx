@@ -15,6 +15,7 @@ const marks: Readonly<Record<string, 'keep-short' | 'weigh'>> = {
 
 /** What the ready rule still asks for, then what it has; and what the moisture is known from. */
 export function StillMissing({ rest, units }: { rest: RestView; units: UnitSystem }) {
+  const noForecast = noForecastWords(rest)
   return (
     <div className="flex flex-col gap-3">
       <ul className="flex flex-col gap-3">
@@ -29,11 +30,7 @@ export function StillMissing({ rest, units }: { rest: RestView; units: UnitSyste
           </Line>
         ))}
       </ul>
-      {rest.noForecast === null ||
-      rest.noForecast.code === 'too-few-weights' ||
-      rest.state !== 'not-ready' ? null : (
-        <p className="max-w-words text-ink-soft">{rest.noForecast.words}</p>
-      )}
+      {noForecast === null ? null : <p className="max-w-words text-ink-soft">{noForecast}</p>}
       <p className="max-w-words text-label text-ink-soft">{moistureWords(rest, units)}</p>
       {rest.target !== null && rest.target.days < 350 ? (
         <p className="max-w-words text-label text-ink-soft">
@@ -42,6 +39,13 @@ export function StillMissing({ rest, units }: { rest: RestView; units: UnitSyste
       ) : null}
     </div>
   )
+}
+
+/** Why no curve leads on, where that is news: not of weights that hold, nor of too few, which is said already. */
+function noForecastWords({ state, missing, noForecast }: RestView): string | null {
+  if (noForecast === null || state !== 'not-ready' || noForecast.code === 'too-few-weights') return null
+  const isLevel = noForecast.code === 'no-change' || noForecast.code === 'not-one-way'
+  return isLevel && !missing.some(({ code }) => code === 'weights-differ') ? null : noForecast.words
 }
 
 function Line({
