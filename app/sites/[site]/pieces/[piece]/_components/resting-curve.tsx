@@ -64,8 +64,10 @@ function Drawing({ figure, width, reader, now }: DrawingProps) {
   const path = (line: readonly { at: number; value: number }[]) =>
     `M${line.map(({ at, value }) => `${String(x(at))} ${String(y(value))}`).join('L')}`
   const { span, ribbon, doubt } = figure
-  const spanLines =
-    span === null ? [] : ['may be ready', rangeWords(span, { now: now.getTime(), timeZone: reader.timeZone })]
+  // A phone has no room for the days; they stand in the sentence above.
+  const days =
+    span === null || isNarrow ? [] : [rangeWords(span, { now: now.getTime(), timeZone: reader.timeZone })]
+  const spanLines = ['may be ready', ...days]
   return (
     <g aria-hidden="true">
       <defs>
