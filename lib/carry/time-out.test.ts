@@ -118,7 +118,7 @@ describe('time out, properties', () => {
           0.99 * lidOn - 2 * secondInMinutes,
         )
       }),
-      { numRuns: 40 },
+      { numRuns: 25 },
     )
   })
 
@@ -129,7 +129,7 @@ describe('time out, properties', () => {
         fc.pre(Math.abs(whole - 1) > 1e-3)
         expect(timeOutOf(asked).binds).toBe(whole > 1)
       }),
-      { numRuns: 40 },
+      { numRuns: 25 },
     )
   })
 
