@@ -137,9 +137,9 @@ describe('time out, properties', () => {
     const damp = houseToShop('fagus-sylvatica', 60, 4, 0.15)
     const dry = { ...damp, fromMcPct: 13.6, toEmcPct: 8.5 }
     const drying = minutesOrThrow(dry)
-    // The same change in mm; only the diffusion is that of drier wood.
-    expect(drying).toBeGreaterThan(minutesOrThrow(damp))
-    expect(drying).toBeLessThan(1.3 * minutesOrThrow(damp))
+    // The same change in mm; only the diffusion differs, as the wood starts from damper.
+    expect(drying).toBeGreaterThan(0.8 * minutesOrThrow(damp))
+    expect(drying).toBeLessThan(1.25 * minutesOrThrow(damp))
   })
 
   it('names the input that is wrong', () => {

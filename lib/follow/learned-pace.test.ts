@@ -52,7 +52,7 @@ describe('what outcomes teach', () => {
         )
         expect(pace.factor).toBeGreaterThan(0.15)
         expect(pace.factor).toBeLessThan(7)
-        expect(pace.logSpread).toBeLessThanOrEqual(PACE_LOG_SPREAD + 0.02)
+        expect(pace.logSpread).toBeLessThan(PACE_LOG_SPREAD + 0.1) // what contradicts itself narrows nothing
       }),
     )
   })
