@@ -1,14 +1,16 @@
 /**
  * A falling curve as a sum of exponentials on a fixed ladder of rates, each twice the one before. Doubling makes the
- * decays of a step cost one exponential and nine squarings, and lets every cover of a piece share one state.
+ * decays of a step cost one exponential and eleven squarings, and lets every cover of a piece share one state.
  */
 
-export const RUNGS = 10
+export const RUNGS = 12
 export const RUNG_RATIO = 2
 
 const SAMPLES = 120
 /** The curve starts at 1 whatever else is off: the sum of the weights is held to it. */
-const WEIGHT_OF_START = 30
+const WEIGHT_OF_START = 100
+/** Below this part of a change a miss no longer counts for more. */
+const CHANGED_FROM = 0.05
 /** More rounds than rungs only where one leaves and comes back. */
 const ROUNDS = 30
 const HELPS_FROM = 1e-7
@@ -26,19 +28,9 @@ const TIMES: readonly number[] = (() => {
     ...Array.from({ length: SAMPLES }, (_, n) => Math.exp(first + ((last - first) * n) / (SAMPLES - 1))),
   ]
 })()
-const weightOf = (time: number): number => (time === 0 ? WEIGHT_OF_START ** 2 : 1)
 const DECAYS: readonly (readonly number[])[] = TIMES.map((time) =>
   Array.from({ length: RUNGS }, (_, rung) => Math.exp(-(RUNG_RATIO ** rung) * time)),
 )
-const GRAM = Float64Array.from({ length: RUNGS * RUNGS }, (_, cell) => {
-  const i = Math.floor(cell / RUNGS)
-  const j = cell % RUNGS
-  return TIMES.reduce(
-    (sum, time, n) => sum + weightOf(time) * (DECAYS[n]?.[i] ?? 0) * (DECAYS[n]?.[j] ?? 0),
-    0,
-  )
-})
-
 /**
  * Weights of the ladder's exponentials that come nearest to a falling curve.
  * @param left the curve, against diffusion time in m²; 1 at 0
@@ -50,12 +42,25 @@ const GRAM = Float64Array.from({ length: RUNGS * RUNGS }, (_, cell) => {
  */
 export function ladderWeights(left: Left, slowestPerM2: number): Float64Array {
   const aim = new Float64Array(RUNGS)
+  const gram = new Float64Array(RUNGS * RUNGS)
   TIMES.forEach((time, n) => {
-    const y = weightOf(time) * (time === 0 ? 1 : left(time / slowestPerM2))
-    for (let rung = 0; rung < RUNGS; rung += 1) aim[rung] = (aim[rung] ?? 0) + y * (DECAYS[n]?.[rung] ?? 0)
+    const y = time === 0 ? 1 : left(time / slowestPerM2)
+    const weight = weightOf(time, y)
+    for (let i = 0; i < RUNGS; i += 1) {
+      const decay = weight * (DECAYS[n]?.[i] ?? 0)
+      aim[i] = (aim[i] ?? 0) + decay * y
+      for (let j = 0; j < RUNGS; j += 1) {
+        const cell = i * RUNGS + j
+        gram[cell] = (gram[cell] ?? 0) + decay * (DECAYS[n]?.[j] ?? 0)
+      }
+    }
   })
-  return scaledToOne(nearest(GRAM, aim))
+  return scaledToOne(nearest(gram, aim))
 }
+
+/** A miss counts against how much has changed by then: early on, a small one moves a time by a lot. */
+const weightOf = (time: number, left: number): number =>
+  time === 0 ? WEIGHT_OF_START ** 2 : 1 / (1 - left + CHANGED_FROM) ** 2
 
 /**
  * Least squares without negative weights: rungs enter one by one where they help most, and leave when they turn negative.
@@ -125,7 +130,7 @@ function settled(
   }
 }
 
-/** Gauss with the largest pivot: at most ten unknowns. */
+/** Gauss with the largest pivot: at most a dozen unknowns. */
 function solve(matrix: number[][], right: number[]): number[] {
   const size = right.length
   const rows = matrix.map((row, n) => [...row, right[n] ?? 0])

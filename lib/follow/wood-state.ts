@@ -113,18 +113,25 @@ export function changeCover(filter: PieceFilter, state: WoodState, cover: PlaceC
   else state.enclosedPct ??= state.ringPct
 }
 
+/** Pieces are at rest nearly all of their hours: looking that up by its name is quicker than by any name. */
+const weightsUnder = ({ weights }: PartFilter, cover: PlaceCover): Float64Array =>
+  cover === 'closed' ? weights.closed : weights[cover]
+
 /** One step of a part's rungs; returns the new mean. `slowest` is what the slowest rung keeps of its distance. */
 function stepRungs(rungs: Float64Array, weights: Float64Array, emcPct: number, slowest: number): number {
   let decay = slowest
-  let mean = 0
-  for (let n = 0; n < RUNGS; n += 1) {
-    // The quick rungs are in step with the air at once; numbers too small for full precision would only cost time.
-    const rung = decay < FORGOTTEN ? emcPct : emcPct + ((rungs[n] ?? 0) - emcPct) * decay
-    rungs[n] = rung
-    mean += (weights[n] ?? 0) * rung
+  // The mean's distance from the air, so that rungs in step with it add nothing.
+  let distance = 0
+  let n = 0
+  for (; n < RUNGS && decay >= FORGOTTEN; n += 1) {
+    const apart = ((rungs[n] ?? 0) - emcPct) * decay
+    rungs[n] = emcPct + apart
+    distance += (weights[n] ?? 0) * apart
     decay *= decay
   }
-  return mean
+  // Quicker rungs are in step with the air at once; numbers too small for full precision would only cost time.
+  for (; n < RUNGS; n += 1) rungs[n] = emcPct
+  return emcPct + distance
 }
 
 /**
@@ -156,13 +163,13 @@ export function stepWood(filter: PieceFilter, state: WoodState, step: AirStep, d
   const left = Math.exp(-filter.ring.slowestPerM2 * diffusionTimeM2)
   const unknown = step.isKnown ? 0 : 1
   state.unknownShare = unknown + (state.unknownShare - unknown) * left
-  state.ringPct = stepRungs(state.ring, filter.ring.weights[step.cover], emcPct, left)
+  state.ringPct = stepRungs(state.ring, weightsUnder(filter.ring, step.cover), emcPct, left)
   state.lidPct =
     filter.lid === null || state.lid === null
       ? state.ringPct
       : stepRungs(
           state.lid,
-          filter.lid.weights[step.cover],
+          weightsUnder(filter.lid, step.cover),
           emcPct,
           Math.exp(-filter.lid.slowestPerM2 * diffusionTimeM2),
         )
