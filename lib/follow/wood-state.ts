@@ -98,10 +98,24 @@ function meanPct(weights: Float64Array, rungs: Float64Array): number {
 
 const isEnclosed = (cover: PlaceCover): boolean => cover === 'bagged' || cover === 'tub'
 
-/** Another cover weighs the rungs anew; the mean stays what it was, and what the surface felt last stays its head start. */
+/** Rungs further out than wood can be are a sign that too many shifts have piled up. */
+const RUNG_MIN_PCT = -4
+const RUNG_MAX_PCT = 40
+
+/**
+ * Another cover weighs the rungs anew; the mean stays what it was, and what the surface felt last stays its head start.
+ * Where covers changed so often that a rung would leave what wood can be, the wood is taken as even again.
+ */
 function reweigh(part: PartFilter, rungs: Float64Array, from: PlaceCover, to: PlaceCover): void {
-  const jump = meanPct(part.weights[from], rungs) - meanPct(part.weights[to], rungs)
-  for (let n = 0; n < RUNGS; n += 1) rungs[n] = (rungs[n] ?? 0) + jump
+  const mean = meanPct(part.weights[from], rungs)
+  const jump = mean - meanPct(part.weights[to], rungs)
+  let isWithin = true
+  for (let n = 0; n < RUNGS; n += 1) {
+    const rung = (rungs[n] ?? 0) + jump
+    rungs[n] = rung
+    isWithin &&= rung >= RUNG_MIN_PCT && rung <= RUNG_MAX_PCT
+  }
+  if (!isWithin) rungs.fill(mean)
 }
 
 export function changeCover(filter: PieceFilter, state: WoodState, cover: PlaceCover): void {
@@ -184,7 +198,8 @@ export function correctRing(state: WoodState, byPct: number): void {
   state.lidPct += byPct
 }
 
-const rungsSchema = z.array(z.number().min(-5).max(45)).length(RUNGS)
+/** A correction by weight may move a rung a little further. */
+const rungsSchema = z.array(z.number().min(-40).max(80)).length(RUNGS)
 
 /** A state as it is stored. */
 export const storedStateSchema = z.strictObject({
