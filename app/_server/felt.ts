@@ -1,7 +1,8 @@
 import 'server-only'
 import type { Kysely } from 'kysely'
 import type { SiteMember } from '@/db/queries/members'
-import { findPaces, listRoomHours, UNLEARNED } from '@/db/queries/moisture'
+import { UNLEARNED_PACE } from '@/lib/follow/learned-pace'
+import { findPaces, listRoomHours } from '@/db/queries/moisture'
 import { findRoomYears } from '@/db/queries/room-figures'
 import { findRoom, listHangingSensors } from '@/db/queries/rooms'
 import { listRoomDays } from '@/db/queries/series'
@@ -80,7 +81,7 @@ async function woodOf(db: Kysely<Database>, member: SiteMember, asked: string | 
   const paces = await findPaces(db, member.siteId)
   return {
     densityKgM3,
-    pace: paces.get(wood?.movementClass ?? UNKNOWN_WOOD_CLASS) ?? UNLEARNED,
+    pace: paces.get(wood?.movementClass ?? UNKNOWN_WOOD_CLASS) ?? UNLEARNED_PACE,
     view: {
       id: wood?.slug ?? null,
       commonName: wood?.commonName ?? null,

@@ -3,9 +3,10 @@ import type { CutMc } from '@/lib/carry/carry-check'
 import { woodOfPiece } from '@/lib/carry/joint-defaults'
 import { type CarryMaterial, hoursBackMs, type PieceMaterial, type RoomMaterial } from '@/lib/carry/material'
 import { dayOfInstant, monthOf, monthsBefore } from '@/lib/climate/days'
+import { UNLEARNED_PACE } from '@/lib/follow/learned-pace'
 import { roomAir } from '@/lib/rooms/air'
 import type { Database } from '../schema'
-import { findMoisture, findPaces, followedOf, listRoomHours, UNLEARNED } from './moisture'
+import { findMoisture, findPaces, followedOf, listRoomHours } from './moisture'
 import { type FactsRow, listOutings, listPieceFacts, listStays } from './piece-facts'
 import { findMonthMeans, findRoomYears, monthKey } from './room-figures'
 import { listHangingSensors, listRoomRecords, type RoomRecord } from './rooms'
@@ -72,7 +73,7 @@ export async function loadCarryMaterial(
       keepRoomId: keepRoomOf(piece),
       isKeepRoomAssumed: piece.keepRoomId === null,
       cut: cutOf(piece, keepRoomOf(piece), cuts),
-      pace: paces.get(piece.movementClass) ?? UNLEARNED,
+      pace: paces.get(piece.movementClass) ?? UNLEARNED_PACE,
     }
   }
   return {

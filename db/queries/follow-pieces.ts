@@ -11,6 +11,7 @@ import {
   type RoomRecordOf,
   type Stay,
 } from '@/lib/follow/record'
+import { UNLEARNED_PACE } from '@/lib/follow/learned-pace'
 import type { PieceFilter } from '@/lib/follow/wood-state'
 import type { Database } from '../schema'
 import { listMeasured } from './measured'
@@ -23,7 +24,6 @@ import {
   listRoomHours,
   type MoistureRow,
   type StoredMoisture,
-  UNLEARNED,
   upsertMoisture,
 } from './moisture'
 import { type FactsRow, listOutings, listPieceFacts, listStays } from './piece-facts'
@@ -178,7 +178,7 @@ export async function listSubjects(
       stays: own,
       outAtMs: outings.get(row.id)?.getTime() ?? null,
       measured: measured.get(row.id) ?? [],
-      diffusionFactor: (paces.get(row.movementClass) ?? UNLEARNED).factor,
+      diffusionFactor: (paces.get(row.movementClass) ?? UNLEARNED_PACE).factor,
     }
   })
 }

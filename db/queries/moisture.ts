@@ -1,6 +1,5 @@
 import { createHash } from 'node:crypto'
 import { type Kysely, sql } from 'kysely'
-import { PACE_LOG_SPREAD } from '@/lib/doubt/causes'
 import { learnedPace, type Pace } from '@/lib/follow/learned-pace'
 import type { Followed } from '@/lib/follow/record'
 import { type PieceFilter, stateOfStored, storedOf, storedStateSchema } from '@/lib/follow/wood-state'
@@ -192,5 +191,3 @@ export async function findPaces(db: Kysely<Database>, siteId: number): Promise<M
   }
   return new Map([...byClass].map(([movementClass, outcomes]) => [movementClass, learnedPace(outcomes)]))
 }
-
-export const UNLEARNED: Pace = { factor: 1, logSpread: PACE_LOG_SPREAD, outcomes: 0 }

@@ -1,5 +1,4 @@
 import { assertFinite, assertInRange } from '@/lib/assert'
-import { PACE_LOG_SPREAD } from '@/lib/doubt/causes'
 import { mcDoubtPct, startDoubtPct } from '@/lib/follow/doubt'
 import type { Cover } from '@/lib/pieces/piece'
 import type { CarryCheckInput, PieceCheck, PieceFacts, Verdict } from './carry-check'
@@ -221,9 +220,6 @@ function curveOf(
     usedLate: bands.map((band) => band.low),
   }
 }
-
-/** The pace of a site that has learned nothing yet. */
-export const UNLEARNED_PACE = { factor: 1, logSpread: PACE_LOG_SPREAD }
 
 const RANK: Readonly<Record<Verdict, number>> = { fine: 0, 'keep-short': 1, leave: 2 }
 

@@ -1,6 +1,6 @@
 import type { AirFrom, WoodState } from '@/lib/follow/wood-state'
 import type { CutMc } from './carry-check'
-import { UNLEARNED_PACE } from './check'
+import { UNLEARNED_PACE } from '@/lib/follow/learned-pace'
 import type { ResolvedJoint } from './joint-defaults'
 import { lossMm } from './joint-loss'
 import { type MoistureRun, stayRun } from './stay-run'

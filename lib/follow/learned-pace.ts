@@ -22,6 +22,9 @@ export type Pace = {
   readonly outcomes: number
 }
 
+/** The pace of a site that has learned nothing yet. */
+export const UNLEARNED_PACE: Pace = { factor: 1, logSpread: PACE_LOG_SPREAD, outcomes: 0 }
+
 /** Below this part of the allowance a hand feels nothing; above the other the lid binds. Status: guess. */
 export const FELT_FROM = 0.4
 export const BINDS_FROM = 1.3

@@ -1,7 +1,7 @@
 import { carryCheck } from '@/lib/carry/check'
 import type { CarryCheckInput, PieceCheck, PieceFacts } from '@/lib/carry/carry-check'
 import { woodOfPiece } from '@/lib/carry/joint-defaults'
-import { UNLEARNED_PACE } from '@/lib/carry/check'
+import { UNLEARNED_PACE } from '@/lib/follow/learned-pace'
 import { airsOf, stepThrough } from '@/lib/follow/record'
 import { type AirFrom, evenState } from '@/lib/follow/wood-state'
 import type { PlaceCover } from '@/lib/pieces/piece'
