@@ -173,12 +173,14 @@ describe('lid fit, properties', () => {
     )
   })
 
-  it('first order is within 0.014 mm of exact for parts that change alike', () => {
+  it('first order misses the exact by no more than what the clearance itself changes, for parts that change alike', () => {
     fc.assert(
       fc.property(diameter, clearance, wood, change, angle, (d, c, w, m, a) => {
         const case_ = jointOfOneWood(d, c, w.tangentialPerPct, w.radialPerPct, m)
-        expect(Math.abs(clearanceExactMm(case_, a) - clearanceFirstOrderMm(case_, a))).toBeLessThan(0.014)
+        const missMm = Math.abs(clearanceExactMm(case_, a) - clearanceFirstOrderMm(case_, a))
+        expect(missMm).toBeLessThanOrEqual(c * w.tangentialPerPct * Math.abs(m) + 1e-9)
       }),
+      { numRuns: 1000 },
     )
   })
 

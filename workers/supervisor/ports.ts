@@ -1,3 +1,4 @@
+import { randomInt } from 'node:crypto'
 import { connect, createServer } from 'node:net'
 
 /** Whether a program could listen there now. */
@@ -9,20 +10,20 @@ export function isPortFree(host: string, port: number): Promise<boolean> {
   })
 }
 
+/**
+ * Below the range from which the system takes ports for outgoing connections (32768 on, by Linux's default): a port of
+ * that range that is free now may be a stranger's before our program listens on it.
+ */
+const firstPort = 20_000
+const lastPort = 32_767
+
 /** A port of this machine alone that is free now. */
-export function freePort(): Promise<number> {
-  return new Promise((resolve, reject) => {
-    const server = createServer()
-    server.once('error', reject)
-    server.listen({ host: '127.0.0.1', port: 0 }, () => {
-      const address = server.address()
-      server.close(() =>
-        typeof address === 'object' && address !== null
-          ? resolve(address.port)
-          : reject(new Error('The system gave no port.')),
-      )
-    })
-  })
+export async function freePort(): Promise<number> {
+  for (let tries = 0; tries < 200; tries += 1) {
+    const port = randomInt(firstPort, lastPort + 1)
+    if (await isPortFree('127.0.0.1', port)) return port
+  }
+  throw new Error(`No free port between ${firstPort} and ${lastPort}.`)
 }
 
 /** Whether a program answers there. */
