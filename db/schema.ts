@@ -1,5 +1,6 @@
 import type { ColumnType, Generated, GeneratedAlways, JSONColumnType } from 'kysely'
 import type { AccountTables } from './schema-accounts'
+import type { NoticeTables } from './schema-notices'
 import type { WoodTables } from './schema-wood'
 
 /** The shape of the database, as the migrations leave it. Rows are turned into `lib/` types before they leave `db/`. */
@@ -34,18 +35,19 @@ interface RetiredCodeTable {
 interface SiteCounterTable {
   site_id: number
   kind:
-    'room' | 'sensor' | 'piece' | 'carry' | 'notice' | 'episode' | 'wood' | 'event' | 'weighing' | 'outcome'
+    | 'room'
+    | 'sensor'
+    | 'piece'
+    | 'carry'
+    | 'notice'
+    | 'episode'
+    | 'wood'
+    | 'event'
+    | 'weighing'
+    | 'outcome'
+    | 'repeat'
+    | 'door'
   last_id: Generated<number>
-}
-
-interface MemberSettingTable {
-  site_id: number
-  user_id: string
-  unit_system: string | null
-  mail_on: Generated<boolean>
-  on_house_list: Generated<boolean>
-  last_here_at: Instant | null
-  version: Generated<number>
 }
 
 interface RoomTable {
@@ -232,6 +234,10 @@ interface CarryTable {
   note: Generated<string>
   created_by: string | null
   created_at: InstantDefault
+  takes_whatever: Generated<boolean>
+  repeat_id: ColumnType<number | null, number | null | undefined, number | null>
+  repeat_on: ColumnType<string | null, string | null | undefined, string | null>
+  put_off_from: ColumnType<Date | null, Date | string | null | undefined, Date | string | null>
   version: Generated<number>
 }
 
@@ -255,60 +261,6 @@ interface PiecePlaceTable {
   cover: Generated<string>
   carry_id: number | null
   moved_by: string | null
-}
-
-interface EpisodeTable {
-  site_id: number
-  id: number
-  rule: string
-  subject: string
-  key: string
-  state: string
-  began_at: Instant
-  told_at: Instant | null
-  ended_at: Instant | null
-  data: ColumnType<Record<string, unknown>, string | undefined, string>
-}
-
-interface NoticeTable {
-  site_id: number
-  id: number
-  code: string
-  episode_id: number | null
-  key: string
-  rule: string
-  urgency: string
-  mark: string
-  title: string
-  body: Generated<string>
-  link: Generated<string>
-  carry_id: number | null
-  piece_id: number | null
-  sensor_id: number | null
-  room_id: number | null
-  at: Instant
-  acknowledged_at: Instant | null
-  acknowledged_by: string | null
-}
-
-interface NoticeSeenTable {
-  site_id: number
-  notice_id: number
-  user_id: string
-  seen_at: Instant
-}
-
-interface DeliveryTable {
-  site_id: number
-  notice_id: number
-  user_id: string
-  channel: string
-  message_id: string
-  state: string
-  hold_until: Instant | null
-  tries: Generated<number>
-  sent_at: Instant | null
-  last_error: string | null
 }
 
 interface IdempotencyTable {
@@ -338,11 +290,10 @@ interface DemoMailTable {
   html_body: string
 }
 
-export interface Database extends AccountTables, WoodTables {
+export interface Database extends AccountTables, NoticeTables, WoodTables {
   site: SiteTable
   retired_code: RetiredCodeTable
   site_counter: SiteCounterTable
-  member_setting: MemberSettingTable
   room: RoomTable
   change: ChangeTable
   sensor: SensorTable
@@ -359,10 +310,6 @@ export interface Database extends AccountTables, WoodTables {
   carry: CarryTable
   carry_piece: CarryPieceTable
   piece_place: PiecePlaceTable
-  episode: EpisodeTable
-  notice: NoticeTable
-  notice_seen: NoticeSeenTable
-  delivery: DeliveryTable
   idempotency: IdempotencyTable
   rate_count: RateCountTable
   demo_mail: DemoMailTable

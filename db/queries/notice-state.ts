@@ -1,6 +1,6 @@
 import { type Kysely, sql, type Transaction } from 'kysely'
 import { z } from 'zod'
-import type { Episode, NewNotice, NoticePerson, NoticeState } from '@/lib/notices/inputs'
+import type { Episode, NoticePerson, NoticeState, RoutedNotice } from '@/lib/notices/inputs'
 import { roleSchema } from '@/lib/sites/permissions'
 import { queueMail } from '../jobs'
 import type { Database } from '../schema'
@@ -200,7 +200,7 @@ export async function storeNotices(
   trx: Transaction<Database>,
   siteId: number,
   now: Date,
-  notices: NewNotice[],
+  notices: RoutedNotice[],
   episodeIds: ReadonlyMap<string, number>,
   messageIdOf: (noticeCode: string, userId: string) => string,
 ): Promise<number> {
@@ -231,7 +231,7 @@ export async function storeNotices(
       .executeTakeFirst()
     if (row === undefined) continue
     stored += 1
-    for (const { userId, holdUntil } of notice.mail) {
+    for (const { userId, channel, holdUntil } of notice.deliveries) {
       const runAt = holdUntil === null ? null : new Date(holdUntil)
       await trx
         .insertInto('delivery')
@@ -239,7 +239,7 @@ export async function storeNotices(
           site_id: siteId,
           notice_id: row.id,
           user_id: userId,
-          channel: 'mail',
+          channel,
           message_id: messageIdOf(code, userId),
           state: runAt === null ? 'waiting' : 'held',
           hold_until: runAt,

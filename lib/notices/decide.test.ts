@@ -153,7 +153,9 @@ describe('a planned carry', () => {
   it('goes to whoever planned it and to the house list, but to no onlooker and nobody who wants no mail', () => {
     const leave = (madeBy: string | null) => inputs({ carries: [plan(verdict('leave', null), { madeBy })] })
     const told = (madeBy: string | null) =>
-      decideNotices(plannedAt - minute, fresh, leave(madeBy)).notices[0]?.mail.map(({ userId }) => userId)
+      decideNotices(plannedAt - minute, fresh, leave(madeBy)).notices[0]?.deliveries.map(
+        ({ userId }) => userId,
+      )
     expect(told('maker')).toEqual(['maker', 'house'])
     expect(told(null)).toEqual(['owner', 'maker', 'house'])
   })
@@ -200,7 +202,7 @@ describe('a piece that is out', () => {
     const mail = (stage: 'box' | 'roughed') =>
       decideNotices(night, fresh, inputs({ carries: [outing(verdict('keep-short', earlyAt), stage)] }))
         .notices.find(({ rule }) => rule === 'time-out')
-        ?.mail.map(({ userId, holdUntil }) => [userId, holdUntil === null ? 'now' : iso(holdUntil)])
+        ?.deliveries.map(({ userId, holdUntil }) => [userId, holdUntil === null ? 'now' : iso(holdUntil)])
     const morning = '2026-03-06T07:00:00.000Z'
     expect(mail('box')).toEqual([
       ['maker', 'now'],
@@ -254,7 +256,7 @@ describe('a silent sensor', () => {
       inputs({ sensors: [sensor] }),
     ).notices
     expect(rest).toEqual([])
-    expect(first?.mail.map(({ holdUntil }) => holdUntil && iso(holdUntil))).toEqual([
+    expect(first?.deliveries.map(({ holdUntil }) => holdUntil && iso(holdUntil))).toEqual([
       '2026-03-05T07:00:00.000Z',
       '2026-03-05T07:00:00.000Z',
     ])

@@ -1,4 +1,5 @@
 import type { Decision, NoticeInputs, NoticeState } from './inputs'
+import { deliveriesOf } from './routing'
 import { evening } from './rules/evening'
 import { outCarry } from './rules/out'
 import { plannedCarry } from './rules/planned'
@@ -19,6 +20,9 @@ export function decideNotices(now: number, state: NoticeState, inputs: NoticeInp
   ]
   return {
     episodes: parts.flatMap((part) => part.episodes),
-    notices: parts.flatMap((part) => part.notices).filter((notice) => !state.told.has(notice.key)),
+    notices: parts
+      .flatMap((part) => part.notices)
+      .filter((notice) => !state.told.has(notice.key))
+      .map((notice) => ({ ...notice, deliveries: deliveriesOf(now, notice, inputs) })),
   }
 }

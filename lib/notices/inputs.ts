@@ -98,14 +98,35 @@ export interface NewNotice {
   carryCode?: string
   pieceCode?: string
   sensorCode?: string
-  mail: { userId: string; holdUntil: number | null }[]
+  /** Whom it concerns; how and when each hears of it is their own choice (see `routing.ts`). */
+  to: Recipient[]
 }
+
+export interface Recipient {
+  userId: string
+  /** Told at once, quiet hours or not. */
+  wakes: boolean
+}
+
+export type Channel = 'mail' | 'push'
+
+/** One notice on its way to one person by one channel. `holdUntil`: epoch ms; null: at once. */
+export interface PlannedDelivery {
+  userId: string
+  channel: Channel
+  holdUntil: number | null
+}
+
+export type RoutedNotice = NewNotice & { deliveries: PlannedDelivery[] }
 
 export interface Decision {
   /** Every condition that holds now. An open episode that is not among them is over. */
   episodes: Episode[]
-  notices: NewNotice[]
+  notices: RoutedNotice[]
 }
 
 /** What one rule adds to the decision. */
-export type RulePart = Decision
+export interface RulePart {
+  episodes: Episode[]
+  notices: NewNotice[]
+}

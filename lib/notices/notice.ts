@@ -9,7 +9,21 @@ export const ruleSchema = z.enum([
   'time-out',
   'lock-up',
   'last-call',
+  'tub-out',
+  'losing-fit',
+  'shop-unfit',
+  'good-hours',
+  'keep-room-band',
+  'damper-than-normal',
+  'mould-risk',
+  'too-dry',
+  'cold-iron',
+  'blank-ready',
+  'weighing-due',
   'sensor-silent',
+  'battery-low',
+  'refused-messages',
+  'test',
 ])
 export type Rule = z.infer<typeof ruleSchema>
 

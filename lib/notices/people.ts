@@ -1,5 +1,4 @@
-import { quietUntil } from '@/lib/sites/local-time'
-import type { NewNotice, NoticeCarry, NoticeInputs, NoticePerson } from './inputs'
+import type { NoticeCarry, NoticePerson, Recipient } from './inputs'
 
 export const makers = (people: NoticePerson[]) =>
   people.filter(({ role }) => role === 'owner' || role === 'maker')
@@ -12,19 +11,10 @@ export function planners(people: NoticePerson[], carry: NoticeCarry): NoticePers
   return [...(planner.length > 0 ? planner : makers(people)), ...houseList(people)]
 }
 
-/** Each person once; held over quiet hours, but for a maker where `wakesMakers` says so. */
-export function mailTo(
-  now: number,
-  inputs: NoticeInputs,
-  people: NoticePerson[],
-  wakesMakers = false,
-): NewNotice['mail'] {
-  const holdUntil = quietUntil(now, inputs.site)
+/** Each person once. `wakesMakers`: makers are told even in quiet hours. */
+export function recipients(people: NoticePerson[], wakesMakers = false): Recipient[] {
   const unique = [...new Map(people.map((person) => [person.userId, person])).values()]
   return unique
-    .filter((person) => person.mailOn && person.role !== 'onlooker')
-    .map((person) => ({
-      userId: person.userId,
-      holdUntil: wakesMakers && person.role !== 'hand' ? null : holdUntil,
-    }))
+    .filter((person) => person.role !== 'onlooker')
+    .map((person) => ({ userId: person.userId, wakes: wakesMakers && person.role !== 'hand' }))
 }

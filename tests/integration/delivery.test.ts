@@ -4,7 +4,7 @@ import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest'
 import { migrateJobs } from '@/db/jobs'
 import { listWaitingMail, requeueWaitingMail } from '@/db/queries/deliveries'
 import { storeEpisodes, storeNotices, takeSiteForNotices } from '@/db/queries/notice-state'
-import type { Episode, NewNotice } from '@/lib/notices/inputs'
+import type { Episode, RoutedNotice } from '@/lib/notices/inputs'
 import { mailPerson, type MailRoute } from '@/workers/delivery/mail-person'
 import { createTestDatabase, type TestDatabase } from '../support/database'
 import { startMailServer, type TestMailServer } from '../support/mail-server'
@@ -48,7 +48,7 @@ const episodeOf = (key: string): Episode => ({
   state: 'telling',
   beganAt: now.getTime(),
 })
-const noticeOf = (key: string, title: string, holdUntil: Date | null = null): NewNotice => ({
+const noticeOf = (key: string, title: string, holdUntil: Date | null = null): RoutedNotice => ({
   key,
   rule: 'time-out',
   urgency: 'now',
@@ -57,10 +57,11 @@ const noticeOf = (key: string, title: string, holdUntil: Date | null = null): Ne
   body: 'Never force a tight lid.',
   link: '/carry',
   episode: episodeOf(key),
-  mail: [{ userId: maker, holdUntil: holdUntil?.getTime() ?? null }],
+  to: [{ userId: maker, wakes: false }],
+  deliveries: [{ userId: maker, channel: 'mail', holdUntil: holdUntil?.getTime() ?? null }],
 })
 
-const store = (at: Date, notices: NewNotice[]) =>
+const store = (at: Date, notices: RoutedNotice[]) =>
   database.db.transaction().execute(async (trx) => {
     if (!(await takeSiteForNotices(trx, site.siteId))) return 0
     const ids = await storeEpisodes(

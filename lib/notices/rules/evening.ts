@@ -2,7 +2,7 @@ import { dayOfInstant, daysAfter } from '@/lib/climate/days'
 import { instantOfLocalTime } from '@/lib/sites/local-time'
 import type { Episode, NewNotice, NoticeInputs, RulePart } from '../inputs'
 import type { Rule } from '../notice'
-import { houseList, mailTo, makers } from '../people'
+import { houseList, recipients, makers } from '../people'
 import { lastCallBeforeQuietMs } from '../policy'
 import { latheCaution, listed } from '../wording'
 
@@ -38,7 +38,7 @@ export function evening(now: number, inputs: NoticeInputs): RulePart {
     body: `One night out there can undo a year of waiting. Bring ${stillOut.length === 1 ? 'it' : 'them'} in, or say that ${stillOut.length === 1 ? 'it is' : 'they are'} in already. ${latheCaution}`,
     link: '/carry',
     episode,
-    mail: mailTo(now, inputs, [...makers(inputs.people), ...houseList(inputs.people)]),
+    to: recipients([...makers(inputs.people), ...houseList(inputs.people)]),
   }
   return { episodes: [episode], notices: [notice] }
 }

@@ -1,6 +1,6 @@
 import type { Episode, NewNotice, NoticeCarry, NoticeInputs, RulePart } from '../inputs'
 import type { Rule } from '../notice'
-import { mailTo, planners } from '../people'
+import { recipients, planners } from '../people'
 import { warnBeforeEarlyEdgeMs } from '../policy'
 import { moreLikelyGood, nearlyOutTitle, tightLidCaution, timeOutTitle } from '../wording'
 
@@ -37,7 +37,7 @@ export function outCarry(now: number, inputs: NoticeInputs, carry: NoticeCarry):
       carryCode: carry.code,
       pieceCode: piece.code,
       // Of all that may happen at night, only a finished box past its time is worth waking its maker for.
-      mail: mailTo(now, inputs, planners(inputs.people, carry), isOver && piece.stage === 'box'),
+      to: recipients(planners(inputs.people, carry), isOver && piece.stage === 'box'),
     }
     return { episodes: [episode], notices: [notice] }
   })

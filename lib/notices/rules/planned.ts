@@ -10,7 +10,7 @@ import {
   severities,
   type Severity,
 } from '../inputs'
-import { mailTo, planners } from '../people'
+import { recipients, planners } from '../people'
 import { planLapsesMs, warnBeforePlannedMs, warnEveningBefore } from '../policy'
 import { nextVerdictHold } from '../verdict-hold'
 import { plannedBody, plannedTitle, severityOf } from '../wording'
@@ -67,7 +67,7 @@ export function plannedCarry(
     link: `/carry/${carry.code}`,
     episode,
     carryCode: carry.code,
-    mail: mailTo(now, inputs, planners(inputs.people, carry)),
+    to: recipients(planners(inputs.people, carry)),
   }
   return { episodes: [episode], notices: [notice] }
 }

@@ -1,5 +1,5 @@
 import type { Episode, NewNotice, NoticeInputs, RulePart } from '../inputs'
-import { mailTo, makers } from '../people'
+import { recipients, makers } from '../people'
 import { silentBody, silentTitle } from '../wording'
 
 /** A sensor that has gone silent: told once for one silence, at once when a piece is out in its room. */
@@ -29,7 +29,7 @@ export function silent(now: number, inputs: NoticeInputs): RulePart {
       link: `/sensors/${sensor.code}`,
       episode,
       sensorCode: sensor.code,
-      mail: mailTo(now, inputs, makers(inputs.people)),
+      to: recipients(makers(inputs.people)),
     }
     return { episodes: [episode], notices: [notice] }
   })

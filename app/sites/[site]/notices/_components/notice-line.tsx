@@ -22,7 +22,21 @@ const linkWords: Readonly<Record<Rule, string>> = {
   'time-out': 'Open the carry',
   'lock-up': 'What is out',
   'last-call': 'What is out',
+  'tub-out': 'What is out',
+  'losing-fit': 'Open the piece',
+  'shop-unfit': 'Open the room',
+  'good-hours': 'Plan a carry',
+  'keep-room-band': 'Open the room',
+  'damper-than-normal': 'Open the room',
+  'mould-risk': 'Open the room',
+  'too-dry': 'Open the room',
+  'cold-iron': 'Open the room',
+  'blank-ready': 'Open the piece',
+  'weighing-due': 'What is due',
   'sensor-silent': 'Open the sensor',
+  'battery-low': 'Open the sensor',
+  'refused-messages': 'Look at them',
+  test: 'Notices',
 }
 
 export function NoticeLine({ reader, notice }: { reader: Reader; notice: Notice }) {
