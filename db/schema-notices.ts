@@ -41,6 +41,7 @@ interface CarryRepeatTable {
   note: Generated<string>
   created_by: string | null
   created_at: InstantDefault
+  paused_at: InstantOrNull
   ended_at: InstantOrNull
   version: Generated<number>
 }
@@ -49,6 +50,15 @@ interface CarryRepeatPieceTable {
   site_id: number
   repeat_id: number
   piece_id: number
+}
+
+interface LockUpTable {
+  site_id: number
+  day_on: ColumnType<string, string, string>
+  nothing_else_at: InstantOrNull
+  nothing_else_by: ColumnType<string | null, string | null | undefined, string | null>
+  closed_at: InstantOrNull
+  closed_by: ColumnType<string | null, string | null | undefined, string | null>
 }
 
 interface EpisodeTable {
@@ -201,6 +211,7 @@ export interface NoticeTables {
   forecast_score: ForecastScoreTable
   carry_repeat: CarryRepeatTable
   carry_repeat_piece: CarryRepeatPieceTable
+  lock_up: LockUpTable
   episode: EpisodeTable
   notice: NoticeTable
   notice_seen: NoticeSeenTable

@@ -238,6 +238,7 @@ interface CarryTable {
   repeat_id: ColumnType<number | null, number | null | undefined, number | null>
   repeat_on: ColumnType<string | null, string | null | undefined, string | null>
   put_off_from: ColumnType<Date | null, Date | string | null | undefined, Date | string | null>
+  put_off_at: ColumnType<Date | null, Date | string | null | undefined, Date | string | null>
   version: Generated<number>
 }
 
@@ -250,6 +251,7 @@ interface CarryPieceTable {
   out_at: Instant | null
   back_at: Instant | null
   back_room_id: number | null
+  ask_skipped_at: ColumnType<Date | null, Date | string | null | undefined, Date | string | null>
 }
 
 interface PiecePlaceTable {
