@@ -30,7 +30,7 @@ describe('whether the shop was used', () => {
 
   it('is told by an hour in which the air swung, not by a slow change of the day', () => {
     const opened = shut.map((hour, n) =>
-      n === 11 ? { ...hour, emcPctMax: hour.emcPctMin + OPENED_BY_PCT } : hour,
+      n === 11 ? { ...hour, emcPctMax: hour.emcPctMin + OPENED_BY_PCT + 0.1 } : hour,
     )
     expect(shopWasUsed([opened], 0).why).toBe('opened')
     const slow = shut.map((hour, n) => ({ ...hour, emcPctMin: 10 + n / 5, emcPctMax: 10.2 + n / 5 }))
