@@ -1,3 +1,5 @@
+import { FORECAST_HOURS, type RoomForecast } from '@/lib/forecast/room-forecast'
+
 const HOUR_MS = 3_600_000
 const DAY_MS = 24 * HOUR_MS
 
@@ -9,6 +11,11 @@ const DAYS_BACK = 3
 /** What is shown while the coming hours are carried over from yesterday. */
 export const NO_FORECAST_NOTE =
   'No forecast yet: the same hours as yesterday, with the present difference fading over 6 h.'
+const FORECAST_NOTE = 'Forecast from the room’s own record, as if nobody warmed it.'
+
+/** What the coming hours of a room are taken from, in words. */
+export const forecastNote = (forecast: RoomForecast | null | undefined): string =>
+  (forecast ?? null) === null ? NO_FORECAST_NOTE : FORECAST_NOTE
 
 export type AirHour = { readonly at: number; readonly emcPct: number; readonly temperatureC: number }
 export type AirRecord = {
@@ -69,4 +76,82 @@ export function comingHours(input: {
       temperatureC: valueAt(at, 'temperatureC'),
     }
   })
+}
+
+/**
+ * The coming hours of a room that has a forecast, shifted by how far the present is from it, which fades over 6 h.
+ * @returns one for each hour from `startsAt` that the forecast still holds; fewer than asked for past its end
+ */
+export function forecastHours(input: {
+  readonly now: number
+  readonly startsAt: number
+  readonly hours: number
+  readonly present: { readonly emcPct: number; readonly temperatureC: number }
+  readonly forecast: RoomForecast
+}): AirHour[] {
+  const { forecast, now, present } = input
+  const indexOf = (at: number) => Math.floor((at - forecast.madeAt) / HOUR_MS)
+  const valueAt = (at: number, measure: Measure): number => {
+    const told = (when: number) => forecast[measure][Math.max(0, indexOf(when))] ?? present[measure]
+    const stays = Math.max(0, 1 - Math.max(0, at - now) / FADES_OVER_MS)
+    return told(at) + (present[measure] - told(now)) * stays
+  }
+  const held = FORECAST_HOURS - indexOf(input.startsAt)
+  return Array.from({ length: Math.max(0, Math.min(input.hours, held)) }, (_, n) => {
+    const at = input.startsAt + n * HOUR_MS
+    return {
+      at,
+      emcPct: Math.min(30, Math.max(0, valueAt(at, 'emcPct'))),
+      temperatureC: valueAt(at, 'temperatureC'),
+    }
+  })
+}
+
+/** Half the middle 8 in 10 of an hour so far ahead, ± % MC; beyond the forecast as in its last hour. */
+const forecastDoubtPct = (forecast: RoomForecast, at: number): number => {
+  const n = Math.min(FORECAST_HOURS - 1, Math.max(0, Math.floor((at - forecast.madeAt) / HOUR_MS)))
+  return ((forecast.emcPctHigh[n] ?? 0) - (forecast.emcPctLow[n] ?? 0)) / 2
+}
+
+/** From a mean error, either way, to the edge of the middle 8 in 10. Source: the normal law, 1.2816 √(π/2). */
+const EDGE_OF_MEAN_ERROR = 1.606
+/** How soon yesterday's hours are as far out as they ever are. Status: guess. */
+const REPEAT_DOUBT_FULL_MS = DAY_MS
+
+/** How far the same hour of the day before was out on record, ± % MC; nothing known of it: 0. */
+function repeatDoubtPct(record: readonly AirRecord[]): number {
+  const byHour = new Map(record.map((hour) => [hour.at, hour.emcPct]))
+  const errors = record.flatMap(({ at, emcPct }) => {
+    const before = byHour.get(at - DAY_MS) ?? null
+    return emcPct === null || before === null ? [] : Math.abs(emcPct - before)
+  })
+  return errors.length === 0
+    ? 0
+    : (EDGE_OF_MEAN_ERROR * errors.reduce((sum, one) => sum + one, 0)) / errors.length
+}
+
+/**
+ * How far the air of a stay may come out other than told, ± % MC, 8 in 10: the mean over its hours, as wood feels their
+ * mean. What was recorded already is not in doubt here, so that a longer stay ahead is a wider one.
+ */
+export function aheadDoubtPct(input: {
+  readonly now: number
+  readonly startsAt: number
+  readonly stayMs: number
+  readonly forecast: RoomForecast | null
+  readonly record: readonly AirRecord[]
+}): number {
+  const { now, startsAt, forecast } = input
+  const steps = Math.max(1, Math.min(72, Math.ceil(input.stayMs / HOUR_MS)))
+  const repeat = forecast === null ? repeatDoubtPct(input.record) : 0
+  let sum = 0
+  for (let n = 0; n < steps; n += 1) {
+    const at = startsAt + ((n + 0.5) * input.stayMs) / steps
+    if (at <= now) continue
+    sum +=
+      forecast === null
+        ? repeat * Math.min(1, (at - now) / REPEAT_DOUBT_FULL_MS)
+        : forecastDoubtPct(forecast, at)
+  }
+  return sum / steps
 }

@@ -1,10 +1,11 @@
 import { HOUSE_SENSOR_DOUBT_PCT } from '@/lib/follow/doubt'
 import { airsOf, type Followed, HOUR_MS, type RoomHours, type Stay, stepThrough } from '@/lib/follow/record'
 import { type AirFrom, copyState, evenState, type WoodState } from '@/lib/follow/wood-state'
+import type { RoomForecast } from '@/lib/forecast/room-forecast'
 import type { Cover } from '@/lib/pieces/piece'
 import type { RoomAir } from '@/lib/rooms/room'
 import type { AirThere, CarryCheckInput, CutMc, PieceFacts } from './carry-check'
-import { comingHours } from './forecast'
+import { aheadDoubtPct, comingHours, forecastHours } from './forecast'
 import { woodOfPiece } from './joint-defaults'
 
 /** Everything that checks of carries look at, as loaded by `db/queries/carry-inputs.ts`: for any number of pieces. */
@@ -37,6 +38,8 @@ export interface RoomMaterial {
   hours: RoomHours
   /** Over its own last twelve months. */
   emcPctMean: number | null
+  /** The newest forecast on record, if that is not too old; absent while none could be made. */
+  forecast?: RoomForecast | null
 }
 
 /** How far back hours are loaded: enough to see a week's days alike, and to carry a piece on that was followed lately. */
@@ -78,6 +81,7 @@ function comingAtRest(material: CarryMaterial, piece: PieceMaterial, from: numbe
   return comingAirs(material, room, room.air, from, hours).map((hour) => ({ ...hour, cover: stay.cover }))
 }
 
+/** The last hour's worth of air holds for good: the mean of the last day that anything is told of. */
 function comingAirs(
   material: CarryMaterial,
   room: RoomMaterial,
@@ -85,14 +89,18 @@ function comingAirs(
   startsAt: number,
   hours: number,
 ): Omit<AirFrom, 'cover'>[] {
-  const coming = comingHours({
-    now: material.now.getTime(),
-    startsAt,
-    hours,
-    present,
-    record: [...room.hours].map(([at, air]) => ({ at, ...air })),
-  })
-  const lastDay = coming.slice(-24)
+  const now = material.now.getTime()
+  const { forecast } = room
+  const told = { now, startsAt, hours, present }
+  const coming = forecast
+    ? forecastHours({ ...told, forecast })
+    : comingHours({ ...told, record: recordOf(room) })
+  const lastDay = forecast
+    ? forecast.emcPct.slice(-24).map((emcPct, n) => ({
+        emcPct,
+        temperatureC: forecast.temperatureC.slice(-24)[n] ?? present.temperatureC,
+      }))
+    : coming.slice(-24)
   const mean = (of: 'emcPct' | 'temperatureC') =>
     lastDay.reduce((sum, hour) => sum + hour[of], 0) / lastDay.length
   return [
@@ -101,7 +109,7 @@ function comingAirs(
       ? []
       : [
           {
-            at: startsAt + hours * HOUR_MS,
+            at: startsAt + coming.length * HOUR_MS,
             emcPct: mean('emcPct'),
             temperatureC: mean('temperatureC'),
             isKnown: true,
@@ -110,9 +118,27 @@ function comingAirs(
   ]
 }
 
-/** How far the air there may be out against the air that the piece was followed by, ± % MC. */
-const airDoubtPct = (air: RoomAir | undefined): number =>
-  air === undefined || air.kind === 'never' ? 0 : Math.hypot(air.emcDoubtPct, HOUSE_SENSOR_DOUBT_PCT)
+const recordOf = (room: RoomMaterial) => [...room.hours].map(([at, air]) => ({ at, ...air }))
+
+/** The air of a room at a moment to come; undefined where none is to be told of it. */
+export function airOfHour(
+  material: CarryMaterial,
+  roomId: number,
+  at: number,
+): { emcPct: number; temperatureC: number } | undefined {
+  const room = material.rooms.get(roomId)
+  return room === undefined || room.air.kind === 'never'
+    ? undefined
+    : comingAirs(material, room, room.air, at, 1)[0]
+}
+
+/** How far the air there may be out against the air that the piece was followed by, ± % MC: sensors, and hours to come. */
+function airDoubtPct(room: RoomMaterial | undefined, now: number, startsAt: number, stayMs: number): number {
+  if (room === undefined || room.air.kind === 'never') return 0
+  const forecast = room.forecast ?? null
+  const aheadPct = aheadDoubtPct({ now, startsAt, stayMs, forecast, record: recordOf(room) })
+  return Math.hypot(room.air.emcDoubtPct, HOUSE_SENSOR_DOUBT_PCT, aheadPct)
+}
 
 export function airThere(air: RoomAir | undefined): AirThere {
   if (air === undefined || air.kind === 'never') return { kind: 'never' }
@@ -143,7 +169,7 @@ export function carryCheckInput(material: CarryMaterial, asked: CarryAsked): Car
     cut: piece.cut,
     there,
     airs: room !== undefined && there.kind === 'fresh' ? airsOfStay(material, piece, room, there, asked) : [],
-    airDoubtPct: airDoubtPct(room?.air),
+    airDoubtPct: airDoubtPct(room, now, startsAt, asked.stayMinutes * 60_000),
     pace: piece.pace,
     startsAt,
     stayMinutes: asked.stayMinutes,
