@@ -4,6 +4,12 @@ import { type Kysely, sql } from 'kysely'
 const statements = [
   `alter table delivery drop constraint delivery_channel_check`,
   `alter table delivery add constraint delivery_channel_check check (channel in ('mail', 'push'))`,
+  // Let go: what it was about was over, or in somebody's hand, before it could be sent. Nothing went wrong.
+  `alter table delivery drop constraint delivery_state_check`,
+  `alter table delivery add constraint delivery_state_check
+    check (state in ('held', 'waiting', 'sent', 'given-up', 'let-go'))`,
+  // What is counted before a mail goes out: how many a person got within the hour.
+  `create index delivery_sent_idx on delivery (user_id, sent_at) where sent_at is not null`,
   `create table delivery_try (
     site_id integer not null,
     id bigint generated always as identity,
@@ -79,6 +85,15 @@ export async function down(db: Kysely<unknown>): Promise<void> {
   for (const table of ['member_rule', 'push_subscription', 'delivery_try'])
     await sql.raw(`drop table ${table}`).execute(db)
   await sql.raw(`delete from delivery where channel = 'push'`).execute(db)
+  await sql.raw(`update delivery set state = 'given-up' where state = 'let-go'`).execute(db)
+  await sql.raw(`drop index delivery_sent_idx`).execute(db)
+  await sql.raw(`alter table delivery drop constraint delivery_state_check`).execute(db)
+  await sql
+    .raw(
+      `alter table delivery add constraint delivery_state_check
+        check (state in ('held', 'waiting', 'sent', 'given-up'))`,
+    )
+    .execute(db)
   await sql.raw(`alter table delivery drop constraint delivery_channel_check`).execute(db)
   await sql
     .raw(`alter table delivery add constraint delivery_channel_check check (channel in ('mail'))`)

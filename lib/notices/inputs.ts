@@ -52,6 +52,30 @@ export interface NoticePerson {
   role: Role
   mailOn: boolean
   onHouseList: boolean
+  /** What else they chose. Absent: nothing, so everything is as it comes (`usualWishes`). */
+  wishes?: PersonWishes
+}
+
+/** How one person wants to be told, beyond mail on or off. */
+export interface PersonWishes {
+  /** They want it on a phone, and have signed one up. */
+  pushOn: boolean
+  /** Rules for which they chose otherwise. */
+  rules: Partial<Record<Rule, { mailOn: boolean; pushOn: boolean }>>
+  /** HH:mm; null: the site's. */
+  quiet: { from: string; to: string } | null
+  /** IANA; null: the site's. */
+  timeZone: string | null
+  /** When to hear of what can wait. */
+  digest: 'none' | 'daily' | 'weekly'
+  /** HH:mm in their zone. */
+  digestAt: string
+  /** ISO: 1 is Monday. */
+  digestWeekday: number
+  /** Epoch ms. `coveredBy` hears in their stead; null: the makers do. */
+  away: { from: number; until: number; coveredBy: string | null } | null
+  /** At work until then, epoch ms: no sound, no mail. */
+  sessionUntil: number | null
 }
 
 /** How bad a carry looks; a verdict worsens when this rises. */
