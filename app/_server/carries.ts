@@ -115,6 +115,7 @@ export async function createCarry(
         stayMinutes: input.stayMinutes,
         note: input.note,
         userId: member.userId,
+        takesWhatever: input.takesWhatever,
         pieces: found.value.pieces.map((piece) => ({
           pieceId: piece.id,
           fromRoomId: piece.room?.roomId ?? null,
@@ -178,6 +179,8 @@ export async function changeCarry(
         fromRoomId: piece.room?.roomId ?? null,
       }))
       await replaceCarryPieces(trx, member.siteId, carry.id, change.cover ?? carry.cover, pieces)
+      // Named now: it is no longer whatever is taken.
+      if (carry.takesWhatever) await updateCarry(trx, member.siteId, carry.id, { takesWhatever: false })
     } else if (change.cover !== undefined) {
       const pieces = carry.pieces.map(({ pieceId, fromRoom }) => ({
         pieceId,

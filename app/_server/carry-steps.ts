@@ -1,7 +1,7 @@
 import 'server-only'
 import type { Kysely } from 'kysely'
 import { type CarryPieceRecord, type CarryRecord, lockCarry } from '@/db/queries/carries'
-import { updateCarry, updateCarryPiece } from '@/db/queries/carry-changes'
+import { replaceCarryPieces, updateCarry, updateCarryPiece } from '@/db/queries/carry-changes'
 import { notifySite } from '@/db/queries/live'
 import type { SiteMember } from '@/db/queries/members'
 import { lockPieces } from '@/db/queries/piece-writes'
@@ -15,6 +15,7 @@ import { namesOf } from '@/lib/carry/summary'
 import { undoBringBackMs } from '@/lib/notices/policy'
 import type { Cover } from '@/lib/pieces/piece'
 import { ok } from '@/lib/result'
+import { findPiecesAndRoom } from './carry-check'
 import { mayStart, setOut } from './carry-start'
 import { viewCarries } from './carry-view'
 import { viewerOf } from './piece-view'
@@ -48,27 +49,54 @@ export function startCarry(
   db: Kysely<Database>,
   member: SiteMember,
   carryCode: string,
-  asked: { againstAdvice: boolean },
+  { pieceIds: taken, againstAdvice }: { againstAdvice: boolean; pieceIds?: readonly string[] },
   now: Date,
 ): Promise<Outcome<Carry>> {
   return step(db, member, carryCode, now, async (trx, carry) => {
     if (carry.state === 'out') return asItWas
     if (carry.state !== 'planned') return fail('already-done', 'This carry is over.')
-    const pieceIds = carry.pieces.map((piece) => piece.pieceId)
+    const parts = await partsThatGo(trx, member, carry, taken)
+    if (!parts.ok) return parts
+    const pieceIds = parts.value.map((piece) => piece.pieceId)
     await lockPieces(trx, member.siteId, pieceIds)
     const room = { id: carry.toRoom.roomId, name: carry.toRoom.name }
     const { cover, stayMinutes } = carry
     const start = await mayStart(
       trx,
       member,
-      { pieceIds, room, cover, stayMinutes, outAt: now, ...asked },
+      { pieceIds, room, cover, stayMinutes, outAt: now, againstAdvice },
       now,
     )
     if (!start.ok) return start
-    const covers = new Map(carry.pieces.map((piece) => [piece.pieceId, piece.cover]))
+    const covers = new Map(parts.value.map((piece) => [piece.pieceId, piece.cover]))
+    if (carry.takesWhatever)
+      await replaceCarryPieces(
+        trx,
+        member.siteId,
+        carry.id,
+        cover,
+        pieceIds.map((pieceId) => ({ pieceId, fromRoomId: null })),
+      )
     await setOut(trx, member, carry.id, { ...start.value, cover: covers })
     return changed
   })
+}
+
+/** What a plan takes: the pieces that it names, or those that are chosen now where it names none. */
+async function partsThatGo(
+  db: Kysely<Database>,
+  member: SiteMember,
+  carry: CarryRecord,
+  taken: readonly string[] | undefined,
+): Promise<Outcome<{ pieceId: number; cover: Cover }[]>> {
+  if (!carry.takesWhatever) {
+    if (taken === undefined) return ok(carry.pieces)
+    return failField('not-possible', 'pieceIds', 'this plan names its pieces already: change the plan first')
+  }
+  if (taken === undefined) return failField('not-possible', 'pieceIds', 'say what you take')
+  const found = await findPiecesAndRoom(db, member, taken, carry.toRoom.code)
+  if (!found.ok) return found
+  return ok(found.value.pieces.map((piece) => ({ pieceId: piece.id, cover: carry.cover })))
 }
 
 /** Those of the named pieces that are out still; all that are, when none is named. Foreign names refuse the whole. */

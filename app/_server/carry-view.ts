@@ -3,14 +3,17 @@ import type { Kysely } from 'kysely'
 import { loadCarryMaterial } from '@/db/queries/carry-inputs'
 import type { CarryPieceRecord, CarryRecord } from '@/db/queries/carries'
 import type { SiteMember } from '@/db/queries/members'
+import { listWhateverCandidates } from '@/db/queries/whatever'
 import { findPiecesById, type PieceRecord } from '@/db/queries/pieces'
 import type { Database } from '@/db/schema'
 import type { Carry, CarryPiece } from '@/lib/carry/carry'
 import type { PieceCheck } from '@/lib/carry/carry-check'
 import { checkPiece } from '@/lib/carry/judge'
 import type { CarryMaterial } from '@/lib/carry/material'
+import { isTooFarAhead, repeatWords } from '@/lib/carry/repeat'
 import { carryHeadline, worstOf } from '@/lib/carry/summary'
-import { undoBringBackMs } from '@/lib/notices/policy'
+import { type WhateverJudged, whateverJudged, whateverWords } from '@/lib/carry/whatever'
+import { undoBringBackMs, undoPutOffMs } from '@/lib/notices/policy'
 import { pieceOutline, pieceTitle } from '@/lib/pieces/title'
 import { hiddenCheck, viewerOf } from './piece-view'
 
@@ -24,15 +27,59 @@ export async function viewCarries(
   now: Date,
   loaded?: CarryMaterial,
 ): Promise<Carry[]> {
-  const pieceIds = [...new Set(carries.flatMap((carry) => carry.pieces.map((piece) => piece.pieceId)))]
   const open = carries.filter(isOpen)
+  const candidates = open.some((carry) => isWhatever(carry, now))
+    ? await listWhateverCandidates(db, member.siteId)
+    : []
+  const pieceIds = [...new Set([...pieceIdsOf(carries), ...candidates])]
   const [pieces, material] = await Promise.all([
     findPiecesById(db, member.siteId, pieceIds, viewerOf(member)),
-    loaded ?? loadCarryMaterial(db, member, pieceIdsOf(open), roomIdsOf(open), now),
+    loaded ?? loadCarryMaterial(db, member, [...pieceIdsOf(open), ...candidates], roomIdsOf(open), now),
   ])
   const byId = new Map(pieces.map((piece) => [piece.id, piece]))
-  return carries.map((carry) => viewCarry(carry, byId, material, member, now))
+  return carries.map((carry) => {
+    const whatever = isWhatever(carry, now) ? judgeWhatever(carry, material, candidates, byId) : undefined
+    return viewCarry(carry, byId, material, member, now, whatever)
+  })
 }
+
+/** A plan without named pieces that is near enough to be judged. */
+export const isWhatever = (carry: CarryRecord, now: Date): boolean =>
+  carry.takesWhatever &&
+  carry.state === 'planned' &&
+  !isTooFarAhead({ ...carry, isRepeated: carry.repeat !== null }, now)
+
+interface SeenWhatever extends WhateverJudged {
+  parts: { part: CarryPieceRecord; check: PieceCheck }[]
+}
+
+function judgeWhatever(
+  carry: CarryRecord,
+  material: CarryMaterial,
+  candidates: readonly number[],
+  pieces: ReadonlyMap<number, PieceRecord>,
+): SeenWhatever {
+  const judged = whateverJudged(
+    material,
+    candidates.filter((id) => pieces.has(id)),
+    {
+      toRoomId: carry.toRoom.roomId,
+      startsAt: startOf(carry, material.now),
+      stayMinutes: carry.stayMinutes,
+      cover: carry.cover,
+    },
+  )
+  const parts = judged.pieces.map(({ pieceId, check }) => {
+    const room = pieces.get(pieceId)?.room ?? null
+    const { cover } = carry
+    const rest = { outAt: null, backAt: null, backRoomName: null, isAskSkipped: false }
+    return { part: { pieceId, cover, fromRoom: room, ...rest }, check }
+  })
+  return { ...judged, parts }
+}
+
+/** A plan whose hour has passed is judged as if it went now: the past can't be gone into any more. */
+const startOf = (carry: CarryRecord, now: Date): Date => (carry.plannedAt < now ? now : carry.plannedAt)
 
 export const pieceIdsOf = (carries: readonly CarryRecord[]): number[] => [
   ...new Set(carries.flatMap((carry) => carry.pieces.map((piece) => piece.pieceId))),
@@ -48,11 +95,11 @@ export function checkOf(
   piece: CarryPieceRecord,
 ): PieceCheck | null {
   if (!isOpen(carry) || piece.backAt !== null) return null
+  if (isTooFarAhead({ ...carry, isRepeated: carry.repeat !== null }, material.now)) return null
   const check = checkPiece(material, {
     pieceId: piece.pieceId,
     toRoomId: carry.toRoom.roomId,
-    // A plan whose hour has passed is judged as if it went now: the past can't be gone into any more.
-    startsAt: piece.outAt ?? (carry.plannedAt < material.now ? material.now : carry.plannedAt),
+    startsAt: piece.outAt ?? startOf(carry, material.now),
     stayMinutes: carry.stayMinutes,
     cover: piece.cover,
   })
@@ -71,10 +118,9 @@ function viewPiece(
   carry: CarryRecord,
   part: CarryPieceRecord,
   piece: PieceRecord,
-  material: CarryMaterial,
+  check: PieceCheck | null,
   now: Date,
 ): CarryPiece {
-  const check = checkOf(material, carry, part)
   const isOut = part.outAt !== null && part.backAt === null
   return {
     id: piece.code,
@@ -87,6 +133,7 @@ function viewPiece(
     backAt: part.backAt?.toISOString() ?? null,
     check: check !== null && piece.isHidden ? hiddenCheck(check) : check,
     isOverdue: isOut && part.outAt !== null && isOverdue(check, part.outAt, carry.stayMinutes, now),
+    isAskSkipped: part.isAskSkipped,
   }
 }
 
@@ -96,11 +143,15 @@ function viewCarry(
   material: CarryMaterial,
   member: SiteMember,
   now: Date,
+  whatever: SeenWhatever | undefined,
 ): Carry {
-  const parts = carry.pieces.flatMap((part) => {
+  const judged =
+    whatever?.parts ?? carry.pieces.map((part) => ({ part, check: checkOf(material, carry, part) }))
+  const parts = judged.flatMap(({ part, check }) => {
     const piece = pieces.get(part.pieceId)
-    return piece === undefined ? [] : [viewPiece(carry, part, piece, material, now)]
+    return piece === undefined ? [] : [viewPiece(carry, part, piece, check, now)]
   })
+  const clock = { timeZone: member.timeZone, now }
   const { toRoom } = carry
   const lastBackAt = Math.max(0, ...carry.pieces.map((piece) => piece.backAt?.getTime() ?? 0))
   const plannedAt = carry.plannedAt.toISOString()
@@ -117,6 +168,13 @@ function viewCarry(
     note: carry.note,
     by: carry.createdByName,
     pieces: parts,
+    takesWhatever: carry.takesWhatever && carry.state === 'planned',
+    repeat: carry.repeat === null ? null : { id: carry.repeat.code, words: repeatWords(carry.repeat) },
+    putOffFrom: carry.putOffFrom?.toISOString() ?? null,
+    canPutBack:
+      carry.state === 'planned' &&
+      carry.putOffAt !== null &&
+      carry.putOffAt.getTime() > now.getTime() - undoPutOffMs,
     headline: carryHeadline(
       {
         state: carry.state,
@@ -124,8 +182,12 @@ function viewCarry(
         plannedAt,
         stayMinutes: carry.stayMinutes,
         pieces: parts.map((part) => ({ ...part, isOut: part.outAt !== null && part.backAt === null })),
+        whatever:
+          whatever === undefined
+            ? undefined
+            : whateverWords({ ...whatever, pieces: parts, stayMinutes: carry.stayMinutes }, clock),
       },
-      { timeZone: member.timeZone, now },
+      clock,
     ),
     worst: worstOf(parts.flatMap((part) => part.check ?? [])),
     version: carry.version,

@@ -1,14 +1,16 @@
 import 'server-only'
 import type { Kysely } from 'kysely'
-import { listCarriesBackSince, listOpenCarries } from '@/db/queries/carries'
+import { type CarryRecord, listCarriesBackSince, listOpenCarries } from '@/db/queries/carries'
 import { assumedKeepRoom, loadCarryMaterial } from '@/db/queries/carry-inputs'
 import type { SiteMember } from '@/db/queries/members'
 import { listStandingPieces, type PieceRecord } from '@/db/queries/pieces'
 import { listSensorRecords, type SensorRecord } from '@/db/queries/sensors'
 import { countPieces } from '@/db/queries/site-counts'
+import { listWhateverCandidates } from '@/db/queries/whatever'
 import type { Database } from '@/db/schema'
 import { type Carry, hasLid } from '@/lib/carry/carry'
 import { type CarryMaterial, woodAt } from '@/lib/carry/material'
+import { isTooFarAhead } from '@/lib/carry/repeat'
 import { undoBringBackMs } from '@/lib/notices/policy'
 import { nowHeadline } from '@/lib/now/headline'
 import { needs, type SensorForNeeds } from '@/lib/now/needs'
@@ -18,7 +20,7 @@ import { pieceOutline, pieceTitle } from '@/lib/pieces/title'
 import { settledTo } from '@/lib/rooms/air'
 import { sensorClock, sensorState } from '@/lib/sensors/state'
 import { may } from '@/lib/sites/permissions'
-import { pieceIdsOf, roomIdsOf, viewCarries } from './carry-view'
+import { isWhatever, pieceIdsOf, roomIdsOf, viewCarries } from './carry-view'
 import { viewerOf } from './piece-view'
 import { isOnlooker, type SeenRoom, seenRooms } from './rooms'
 
@@ -28,13 +30,16 @@ export async function getNow(db: Kysely<Database>, member: SiteMember, now: Date
   const seesCarries = may(member.role, 'carries:see')
   const [rooms, records, back, sensors, pieces, pieceCount] = await Promise.all([
     seenRooms(db, member, now),
-    seesCarries ? listOpenCarries(db, siteId) : [],
+    seesCarries ? listNearCarries(db, siteId, now) : [],
     seesCarries ? listCarriesBackSince(db, siteId, new Date(now.getTime() - undoBringBackMs)) : [],
     may(member.role, 'sensors:see') ? listSensorRecords(db, siteId) : [],
     listStandingPieces(db, siteId, viewerOf(member)),
     countPieces(db, siteId, isOnlooker(member)),
   ])
-  const pieceIds = new Set([...pieceIdsOf(records), ...pieces.map((piece) => piece.id)])
+  const candidates = records.some((carry) => isWhatever(carry, now))
+    ? await listWhateverCandidates(db, siteId)
+    : []
+  const pieceIds = new Set([...pieceIdsOf(records), ...pieces.map((piece) => piece.id), ...candidates])
   const material = await loadCarryMaterial(db, member, [...pieceIds], roomIdsOf(records), now)
   const carries = await viewCarries(db, member, records, now, material)
   const out = byUrgency(carries.filter((carry) => carry.state === 'out'))
@@ -67,6 +72,12 @@ export async function getNow(db: Kysely<Database>, member: SiteMember, now: Date
     counts: { rooms: rooms.length, sensors: devices.length, pieces: pieceCount },
     ...settledOverall(rooms, now),
   }
+}
+
+/** What is out or planned, but for days of a repeat that nobody has to think of yet. */
+async function listNearCarries(db: Kysely<Database>, siteId: number, now: Date): Promise<CarryRecord[]> {
+  const open = await listOpenCarries(db, siteId)
+  return open.filter((carry) => !isTooFarAhead({ ...carry, isRepeated: carry.repeat !== null }, now))
 }
 
 const edgeOf = (carry: Carry): number =>

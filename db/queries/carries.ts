@@ -11,6 +11,7 @@ export interface CarryPieceRecord {
   outAt: Date | null
   backAt: Date | null
   backRoomName: string | null
+  isAskSkipped: boolean
 }
 
 /** A carry as the server knows it, with its pieces in the order in which they were made. */
@@ -29,6 +30,11 @@ export interface CarryRecord {
   createdBy: string | null
   createdByName: string | null
   version: number
+  /** A plan without named pieces; once it has gone, `pieces` are those that were taken. */
+  takesWhatever: boolean
+  repeat: { id: number; code: string; weekdays: number[]; atTime: string } | null
+  putOffFrom: Date | null
+  putOffAt: Date | null
   pieces: CarryPieceRecord[]
 }
 
@@ -39,6 +45,9 @@ const carryQuery = (db: Kysely<Database>, siteId: number) =>
       join.onRef('room.site_id', '=', 'carry.site_id').onRef('room.id', '=', 'carry.to_room_id'),
     )
     .leftJoin('user', 'user.id', 'carry.created_by')
+    .leftJoin('carry_repeat as repeat', (join) =>
+      join.onRef('repeat.site_id', '=', 'carry.site_id').onRef('repeat.id', '=', 'carry.repeat_id'),
+    )
     .where('carry.site_id', '=', siteId)
     .select([
       'carry.id',
@@ -54,6 +63,13 @@ const carryQuery = (db: Kysely<Database>, siteId: number) =>
       'carry.note',
       'carry.created_by',
       'carry.version',
+      'carry.takes_whatever',
+      'carry.repeat_id',
+      'carry.put_off_from',
+      'carry.put_off_at',
+      'repeat.code as repeat_code',
+      'repeat.weekdays as repeat_weekdays',
+      'repeat.at_time as repeat_at_time',
       'room.code as room_code',
       'room.name as room_name',
       'room.mark as room_mark',
@@ -62,6 +78,18 @@ const carryQuery = (db: Kysely<Database>, siteId: number) =>
     ])
 
 type Row = Awaited<ReturnType<ReturnType<typeof carryQuery>['executeTakeFirstOrThrow']>>
+
+function repeatOf(row: Row): CarryRecord['repeat'] {
+  if (row.repeat_id === null || row.repeat_code === null || row.repeat_weekdays === null) return null
+  const { repeat_at_time: atTime } = row
+  // A time of day comes as 09:00:00.
+  return {
+    id: row.repeat_id,
+    code: row.repeat_code,
+    weekdays: row.repeat_weekdays,
+    atTime: (atTime ?? '').slice(0, 5),
+  }
+}
 
 async function withPieces(
   db: Kysely<Database>,
@@ -90,6 +118,7 @@ async function withPieces(
       'part.from_room_id',
       'part.out_at',
       'part.back_at',
+      'part.ask_skipped_at',
       'source.code as from_code',
       'source.name as from_name',
       'back.name as back_name',
@@ -117,6 +146,10 @@ async function withPieces(
     createdBy: row.created_by,
     createdByName: row.created_by_name,
     version: row.version,
+    takesWhatever: row.takes_whatever,
+    repeat: repeatOf(row),
+    putOffFrom: row.put_off_from,
+    putOffAt: row.put_off_at,
     pieces: pieces
       .filter((piece) => piece.carry_id === row.id)
       .map((piece) => ({
@@ -129,6 +162,7 @@ async function withPieces(
         outAt: piece.out_at,
         backAt: piece.back_at,
         backRoomName: piece.back_name,
+        isAskSkipped: piece.ask_skipped_at !== null,
       })),
   }))
 }

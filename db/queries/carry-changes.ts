@@ -10,7 +10,11 @@ export interface CarryToInsert {
   plannedAt: Date
   stayMinutes: number
   note: string
-  userId: string
+  /** Null for what was planned by somebody who has left. */
+  userId: string | null
+  takesWhatever?: boolean
+  /** The plan that comes again which it is one of, and the day that it stands for. */
+  repeat?: { id: number; on: string }
   pieces: readonly { pieceId: number; fromRoomId: number | null }[]
 }
 
@@ -38,6 +42,9 @@ export async function insertCarry(
       note: carry.note,
       created_by: carry.userId,
       created_at: now,
+      takes_whatever: carry.takesWhatever ?? false,
+      repeat_id: carry.repeat?.id ?? null,
+      repeat_on: carry.repeat?.on ?? null,
     })
     .returning(['id', 'code'])
     .executeTakeFirstOrThrow()
@@ -52,6 +59,8 @@ async function insertCarryPieces(
   cover: Cover,
   pieces: CarryToInsert['pieces'],
 ): Promise<void> {
+  // A plan for whatever is taken names nothing.
+  if (pieces.length === 0) return
   await db
     .insertInto('carry_piece')
     .values(
@@ -95,6 +104,9 @@ export interface CarryColumns {
   startedAt?: Date
   endedAt?: Date | null
   againstAdvice?: boolean
+  takesWhatever?: boolean
+  putOffFrom?: Date | null
+  putOffAt?: Date | null
 }
 
 /** Call it with the carry's row locked. */
@@ -115,6 +127,9 @@ export async function updateCarry(
       started_at: change.startedAt,
       ended_at: change.endedAt,
       against_advice: change.againstAdvice,
+      takes_whatever: change.takesWhatever,
+      put_off_from: change.putOffFrom,
+      put_off_at: change.putOffAt,
       version: eb('version', '+', 1),
     }))
     .where('site_id', '=', siteId)
@@ -128,6 +143,7 @@ export interface CarryPieceColumns {
   outAt?: Date
   backAt?: Date | null
   backRoomId?: number | null
+  askSkippedAt?: Date | null
 }
 
 /** Call it with the carry's row locked. */
@@ -146,6 +162,7 @@ export async function updateCarryPiece(
       out_at: change.outAt,
       back_at: change.backAt,
       back_room_id: change.backRoomId,
+      ask_skipped_at: change.askSkippedAt,
     })
     .where('site_id', '=', siteId)
     .where('carry_id', '=', carryId)

@@ -84,6 +84,8 @@ export interface CarryForHeadline {
   plannedAt: string
   stayMinutes: number
   pieces: readonly { number: string; check: PieceCheck | null; isOut: boolean; isOverdue: boolean }[]
+  /** What is said of a plan for whatever is taken; absent for any other. */
+  whatever?: string | undefined
 }
 
 /** The most pressing thing about a carry, verb first. */
@@ -93,8 +95,14 @@ export function carryHeadline(carry: CarryForHeadline, clock: { timeZone: string
     piece.check === null ? [] : [{ ...piece, check: piece.check }],
   )
   if (carry.state === 'back') return `${namesOf(carry.pieces)} back from ${carry.roomName}.`
-  if (carry.state === 'called-off') return `Called off: ${namesOf(carry.pieces)} stayed.`
+  if (carry.state === 'called-off')
+    return carry.pieces.length === 0 ? 'Called off.' : `Called off: ${namesOf(carry.pieces)} stayed.`
   if (carry.state === 'planned') {
+    if (carry.whatever !== undefined) return `Planned for ${moment(carry.plannedAt)}. ${carry.whatever}`
+    if (judged.length === 0) {
+      const what = carry.pieces.length === 0 ? 'Whatever you take' : namesOf(carry.pieces)
+      return `Planned for ${moment(carry.plannedAt)}. ${what} will be judged from two days before.`
+    }
     const check = checkHeadline(judged, carry.roomName, carry.stayMinutes, clock)
     return `Planned for ${moment(carry.plannedAt)}. ${check}`
   }

@@ -3,6 +3,8 @@ import type { Stage } from '@/lib/pieces/piece'
 import type { QuietHours } from '@/lib/sites/local-time'
 import type { Role } from '@/lib/sites/permissions'
 import type { Mark, Rule } from './notice'
+import type { RuleBook } from './rule-settings'
+import type { Surroundings } from './surroundings'
 
 /** What deciding looks at. All instants are epoch ms; the words are made in the site's zone. */
 export interface NoticeInputs {
@@ -10,6 +12,10 @@ export interface NoticeInputs {
   carries: NoticeCarry[]
   sensors: NoticeSensor[]
   people: NoticePerson[]
+  /** What the site chose for its rules. Absent: everything as it comes. */
+  rules?: RuleBook
+  /** Rooms, pieces at rest and the rest of the yard. Absent: not looked at this time, and nothing is said of it. */
+  surroundings?: Surroundings
 }
 
 export interface NoticeCarry {
@@ -22,6 +28,8 @@ export interface NoticeCarry {
   madeBy: string | null
   /** When the air that its verdict rests on was last read; null: never. */
   airAt: number | null
+  /** A plan without named pieces: `pieces` are the boxes that it is judged by. Absent: it names its pieces. */
+  takesWhatever?: boolean
   pieces: NoticePiece[]
 }
 
@@ -45,6 +53,8 @@ export interface NoticeSensor {
   silentFrom: number | null
   /** Numbers of pieces that are out in its room, which nobody then watches. */
   piecesOutThere: string[]
+  /** Charge last told, percent of full; null or absent: it never told one. */
+  batteryPct?: number | null
 }
 
 export interface NoticePerson {
@@ -98,9 +108,36 @@ export interface Episode {
   rule: Rule
   subject: string
   key: string
-  state: 'pending' | 'telling'
+  /** `over`: it began and ended before anybody looked, and opens in the history without being told. */
+  state: 'pending' | 'telling' | 'over'
   beganAt: number
+  /** With `over` only. */
+  endedAt?: number
   hold?: VerdictHold
+}
+
+/** An episode on record: every open one, and those that ended lately. */
+export interface KnownEpisode {
+  rule: string
+  subject: string
+  key: string
+  isOpen: boolean
+  beganAt: number
+  /** When it was first told of; null: it never was. */
+  toldAt: number | null
+  endedAt: number | null
+}
+
+/** What somebody answered to a notice. */
+export interface NoticeAnswer {
+  rule: string
+  subject: string
+  episodeKey: string
+  userId: string
+  answer: 'in' | 'going' | 'cant' | 'later' | 'nothing'
+  at: number
+  /** For "later": when to ask again. */
+  until: number | null
 }
 
 export interface NoticeState {
@@ -108,6 +145,10 @@ export interface NoticeState {
   told: ReadonlySet<string>
   /** Holds of the open episodes of planned carries, by subject and key joined with a space. */
   holds: ReadonlyMap<string, VerdictHold>
+  /** Absent: none on record. */
+  known?: readonly KnownEpisode[]
+  /** Of the last days. Absent: none. */
+  answers?: readonly NoticeAnswer[]
 }
 
 export interface NewNotice {
@@ -122,6 +163,7 @@ export interface NewNotice {
   carryCode?: string
   pieceCode?: string
   sensorCode?: string
+  roomCode?: string
   /** Whom it concerns; how and when each hears of it is their own choice (see `routing.ts`). */
   to: Recipient[]
 }

@@ -65,6 +65,69 @@ export const mouldCautionHumidityPct = 80
 
 /** A bring-back can be undone for this long. A guess: longer than it takes to notice a wrong press. */
 export const undoBringBackMs = 10 * minuteMs
+/** And so can a put-off. A guess. */
+export const undoPutOffMs = 10 * minuteMs
 
 /** A plan that nobody started is not spoken of any more this long after its hour: the moment is past. A guess. */
 export const planLapsesMs = 60 * minuteMs
+
+/** No answer for this long after "bring it in" or lock-up: the rest of the house list is told. A guess. */
+export const nextPersonAfterMs = 20 * minuteMs
+/** Whoever is going now is asked again after this long. From the job itself: across a yard and back. A guess. */
+export const askAgainAfterMs = 15 * minuteMs
+
+/** A room rule clears this far inside its limit, points of % MC (derived: noise between two rooms). */
+export const roomHysteresisPct = noTellingDifferencePct
+/** The same for a limit of humidity, % RH: 0.7 points near 40 to 75 % RH are about this (derived, slope of Eq. 1). */
+export const humidityHysteresisPct = 3
+
+/** A keep room's band: own middle of twelve months, this far either way, for so many days (derived). */
+export const keepBandHalfPct = 1.5
+export const keepBandDays = 2
+/** Days of record before a room's own middle counts; until then the common band. Common practice, no source. */
+export const ownMiddleDaysMin = 60
+export const commonBandLowPct = 7
+export const commonBandHighPct = 12
+
+/** Damper than its own normal: above nine in ten days of the same weeks of earlier years, by more than two rooms differ. */
+export const normalQuantile = 0.9
+/** The same weeks: this many days either way of the same day of earlier years, whatever the hemisphere. A guess. */
+export const sameWeeksDays = 21
+/** Fewer such days say nothing. A guess. */
+export const sameWeeksDaysMin = 20
+export const damperDays = 2
+
+/** Little growth of mould below 75 to 80 % RH (from the literature on ASHRAE 160-2009; 75 is the cautious end). */
+export const mouldTellHumidityPct = 75
+export const mouldTellDays = 7
+/** 30-day mean of surface RH and of temperature: ASHRAE 160-2009, as told by ASTM STP 1599 (2017). */
+export const mouldWarnHumidityPct = 80
+export const mouldWarnDays = 30
+export const mouldWarnC = 5
+/** Inside surface of a wall: T room - (1 - f)(T room - T outside). Cautious default, from memory. */
+export const wallTemperatureFactor = 0.75
+/** Rooms that keep no dry work are spoken of once a season. */
+export const seasonDays = 90
+
+/** Resting wood dries and checks in such air. A guess. */
+export const tooDryHumidityPct = 35
+export const tooDryDays = 3
+
+/** Iron is about to be wet when it is this near to the dew point of its air, K (from memory). */
+export const coldIronK = 1
+/** And dry again this much further off. A guess. */
+export const coldIronClearK = 1
+
+/** A tub that falls this far within an hour was carried out of the house. A guess. */
+export const tubFallK = 4
+
+/** Told when a box at rest has used this share of its allowance: early enough to move it. A guess. */
+export const losingFitUsedPct = 80
+export const losingFitClearPct = 10
+
+/** A coin cell holds its voltage to near the end: what it tells at this charge is weeks, not months. From memory. */
+export const batteryLowPct = 15
+export const batteryClearPct = 5
+
+/** More than a slip of one message. A guess. */
+export const refusedPerHour = 10

@@ -3,9 +3,12 @@ import { loadCarryMaterial } from '@/db/queries/carry-inputs'
 import { type CarryRecord, listOpenCarries } from '@/db/queries/carries'
 import { listNoticePeople, type NoticeSite } from '@/db/queries/notice-state'
 import { listHangingSensors, listRoomRecords } from '@/db/queries/rooms'
+import { listWhateverCandidates } from '@/db/queries/whatever'
 import type { Database } from '@/db/schema'
 import { carryCheck } from '@/lib/carry/check'
 import { carryCheckInput, type CarryMaterial } from '@/lib/carry/material'
+import { isTooFarAhead } from '@/lib/carry/repeat'
+import { whateverJudged } from '@/lib/carry/whatever'
 import type { NoticeCarry, NoticeInputs, NoticePiece, NoticeSensor } from '@/lib/notices/inputs'
 import { freshForMs, silentAfterMs } from '@/lib/notices/policy'
 import { isKeepingRoom } from '@/lib/rooms/room'
@@ -17,8 +20,13 @@ export async function loadNoticeInputs(
   now: Date,
 ): Promise<NoticeInputs> {
   const { siteId } = site
-  const carries = await listOpenCarries(db, siteId)
-  const pieceIds = carries.flatMap((carry) => carry.pieces.map((piece) => piece.pieceId))
+  const carries = (await listOpenCarries(db, siteId)).filter(
+    (carry) => !isTooFarAhead({ ...carry, isRepeated: carry.repeat !== null }, now),
+  )
+  const candidates = carries.some(isWhatever) ? await listWhateverCandidates(db, siteId) : []
+  const pieceIds = [
+    ...new Set([...candidates, ...carries.flatMap((carry) => carry.pieces.map((piece) => piece.pieceId))]),
+  ]
   const roomIds = carries.map((carry) => carry.toRoom.roomId)
   const [material, people, hanging, rooms] = await Promise.all([
     loadCarryMaterial(db, site, pieceIds, roomIds, now),
@@ -26,7 +34,10 @@ export async function loadNoticeInputs(
     listHangingSensors(db, siteId),
     listRoomRecords(db, siteId),
   ])
-  const open = carries.map((carry) => ({ roomId: carry.toRoom.roomId, carry: noticeCarry(material, carry) }))
+  const open = carries.map((carry) => ({
+    roomId: carry.toRoom.roomId,
+    carry: noticeCarry(material, carry, candidates),
+  }))
 
   const sensors = hanging
     .filter((sensor) => sensor.kind === 'device')
@@ -56,10 +67,29 @@ export async function loadNoticeInputs(
   return { site, carries: open.map(({ carry }) => carry), sensors, people }
 }
 
-function noticeCarry(material: CarryMaterial, carry: CarryRecord): NoticeCarry {
+const isWhatever = (carry: CarryRecord): boolean => carry.takesWhatever && carry.state === 'planned'
+
+/** The boxes that a plan without named pieces is judged by, as if they were to go. */
+function whateverParts(material: CarryMaterial, carry: CarryRecord, candidates: readonly number[]) {
+  const { pieces } = whateverJudged(material, candidates, {
+    toRoomId: carry.toRoom.roomId,
+    startsAt: carry.plannedAt,
+    stayMinutes: carry.stayMinutes,
+    cover: carry.cover,
+  })
+  return pieces.map(({ pieceId }) => ({ pieceId, cover: carry.cover, outAt: null, backAt: null }))
+}
+
+function noticeCarry(
+  material: CarryMaterial,
+  carry: CarryRecord,
+  candidates: readonly number[],
+): NoticeCarry {
   const air = material.rooms.get(carry.toRoom.roomId)?.air
   const isOut = carry.state === 'out'
-  const pieces = carry.pieces
+  const takesWhatever = isWhatever(carry)
+  const parts = takesWhatever ? whateverParts(material, carry, candidates) : carry.pieces
+  const pieces = parts
     .filter((piece) => !isOut || (piece.outAt !== null && piece.backAt === null))
     .flatMap((piece): NoticePiece[] => {
       const known = material.pieces.get(piece.pieceId)
@@ -89,6 +119,7 @@ function noticeCarry(material: CarryMaterial, carry: CarryRecord): NoticeCarry {
     roomName: carry.toRoom.name,
     madeBy: carry.createdBy,
     airAt: air === undefined || air.kind === 'never' ? null : new Date(air.at).getTime(),
+    takesWhatever,
     pieces,
   }
 }
