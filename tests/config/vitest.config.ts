@@ -70,6 +70,7 @@ export default defineConfig({
           testTimeout: 90_000,
           hookTimeout: 90_000,
           fileParallelism: false,
+          maxConcurrency: 2,
         },
       },
     ],
