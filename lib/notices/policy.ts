@@ -19,8 +19,12 @@ export const warnBeforePlannedMs = 60 * minuteMs
 export const warnEveningBefore = '19:00'
 
 /** Told before the early edge by the larger of 10 min and a quarter of the time out, an hour at most (derived). */
-export function warnBeforeEarlyEdgeMs(timeOutMs: number): number {
-  return Math.min(60 * minuteMs, Math.max(10 * minuteMs, timeOutMs / 4))
+export function warnBeforeEarlyEdgeMs(
+  timeOutMs: number,
+  leastMs: number = 10 * minuteMs,
+  mostMs: number = 60 * minuteMs,
+): number {
+  return Math.min(Math.max(leastMs, mostMs), Math.max(leastMs, timeOutMs / 4))
 }
 
 /** Last call comes this long before quiet hours. A guess. */
@@ -50,8 +54,8 @@ export function freshForMs(options: {
 }
 
 /** A sensor is silent after 6 of its usual gaps, 2 h at least. A guess. */
-export function silentAfterMs(usualGapS: number | null): number {
-  return Math.max(2 * hourMs, 6 * (usualGapS ?? assumedGapS) * 1000)
+export function silentAfterMs(usualGapS: number | null, gaps = 6, leastMs: number = 2 * hourMs): number {
+  return Math.max(leastMs, gaps * (usualGapS ?? assumedGapS) * 1000)
 }
 
 /** Doubt of RH, ± % RH (middle 8 in 10): a common sensor's data sheet figure, from memory; typed in by hand, a guess. */
@@ -67,6 +71,8 @@ export const mouldCautionHumidityPct = 80
 export const undoBringBackMs = 10 * minuteMs
 /** And so can a put-off. A guess. */
 export const undoPutOffMs = 10 * minuteMs
+/** The end of a plan that comes again can be taken back for this long. A guess. */
+export const undoEndRepeatMs = 24 * hourMs
 
 /** A plan that nobody started is not spoken of any more this long after its hour: the moment is past. A guess. */
 export const planLapsesMs = 60 * minuteMs

@@ -38,6 +38,16 @@ const tomorrow = new Date(Date.now() + 86_400_000).toISOString()
 const start = ({ asOwner, site }: Arranging) =>
   asOwner('POST', `/carries/${site.things.carry}/start`, { againstAdvice: true })
 
+/** The hour of the carry that is put off. */
+const plannedFor = new Date(Date.now() + 7_200_000).toISOString()
+const planFor = ({ db, site }: Arranging) =>
+  db
+    .updateTable('carry')
+    .set({ planned_at: plannedFor })
+    .where('site_id', '=', site.siteId)
+    .where('code', '=', site.things.carry)
+    .execute()
+
 const callOff = ({ asOwner, site }: Arranging) => asOwner('POST', `/carries/${site.things.carry}/call-off`)
 
 export const routeTable: Record<string, Row> = {
@@ -203,6 +213,29 @@ export const routeTable: Record<string, Row> = {
     },
   },
   'POST /api/v1/sites/[site]/carries/[carry]/call-off': { action: 'carries:do' },
+  'POST /api/v1/sites/[site]/carries/[carry]/put-off': {
+    action: 'carries:do',
+    body: () => ({ from: plannedFor, to: tomorrow }),
+    prepare: planFor,
+  },
+  'POST /api/v1/sites/[site]/carries/[carry]/put-back': { action: 'carries:do' },
+
+  'GET /api/v1/sites/[site]/repeats': { action: 'carries:see' },
+  'POST /api/v1/sites/[site]/repeats': {
+    action: 'carries:do',
+    body: ({ piece, shop }) => ({
+      ...{ pieceIds: [piece], toRoomId: shop, cover: 'open' },
+      ...{ weekdays: [2, 5], atTime: '09:00', stayMinutes: 60 },
+    }),
+    status: 201,
+  },
+  'PATCH /api/v1/sites/[site]/repeats/[repeat]': {
+    action: 'carries:do',
+    body: ({ piece }) => ({ atTime: '10:30', pieceIds: [piece] }),
+    ifMatch: true,
+  },
+  'DELETE /api/v1/sites/[site]/repeats/[repeat]': { action: 'carries:do', ifMatch: true, status: 204 },
+  'POST /api/v1/sites/[site]/repeats/[repeat]/restore': { action: 'carries:do' },
 
   'GET /api/v1/sites/[site]/species': {
     action: 'woods:see',

@@ -1,5 +1,6 @@
 import { randomBytes } from 'node:crypto'
 import { type Kysely, sql } from 'kysely'
+import { insertRepeat } from '@/db/queries/carry-repeats'
 import { newCode, takeIds } from '@/db/queries/counters'
 import { insertOutcome } from '@/db/queries/outcomes'
 import { insertPieceEvent } from '@/db/queries/piece-events'
@@ -22,6 +23,8 @@ export interface Things {
   /** A weighing of that piece. */
   weighing: string
   carry: string
+  /** A plan that comes again, for whatever is taken. */
+  repeat: string
   /** A wood of the site's own. */
   wood: string
   notice: string
@@ -79,6 +82,15 @@ export async function makeSite(db: Kysely<Database>, team: Team): Promise<WorldS
     const piece = await makePiece(trx, siteId, room.id)
     const weighing = await makeWeighing(trx, siteId, piece.id)
     const carry = await makeCarry(trx, siteId, { from: room.id, to: shop.id, piece: piece.id })
+    const repeat = await insertRepeat(
+      trx,
+      siteId,
+      {
+        ...{ toRoomId: shop.id, cover: 'open', weekdays: [2], atTime: '09:00', stayMinutes: 60 },
+        ...{ takesWhatever: true, note: '', userId: team.owner, pieceIds: [] },
+      },
+      now,
+    )
     const wood = await makeWood(trx, siteId)
     const notice = await makeNotice(trx, siteId)
     const event = await makeEvent(trx, siteId, piece.id, team.hand)
@@ -109,6 +121,7 @@ export async function makeSite(db: Kysely<Database>, team: Team): Promise<WorldS
         piece: piece.code,
         weighing,
         carry,
+        repeat,
         wood,
         notice,
         event,

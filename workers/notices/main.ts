@@ -6,8 +6,10 @@ import { listen } from '../_shared/listen'
 import { createLogger } from '../_shared/logger'
 import { onShutdown } from '../_shared/shutdown'
 import { readRunningConfig } from '../env'
+import { forecastTurn } from '../forecast/forecast-sites'
 import { followSites } from '../wood/follow-sites'
 import { evaluateAll } from './evaluate'
+import { makeRepeats } from './make-repeats'
 
 /** Often enough for a time told to the minute; what a person does is looked at at once. */
 const intervalMs = 30_000
@@ -45,6 +47,34 @@ const follow = every(
     if (counts.rebuilt > 0) logger.info(counts, 'wood followed anew')
   },
 )
+/** Once an hour for each site; asked each minute whether it is time. */
+const forecasts = forecastTurn(db)
+const forecast = every(
+  {
+    intervalMs: followIntervalMs,
+    onError: (error) => logger.error({ err: error }, 'could not forecast'),
+  },
+  async () => {
+    const counts = await forecasts.run(new Date(), (site, error) =>
+      logger.error({ err: error, site }, 'could not forecast for a site'),
+    )
+    if (counts.made > 0) logger.info(counts, 'forecasts made')
+  },
+)
+/** A week ahead, so a minute is soon enough; whoever makes a plan has its carries made at once. */
+const repeatIntervalMs = 60_000
+const repeats = every(
+  {
+    intervalMs: repeatIntervalMs,
+    onError: (error) => logger.error({ err: error }, 'could not make the carries of repeats'),
+  },
+  async () => {
+    const made = await makeRepeats(db, new Date(), (site, error) =>
+      logger.error({ err: error, site }, 'could not make the carries of a site'),
+    )
+    if (made > 0) logger.info({ made }, 'carries of repeats made')
+  },
+)
 const listener = listen(config.databaseUrl, {
   onMessage: ({ kind }) => {
     if (kind !== 'reading' && kind !== 'notice') loop.nudge()
@@ -58,6 +88,8 @@ onShutdown(
     await listener.stop()
     await loop.stop()
     await follow.stop()
+    await repeats.stop()
+    await forecast.stop()
     await db.destroy()
   },
   { logger },
