@@ -6,6 +6,7 @@ import { dayOfInstant, monthOf, monthsBefore } from '@/lib/climate/days'
 import { UNLEARNED_PACE } from '@/lib/follow/learned-pace'
 import { roomAir } from '@/lib/rooms/air'
 import type { Database } from '../schema'
+import { findForecasts } from './forecasts'
 import { findMoisture, findPaces, followedOf, listRoomHours } from './moisture'
 import { type FactsRow, listOutings, listPieceFacts, listStays } from './piece-facts'
 import { findMonthMeans, findRoomYears, monthKey } from './room-figures'
@@ -44,8 +45,10 @@ export async function loadCarryMaterial(
   const assumedKeep = assumedKeepRoom(rooms)
   const keepRoomOf = (piece: FactsRow) => piece.keepRoomId ?? assumedKeep?.id ?? null
   const stayRoomIds = [...stays.values()].flat().map((stay) => stay.roomId)
-  const [hours, cuts] = await Promise.all([
-    listRoomHours(db, siteId, new Set([...stayRoomIds, ...toRoomIds]), new Date(sinceMs), now),
+  const airRoomIds = new Set([...stayRoomIds, ...toRoomIds])
+  const [hours, forecasts, cuts] = await Promise.all([
+    listRoomHours(db, siteId, airRoomIds, new Date(sinceMs), now),
+    findForecasts(db, siteId, airRoomIds, now),
     findMonthMeans(
       db,
       siteId,
@@ -61,6 +64,7 @@ export async function loadCarryMaterial(
     ),
     hours: hours.get(roomId) ?? new Map(),
     emcPctMean: years.get(roomId)?.emcPctMean ?? null,
+    forecast: forecasts.get(roomId) ?? null,
   })
   const pieceMaterial = (piece: FactsRow): PieceMaterial => {
     const moisture = stored.get(piece.id)
@@ -78,11 +82,24 @@ export async function loadCarryMaterial(
   }
   return {
     now,
+    tub: readTub(rooms, roomMaterial),
     pieces: new Map(pieces.map((piece) => [piece.id, pieceMaterial(piece)])),
     rooms: new Map(
       [...new Set([...rooms.map((room) => room.id), ...stayRoomIds])].map((id) => [id, roomMaterial(id)]),
     ),
   }
+}
+
+/** The first tub with a sensor of its own that was heard lately. */
+function readTub(
+  rooms: readonly RoomRecord[],
+  material: (roomId: number) => RoomMaterial,
+): CarryMaterial['tub'] {
+  for (const { id, name, kind } of rooms) {
+    const air = kind === 'tub' ? material(id).air : undefined
+    if (air?.kind === 'fresh') return { name, emcPct: air.emcPct, temperatureC: air.temperatureC }
+  }
+  return undefined
 }
 
 /** How well the moisture content at the cut is known, ± % MC: followed then; a room's month; a month alone. */

@@ -1,8 +1,10 @@
 import { type Kysely, sql } from 'kysely'
 import type { Database } from '../schema'
+import { deleteOldForecasts } from './forecasts'
 import { deleteOldAnswers } from './idempotency'
 import { ensurePartitions, monthsAhead } from './partitions'
 import { deleteOldCounts } from './rate-counts'
+import { deleteExpiredLinks } from './used-links'
 
 /** Refused messages kept for each site; the newest stay. */
 const refusedKept = 1_000
@@ -14,6 +16,8 @@ export async function doUpkeep(db: Kysely<Database>, now: Date): Promise<void> {
   await ensurePartitions(db, monthsAhead(now))
   await deleteOldAnswers(db, now)
   await deleteOldCounts(db, now)
+  await deleteOldForecasts(db, now)
+  await deleteExpiredLinks(db, now)
   await sql`
     delete from refused using (
       select site_id, id from (

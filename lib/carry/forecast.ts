@@ -11,11 +11,6 @@ const DAYS_BACK = 3
 /** What is shown while the coming hours are carried over from yesterday. */
 export const NO_FORECAST_NOTE =
   'No forecast yet: the same hours as yesterday, with the present difference fading over 6 h.'
-const FORECAST_NOTE = 'Forecast from the room’s own record, as if nobody warmed it.'
-
-/** What the coming hours of a room are taken from, in words. */
-export const forecastNote = (forecast: RoomForecast | null | undefined): string =>
-  (forecast ?? null) === null ? NO_FORECAST_NOTE : FORECAST_NOTE
 
 export type AirHour = { readonly at: number; readonly emcPct: number; readonly temperatureC: number }
 export type AirRecord = {

@@ -7,12 +7,15 @@ import type { RoomAir } from '@/lib/rooms/room'
 import type { AirThere, CarryCheckInput, CutMc, PieceFacts } from './carry-check'
 import { aheadDoubtPct, comingHours, forecastHours } from './forecast'
 import { woodOfPiece } from './joint-defaults'
+import { moistureOfToldAir, type ToldAir } from './told-air'
 
 /** Everything that checks of carries look at, as loaded by `db/queries/carry-inputs.ts`: for any number of pieces. */
 export interface CarryMaterial {
   now: Date
   pieces: ReadonlyMap<number, PieceMaterial>
   rooms: ReadonlyMap<number, RoomMaterial>
+  /** The site's tub, where a sensor of its own was heard lately: its readings rule in the place of a reckoned tub. */
+  tub?: { name: string; emcPct: number; temperatureC: number } | undefined
 }
 
 export interface PieceMaterial {
@@ -153,28 +156,84 @@ export interface CarryAsked {
   stayMinutes: number
   cover: Cover
 }
+/** To a place that is no room of the site, in air as told. */
+export type ToldCarryAsked = Omit<CarryAsked, 'toRoomId'> & { toAir: ToldAir }
 
 /** The input of one piece's check; `undefined` for a piece that was not loaded. */
-export function carryCheckInput(material: CarryMaterial, asked: CarryAsked): CarryCheckInput | undefined {
+export function carryCheckInput(
+  material: CarryMaterial,
+  asked: CarryAsked | ToldCarryAsked,
+): CarryCheckInput | undefined {
   const piece = material.pieces.get(asked.pieceId)
   if (piece === undefined) return undefined
-  const room = material.rooms.get(asked.toRoomId)
-  const now = material.now.getTime()
-  const there = airThere(room?.air)
   const startsAt = asked.startsAt.getTime()
   return {
-    now,
+    now: material.now.getTime(),
     piece: piece.facts,
     start: woodAt(material, piece, startsAt),
     cut: piece.cut,
-    there,
-    airs: room !== undefined && there.kind === 'fresh' ? airsOfStay(material, piece, room, there, asked) : [],
-    airDoubtPct: airDoubtPct(room, now, startsAt, asked.stayMinutes * 60_000),
+    ...('toAir' in asked ? toldThere(material, asked) : roomThere(material, piece, asked)),
     pace: piece.pace,
     startsAt,
     stayMinutes: asked.stayMinutes,
     cover: asked.cover,
+    tub: material.tub,
   }
+}
+
+type There = Pick<CarryCheckInput, 'there' | 'airs' | 'airDoubtPct'>
+
+function roomThere(material: CarryMaterial, piece: PieceMaterial, asked: CarryAsked): There {
+  const room = material.rooms.get(asked.toRoomId)
+  const now = material.now.getTime()
+  const there = airThere(room?.air)
+  return {
+    there,
+    airs: room !== undefined && there.kind === 'fresh' ? airsOfStay(material, piece, room, there, asked) : [],
+    airDoubtPct: airDoubtPct(room, now, asked.startsAt.getTime(), asked.stayMinutes * 60_000),
+  }
+}
+
+/** Air as told stays as told: nobody knows its hours. */
+function toldThere(material: CarryMaterial, { toAir, startsAt, cover }: ToldCarryAsked): There {
+  const { temperatureC, humidityPct } = toAir
+  const { emcPct, emcDoubtPct } = moistureOfToldAir(toAir)
+  const air = { at: startsAt.getTime(), emcPct, temperatureC, isKnown: true }
+  return {
+    there: { kind: 'told', emcPct, temperatureC, humidityPct },
+    airs: [inCover(material, air, cover)],
+    airDoubtPct: Math.hypot(emcDoubtPct, HOUSE_SENSOR_DOUBT_PCT),
+  }
+}
+
+/** Air to come as a piece meets it in a cover: in a tub that is read, the tub's own. */
+const inCover = (material: CarryMaterial, air: Omit<AirFrom, 'cover'>, cover: Cover): AirFrom =>
+  cover === 'tub' && material.tub !== undefined
+    ? { ...air, emcPct: material.tub.emcPct, cover: 'closed' }
+    : { ...air, cover }
+
+/** The room that a piece comes back to: where it is, or for one that is out, where it was before; else its keep room. */
+function homeRoomId(piece: PieceMaterial, asked: CarryAsked | ToldCarryAsked): number | null {
+  const toRoomId = 'toAir' in asked ? null : asked.toRoomId
+  return piece.stays.findLast((stay) => stay.roomId !== toRoomId)?.roomId ?? piece.keepRoomId
+}
+
+/** As `carryCheckInput`, with the air of the room that the piece comes home to, from the start of the stay on. */
+export function carryThereAndBack(
+  material: CarryMaterial,
+  asked: CarryAsked | ToldCarryAsked,
+): CarryCheckInput | undefined {
+  const input = carryCheckInput(material, asked)
+  const piece = material.pieces.get(asked.pieceId)
+  const roomId = piece === undefined ? null : homeRoomId(piece, asked)
+  const room = roomId === null ? undefined : material.rooms.get(roomId)
+  if (input === undefined || roomId === null || room === undefined || room.air.kind === 'never') return input
+  const now = material.now.getTime()
+  const atHome = [{ roomId, fromAt: asked.startsAt, toAt: null, cover: 'closed' as const }]
+  const recorded = airsOf(atHome, (id) => material.rooms.get(id), input.startsAt, now)
+  const hours = Math.min(forecastHoursMax, Math.max(72, Math.ceil(asked.stayMinutes / 60) + 48))
+  const coming = comingAirs(material, room, room.air, Math.max(input.startsAt, now), hours)
+  return { ...input, home: [...recorded, ...coming.map((hour) => ({ ...hour, cover: 'closed' as const }))] }
 }
 
 /** The air of a stay: what was recorded since it went, and what is to come, in the cover asked about. */
@@ -191,5 +250,5 @@ function airsOfStay(
   const stayHours = Math.ceil(asked.stayMinutes / 60)
   const hours = Math.min(forecastHoursMax, Math.max(72, stayHours + 48))
   const coming = comingAirs(material, room, there, Math.max(startsAt, now), hours)
-  return [...recorded, ...coming.map((hour) => ({ ...hour, cover: asked.cover }))]
+  return [...recorded, ...coming.map((hour) => inCover(material, hour, asked.cover))]
 }

@@ -5,8 +5,8 @@ import { solveDamped } from './ridge'
 /** Blocks of the record that are left out in turn, so that errors are of hours that the fit has not seen. */
 const BLOCKS = 6
 /**
- * Share of each feature's own spread that is added to it: hours hang together, so that weeks of them hold few spells of
- * weather. Status: fitted to simulated rooms of eight seeds, over winter, spring and summer; flat around its best.
+ * Share of each feature's own spread that is added to it: weeks of hours hold few spells of weather. Status: tried on
+ * simulated rooms of four seeds in four seasons; between 0.03 and 0.4 the error hardly changes.
  */
 const DAMPING = 0.06
 /** Fewer pairs of hours than this tell nothing. */

@@ -1,3 +1,4 @@
+import type { RoomKind } from '@/lib/rooms/room'
 import { type FeatureTable, featuresOf } from './features'
 import { type HourlyRecord, hourOfDayIn, HOUR_MS, type Measure, MEASURES } from './record'
 import { FORECAST_HOURS } from './room-forecast'
@@ -67,4 +68,15 @@ export function prepared(input: ForecastInput): Prepared {
     courses: without.courses,
     hourOfDay,
   }
+}
+
+/** Rooms in which somebody lights a fire now and then; a house is warmed by the clock, which its hours of day tell. */
+export const isWarmedByHand = (kind: RoomKind): boolean =>
+  kind === 'shop' || kind === 'store' || kind === 'van'
+
+/** The hours of a room on record that were warmed by hand, epoch ms. */
+export function warmedHours(input: ForecastInput): ReadonlySet<number> {
+  const { isWarmed } = prepared(input)
+  const { firstAt } = input.record
+  return new Set([...isWarmed].flatMap((warmed, n) => (warmed === 1 ? [firstAt + n * HOUR_MS] : [])))
 }
