@@ -297,7 +297,7 @@ const makeOutcome = (db: Kysely<Database>, siteId: number, pieceId: number): Pro
 const tables = [
   ...['room', 'sensor', 'placement', 'piece', 'piece_place', 'carry', 'carry_piece', 'notice', 'notice_seen'],
   ...['episode', 'delivery', 'change', 'site_wood', 'reading', 'room_hour', 'room_day', 'refused'],
-  ...['piece_event', 'outcome'],
+  ...['piece_event', 'outcome', 'carry_repeat', 'carry_repeat_piece', 'lock_up'],
 ]
 
 /** Everything of a site in one text: equal before and after means that nothing was changed. */
