@@ -54,6 +54,15 @@ const schema = z.object({
     .regex(/^[A-Za-z0-9-]{1,64}$/, { error: 'must be the name of a request header, like x-real-ip' })
     .transform((name) => name.toLowerCase())
     .optional(),
+  VAPID_PUBLIC_KEY: z
+    .string()
+    .regex(/^[A-Za-z0-9_-]{87}$/, { error: 'must be a public key of 65 bytes in base64url' })
+    .optional(),
+  VAPID_PRIVATE_KEY: z
+    .string()
+    .regex(/^[A-Za-z0-9_-]{43}$/, { error: 'must be a private key of 32 bytes in base64url' })
+    .optional(),
+  PUSH_TRAP_PORT: wholeNumber(1, 65535).optional(),
   LOG_LEVEL: z
     .enum(['debug', 'info', 'warn', 'error'], { error: 'must be debug, info, warn or error' })
     .default('info'),
@@ -61,7 +70,7 @@ const schema = z.object({
 })
 
 /** These may hold a password, so a refusal does not repeat their value. */
-const secret: ReadonlySet<string> = new Set(['DATABASE_URL', 'SMTP_URL', 'AUTH_SECRET'])
+const secret: ReadonlySet<string> = new Set(['DATABASE_URL', 'SMTP_URL', 'AUTH_SECRET', 'VAPID_PRIVATE_KEY'])
 
 export interface Config {
   /** Unset: the supervisor makes a private cluster and tells its children the address. */
@@ -82,6 +91,10 @@ export interface Config {
   authRateLimit: number
   /** A header that the proxy in front overwrites with the true peer. Unset: no limits by peer. */
   peerAddressHeader?: string
+  /** The keys by which push services know us (RFC 8292). Unset: nothing goes to phones. */
+  vapid?: { publicKey: string; privateKey: string }
+  /** The demo's own push service, on this machine. Unset: there is none. */
+  pushTrapPort?: number
   logLevel: 'debug' | 'info' | 'warn' | 'error'
   dataDir: string
 }
@@ -111,6 +124,9 @@ export function parseConfig(source: Record<string, string | undefined>): Result<
     return err({ code: 'bad-variable', variable, sentence: `${variable} ${issue?.message ?? ''}${shown}.` })
   }
   const value = parsed.data
+  const { VAPID_PUBLIC_KEY: publicKey, VAPID_PRIVATE_KEY: privateKey } = value
+  if ((publicKey === undefined) !== (privateKey === undefined))
+    return err(missing(publicKey === undefined ? 'VAPID_PUBLIC_KEY' : 'VAPID_PRIVATE_KEY'))
   return ok({
     databaseUrl: value.DATABASE_URL,
     port: value.PORT,
@@ -124,6 +140,8 @@ export function parseConfig(source: Record<string, string | undefined>): Result<
     authSecret: value.AUTH_SECRET,
     authRateLimit: value.AUTH_RATE_LIMIT,
     peerAddressHeader: value.PEER_ADDRESS_HEADER,
+    vapid: publicKey === undefined || privateKey === undefined ? undefined : { publicKey, privateKey },
+    pushTrapPort: value.PUSH_TRAP_PORT,
     logLevel: value.LOG_LEVEL,
     dataDir: value.DATA_DIR,
   })

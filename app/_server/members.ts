@@ -4,9 +4,7 @@ import { insertChange } from '@/db/queries/changes'
 import { notifySite } from '@/db/queries/live'
 import {
   deleteMember,
-  findOwnSettings,
   listMemberRecords,
-  saveOwnSettings,
   updateRole,
   type MemberRecord,
   type SiteMember,
@@ -16,7 +14,7 @@ import { inTransaction } from '@/db/queries/transaction'
 import type { Database } from '@/db/schema'
 import { ok } from '@/lib/result'
 import type { Role } from '@/lib/sites/permissions'
-import type { Member, OwnSettings } from '@/lib/sites/site'
+import type { Member } from '@/lib/sites/site'
 import { fail, notThere, type Outcome } from './problem'
 
 const ownersAmong = (records: readonly MemberRecord[]): number =>
@@ -138,16 +136,4 @@ async function noteChange(
     after,
   })
   await notifySite(db, actor.siteId, 'site')
-}
-
-export const getOwnSettings = (db: Kysely<Database>, member: SiteMember): Promise<Required<OwnSettings>> =>
-  findOwnSettings(db, member.siteId, member.userId)
-
-export async function changeOwnSettings(
-  db: Kysely<Database>,
-  member: SiteMember,
-  change: OwnSettings,
-): Promise<Required<OwnSettings>> {
-  await saveOwnSettings(db, member.siteId, member.userId, change)
-  return findOwnSettings(db, member.siteId, member.userId)
 }

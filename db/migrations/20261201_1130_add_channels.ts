@@ -8,6 +8,8 @@ const statements = [
   `alter table delivery drop constraint delivery_state_check`,
   `alter table delivery add constraint delivery_state_check
     check (state in ('held', 'waiting', 'sent', 'given-up', 'let-go'))`,
+  // Notices that go out together are one message.
+  `alter table delivery drop constraint delivery_message_id_key`,
   // What is counted before a mail goes out: how many a person got within the hour.
   `create index delivery_sent_idx on delivery (user_id, sent_at) where sent_at is not null`,
   `create table delivery_try (
@@ -87,6 +89,10 @@ export async function down(db: Kysely<unknown>): Promise<void> {
   await sql.raw(`delete from delivery where channel = 'push'`).execute(db)
   await sql.raw(`update delivery set state = 'given-up' where state = 'let-go'`).execute(db)
   await sql.raw(`drop index delivery_sent_idx`).execute(db)
+  await sql
+    .raw(`update delivery set message_id = message_id || '.' || site_id || '.' || notice_id where tries > 0`)
+    .execute(db)
+  await sql.raw(`alter table delivery add constraint delivery_message_id_key unique (message_id)`).execute(db)
   await sql.raw(`alter table delivery drop constraint delivery_state_check`).execute(db)
   await sql
     .raw(

@@ -1,6 +1,6 @@
 import type { Kysely } from 'kysely'
 import { roleSchema, type Role } from '@/lib/sites/permissions'
-import { unitSystemSchema, type OwnSettings, type Site, type UnitSystem } from '@/lib/sites/site'
+import { unitSystemSchema, type Site, type UnitSystem } from '@/lib/sites/site'
 import type { Database } from '../schema'
 import { newTextId, siteColumns, siteOf } from './sites'
 
@@ -134,51 +134,12 @@ export async function deleteMember(
   organizationId: string,
   userId: string,
 ): Promise<void> {
-  await db.deleteFrom('member_setting').where('site_id', '=', siteId).where('user_id', '=', userId).execute()
+  for (const table of ['member_setting', 'member_rule'] as const)
+    await db.deleteFrom(table).where('site_id', '=', siteId).where('user_id', '=', userId).execute()
   await db
     .deleteFrom('member')
     .where('organizationId', '=', organizationId)
     .where('userId', '=', userId)
-    .execute()
-}
-
-export async function findOwnSettings(
-  db: Kysely<Database>,
-  siteId: number,
-  userId: string,
-): Promise<Required<OwnSettings>> {
-  const row = await db
-    .selectFrom('member_setting')
-    .where('site_id', '=', siteId)
-    .where('user_id', '=', userId)
-    .select(['unit_system', 'mail_on', 'on_house_list'])
-    .executeTakeFirst()
-  return {
-    unitSystem: unitSystemSchema.nullable().parse(row?.unit_system ?? null),
-    mailOn: row?.mail_on ?? true,
-    onHouseList: row?.on_house_list ?? false,
-  }
-}
-
-export async function saveOwnSettings(
-  db: Kysely<Database>,
-  siteId: number,
-  userId: string,
-  change: OwnSettings,
-): Promise<void> {
-  const given = {
-    unit_system: change.unitSystem,
-    mail_on: change.mailOn,
-    on_house_list: change.onHouseList,
-  }
-  await db
-    .insertInto('member_setting')
-    .values({ site_id: siteId, user_id: userId, ...given })
-    .onConflict((clash) =>
-      clash
-        .columns(['site_id', 'user_id'])
-        .doUpdateSet((eb) => ({ ...given, version: eb('member_setting.version', '+', 1) })),
-    )
     .execute()
 }
 

@@ -1,11 +1,12 @@
 import { type Kysely, sql, type Transaction } from 'kysely'
 import { z } from 'zod'
-import type { Episode, NoticePerson, NoticeState, RoutedNotice } from '@/lib/notices/inputs'
+import type { Episode, NoticeAnswer, NoticePerson, NoticeState, RoutedNotice } from '@/lib/notices/inputs'
 import { roleSchema } from '@/lib/sites/permissions'
-import { queueMail } from '../jobs'
+import { queueDelivery } from '../jobs'
 import type { Database } from '../schema'
 import { newCode, takeIds } from './counters'
 import { notifySite } from './live'
+import { listPeopleSettings } from './own-settings'
 
 const severitySchema = z.enum(['fine', 'keep-short', 'unknown', 'leave'])
 const holdSchema = z.object({
@@ -46,6 +47,11 @@ export async function listNoticeSites(db: Kysely<Database>): Promise<NoticeSite[
 
 /** Keys older than this belong to occasions that are long past. */
 const rememberMs = 8 * 24 * 3_600_000
+/** Longer than any rule waits before it tells of the same again, but for what is told once a season. */
+const rememberEpisodesMs = 100 * 24 * 3_600_000
+/** An answer counts for what is out, which is days at most. */
+const answersMs = 3 * 24 * 3_600_000
+const answerSchema = z.enum(['in', 'going', 'cant', 'later', 'nothing'])
 
 /**
  * Takes the site for one decision until the end of the transaction. False: somebody else is at it, who sees the same.
@@ -64,40 +70,85 @@ export async function loadNoticeState(db: Kysely<Database>, siteId: number, now:
     .where('at', '>', new Date(now.getTime() - rememberMs))
     .select('key')
     .execute()
-  const open = await db
+  const episodes = await db
     .selectFrom('episode')
     .where('site_id', '=', siteId)
-    .where('state', '<>', 'over')
-    .where('rule', '=', 'planned-carry')
-    .select(['subject', 'key', 'data'])
+    .where((eb) =>
+      eb.or([
+        eb('state', '<>', 'over'),
+        eb('ended_at', '>', new Date(now.getTime() - rememberEpisodesMs)),
+        // Occasions that are told of once for good, however long ago.
+        eb('rule', '=', 'blank-ready'),
+      ]),
+    )
+    .select(['rule', 'subject', 'key', 'state', 'began_at', 'told_at', 'ended_at', 'data'])
+    .orderBy('began_at')
+    .orderBy('id')
     .execute()
   return {
     told: new Set(told.map(({ key }) => key)),
     holds: new Map(
-      open.flatMap(({ subject, key, data }) => {
-        const hold = holdSchema.safeParse(data.hold)
-        return hold.success ? [[`${subject} ${key}`, hold.data] as const] : []
+      episodes.flatMap(({ rule, subject, key, state, data }) => {
+        const hold =
+          rule === 'planned-carry' && state !== 'over' ? holdSchema.safeParse(data.hold) : undefined
+        return hold?.success === true ? [[`${subject} ${key}`, hold.data] as const] : []
       }),
     ),
+    known: episodes.map((row) => ({
+      rule: row.rule,
+      subject: row.subject,
+      key: row.key,
+      isOpen: row.state !== 'over',
+      beganAt: row.began_at.getTime(),
+      toldAt: row.told_at?.getTime() ?? null,
+      endedAt: row.ended_at?.getTime() ?? null,
+    })),
+    answers: await listAnswers(db, siteId, new Date(now.getTime() - answersMs)),
   }
 }
 
-export async function listNoticePeople(db: Kysely<Database>, siteId: number): Promise<NoticePerson[]> {
+/** What was answered to notices since a moment, oldest first. */
+async function listAnswers(db: Kysely<Database>, siteId: number, since: Date): Promise<NoticeAnswer[]> {
   const rows = await db
-    .selectFrom('site')
-    .innerJoin('member', 'member.organizationId', 'site.organization_id')
-    .leftJoin('member_setting as setting', (join) =>
-      join.onRef('setting.site_id', '=', 'site.id').onRef('setting.user_id', '=', 'member.userId'),
+    .selectFrom('notice_answer as answer')
+    .innerJoin('notice', (join) =>
+      join.onRef('notice.site_id', '=', 'answer.site_id').onRef('notice.id', '=', 'answer.notice_id'),
     )
-    .where('site.id', '=', siteId)
-    .select(['member.userId', 'member.role', 'setting.mail_on', 'setting.on_house_list'])
-    .orderBy('member.createdAt')
+    .innerJoin('episode', (join) =>
+      join.onRef('episode.site_id', '=', 'notice.site_id').onRef('episode.id', '=', 'notice.episode_id'),
+    )
+    .where('answer.site_id', '=', siteId)
+    .where('answer.at', '>', since)
+    .select([
+      'episode.rule',
+      'episode.subject',
+      'episode.key',
+      'answer.user_id',
+      'answer.answer',
+      'answer.at',
+      'answer.until',
+    ])
+    .orderBy('answer.id')
     .execute()
   return rows.map((row) => ({
-    userId: row.userId,
-    role: roleSchema.parse(row.role),
-    mailOn: row.mail_on ?? true,
-    onHouseList: row.on_house_list ?? false,
+    rule: row.rule,
+    subject: row.subject,
+    episodeKey: row.key,
+    userId: row.user_id,
+    answer: answerSchema.parse(row.answer),
+    at: row.at.getTime(),
+    until: row.until?.getTime() ?? null,
+  }))
+}
+
+export async function listNoticePeople(db: Kysely<Database>, siteId: number): Promise<NoticePerson[]> {
+  const people = await listPeopleSettings(db, siteId)
+  return people.map(({ userId, role, mailOn, onHouseList, wishes }) => ({
+    userId,
+    role: roleSchema.parse(role),
+    mailOn,
+    onHouseList,
+    wishes,
   }))
 }
 
@@ -117,7 +168,9 @@ export async function storeEpisodes(
     .where('state', '<>', 'over')
     .select(['id', 'rule', 'subject', 'key'])
     .execute()
-  const holding = new Set(episodes.map(episodeName))
+  // What began and ended unseen only opens in the history.
+  const lasting = episodes.filter(({ state }) => state !== 'over')
+  const holding = new Set(lasting.map(episodeName))
   const over = open.filter((one) => !holding.has(episodeName(one))).map(({ id }) => id)
   if (over.length > 0) {
     await trx
@@ -128,7 +181,8 @@ export async function storeEpisodes(
       .execute()
   }
   const ids = new Map(open.map((one) => [episodeName(one), one.id]))
-  for (const episode of episodes) {
+  for (const episode of episodes) if (episode.state === 'over') await storeHistory(trx, siteId, episode)
+  for (const episode of lasting) {
     const id = ids.get(episodeName(episode))
     if (id === undefined) ids.set(episodeName(episode), await beginEpisode(trx, siteId, now, episode))
     else await goOnWithEpisode(trx, siteId, now, id, episode)
@@ -159,6 +213,25 @@ async function goOnWithEpisode(
     }))
     .where('site_id', '=', siteId)
     .where('id', '=', id)
+    .execute()
+}
+
+async function storeHistory(trx: Transaction<Database>, siteId: number, episode: Episode): Promise<void> {
+  await trx
+    .insertInto('episode')
+    .values({
+      site_id: siteId,
+      id: await takeIds(trx, siteId, 'episode'),
+      rule: episode.rule,
+      subject: episode.subject,
+      key: episode.key,
+      state: 'over',
+      began_at: new Date(episode.beganAt),
+      told_at: null,
+      ended_at: new Date(episode.endedAt ?? episode.beganAt),
+      data: dataOf(episode),
+    })
+    .onConflict((clash) => clash.columns(['site_id', 'rule', 'subject', 'key']).doNothing())
     .execute()
 }
 
@@ -193,7 +266,7 @@ async function beginEpisode(
 }
 
 /**
- * Stores notices that were not told before, with the mail they lead to and the jobs that send it, all or nothing.
+ * Stores notices that were not told before, with the deliveries they lead to and the jobs that send them, all or nothing.
  * @returns how many were new
  */
 export async function storeNotices(
@@ -224,6 +297,7 @@ export async function storeNotices(
         carry_id: await findIdByCode(trx, 'carry', siteId, notice.carryCode),
         piece_id: await findIdByCode(trx, 'piece', siteId, notice.pieceCode),
         sensor_id: await findIdByCode(trx, 'sensor', siteId, notice.sensorCode),
+        room_id: await findIdByCode(trx, 'room', siteId, notice.roomCode),
         at: now,
       })
       .onConflict((clash) => clash.columns(['site_id', 'key']).doNothing())
@@ -245,7 +319,7 @@ export async function storeNotices(
           hold_until: runAt,
         })
         .execute()
-      await queueMail(trx, userId, runAt)
+      await queueDelivery(trx, userId, channel, runAt)
     }
     await notifySite(trx, siteId, 'notice', code)
   }
@@ -254,7 +328,7 @@ export async function storeNotices(
 
 async function findIdByCode(
   trx: Transaction<Database>,
-  table: 'carry' | 'piece' | 'sensor',
+  table: 'carry' | 'piece' | 'sensor' | 'room',
   siteId: number,
   code: string | undefined,
 ): Promise<number | null> {

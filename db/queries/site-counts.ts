@@ -61,6 +61,7 @@ export async function countNewNotices(
     .where('notice.site_id', '=', siteId)
     .where('notice.at', '>=', since)
     .where('notice.acknowledged_at', 'is', null)
+    .where('notice.rule', '<>', 'test')
     .where((eb) =>
       eb.not(
         eb.exists(

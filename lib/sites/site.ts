@@ -110,10 +110,3 @@ export const newInvitationSchema = z.strictObject({
   email: z.email('not an e-mail address').max(254),
   role: roleSchema,
 })
-
-export const ownSettingsSchema = z.strictObject({
-  unitSystem: unitSystemSchema.nullable().optional(),
-  mailOn: z.boolean().optional(),
-  onHouseList: z.boolean().optional(),
-})
-export type OwnSettings = z.infer<typeof ownSettingsSchema>

@@ -1,6 +1,6 @@
 /** Names of our own configuration: a test sets them itself and never takes what a developer's shell has. */
 const own =
-  /^(DATABASE_URL|PORT|LISTEN_HOST|BASE_URL|SMTP_URL|MAIL_FROM|AUTH_|MQTT_|LIDFAST_|PEER_|LOG_LEVEL|DATA_DIR)/
+  /^(DATABASE_URL|PORT|LISTEN_HOST|BASE_URL|SMTP_URL|MAIL_FROM|AUTH_|MQTT_|LIDFAST_|PEER_|VAPID_|PUSH_|LOG_LEVEL|DATA_DIR)/
 
 /** The environment for processes that tests start. */
 export const cleanEnvironment = (): Record<string, string | undefined> => ({

@@ -7,20 +7,28 @@ export interface TestMailServer {
   mails: ParsedMail[]
   /** While set, every message is refused with this reply. */
   refuseWith: string | undefined
+  /** The number of that reply; 450, "not now", unless it says otherwise. */
+  refuseCode: number | undefined
   close(): Promise<void>
 }
 
 /** A real mail server on loopback that keeps what it gets, or refuses it as long as it is told to. */
 export async function startMailServer(): Promise<TestMailServer> {
   const mails: ParsedMail[] = []
-  const state: { refuseWith: string | undefined } = { refuseWith: undefined }
+  const state: Pick<TestMailServer, 'refuseWith' | 'refuseCode'> = {
+    refuseWith: undefined,
+    refuseCode: undefined,
+  }
   const server = new SMTPServer({
     authOptional: true,
     disabledCommands: ['STARTTLS'],
     onData(stream, _session, done) {
       simpleParser(stream).then(
         (mail) => {
-          if (state.refuseWith !== undefined) return done(new Error(state.refuseWith))
+          if (state.refuseWith !== undefined) {
+            const responseCode = state.refuseCode ?? 450
+            return done(Object.assign(new Error(state.refuseWith), { responseCode }))
+          }
           mails.push(mail)
           done()
         },

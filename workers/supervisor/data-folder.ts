@@ -1,7 +1,9 @@
-import { randomBytes } from 'node:crypto'
+import { createECDH, randomBytes } from 'node:crypto'
 import { chmod, mkdir, readFile, rename, rm, writeFile } from 'node:fs/promises'
 import path from 'node:path'
 import { z } from 'zod'
+import { makeCertificate } from '../push-trap/certificate'
+import { trapCertificateSchema, trapFile } from '../push-trap/certificate-file'
 import { freePort, isPortFree } from './ports'
 
 /** The ignored folder that holds everything of one installation. */
@@ -27,28 +29,54 @@ export async function openDataFolder(root: string): Promise<DataFolder> {
   return folder
 }
 
-const secretsSchema = z.object({ databasePassword: z.string().min(16), authSecret: z.string().min(32) })
-export type Secrets = z.infer<typeof secretsSchema>
+const vapidSchema = z.object({ publicKey: z.string().length(87), privateKey: z.string().length(43) })
+const firstSecretsSchema = z.object({ databasePassword: z.string().min(16), authSecret: z.string().min(32) })
+/** Installations of before pushes have no keys for them yet. */
+const secretsSchema = firstSecretsSchema.extend({ vapid: vapidSchema.optional() })
+export type Secrets = z.infer<typeof firstSecretsSchema> & { vapid: z.infer<typeof vapidSchema> }
 
-/** Made at the first start and kept: a new database password would not open the old database. */
+/** Made at the first start and kept: a new database password would not open the old database, nor new keys reach old phones. */
 export async function loadSecrets(folder: DataFolder): Promise<Secrets> {
+  const file = path.join(folder.root, 'secrets.json')
   const made = () => ({
     databasePassword: randomBytes(24).toString('hex'),
     authSecret: randomBytes(32).toString('hex'),
+    vapid: makeVapidKeys(),
   })
-  return loadOrMake(path.join(folder.root, 'secrets.json'), secretsSchema, made)
+  const kept = await loadOrMake(file, secretsSchema, made)
+  if (kept.vapid !== undefined) return { ...kept, vapid: kept.vapid }
+  const secrets = { ...kept, vapid: makeVapidKeys() }
+  await writeJson(file, secrets)
+  return secrets
 }
 
-const portsSchema = z.object({ database: z.int(), mailTrap: z.int() })
+/** A P-256 key pair, as RFC 8292 has it: the point uncompressed, the scalar in full. */
+function makeVapidKeys(): z.infer<typeof vapidSchema> {
+  const pair = createECDH('prime256v1')
+  const publicKey = pair.generateKeys('base64url', 'uncompressed')
+  // A scalar with leading zeros comes shorter.
+  const scalar = Buffer.concat([Buffer.alloc(32), pair.getPrivateKey()]).subarray(-32)
+  return { publicKey, privateKey: scalar.toString('base64url') }
+}
+
+/** The demo's own push service goes by a certificate of its own, which is trusted for nothing else. */
+export const makeTrapCertificate = (folder: DataFolder): Promise<unknown> =>
+  loadOrMake(trapFile(folder.root), trapCertificateSchema, () => makeCertificate(new Date()))
+
+const portsSchema = z.object({ database: z.int(), mailTrap: z.int(), pushTrap: z.int().default(0) })
 export type Ports = z.infer<typeof portsSchema>
 
 /** The ports of the last start, as long as they are free; else new ones. */
 export async function loadPorts(folder: DataFolder): Promise<Ports> {
   const file = path.join(folder.root, 'ports.json')
-  const kept = await loadOrMake(file, portsSchema, () => ({ database: 0, mailTrap: 0 }))
+  const kept = await loadOrMake(file, portsSchema, () => ({ database: 0, mailTrap: 0, pushTrap: 0 }))
   const usable = async (port: number) =>
     port > 0 && (await isPortFree('127.0.0.1', port)) ? port : freePort()
-  const ports = { database: await usable(kept.database), mailTrap: await usable(kept.mailTrap) }
+  const ports = {
+    database: await usable(kept.database),
+    mailTrap: await usable(kept.mailTrap),
+    pushTrap: await usable(kept.pushTrap),
+  }
   await writeJson(file, ports)
   return ports
 }

@@ -38,6 +38,12 @@ export const mailTrap = (context: PartContext): Service => ({
   },
 })
 
+/** A small push service that keeps what it gets for the demo's inbox page. */
+export const pushTrap = (context: PartContext): Service => ({
+  ...part(context, 'push-trap', typescript('workers/push-trap/main.ts')),
+  ready: () => portAnswers('127.0.0.1', context.config.pushTrapPort ?? 0),
+})
+
 export const broker = (context: PartContext): Service => ({
   ...part(context, 'broker', typescript('workers/broker/main.ts')),
   ready: () => portAnswers(reachable(context.config.mqttHost), context.config.mqttPort),

@@ -6,6 +6,7 @@ import { clusterUrl, createMissingDatabase, databaseAnswers, prepareCluster } fr
 import {
   loadPorts,
   loadSecrets,
+  makeTrapCertificate,
   openDataFolder,
   removeRunFile,
   writeRunFile,
@@ -49,6 +50,7 @@ export async function createStack(options: StackOptions): Promise<Stack> {
   const folder = await openDataFolder(path.resolve(root, options.config.dataDir))
   const secrets = await loadSecrets(folder)
   const ports = await loadPorts(folder)
+  if (options.config.demo) await makeTrapCertificate(folder)
   const config = fillIn(options.config, folder, { ...secrets, ...ports })
   const env = { ...options.inherited, ...environmentOf(config), NEXT_TELEMETRY_DISABLED: '1' }
   const context: parts.PartContext = { root, config, env }
@@ -102,6 +104,8 @@ export async function createStack(options: StackOptions): Promise<Stack> {
         ownMail ? opened.then(() => supervisor.serve(parts.mailTrap(context))) : undefined,
         config.demo ? opened.then(() => supervisor.run(parts.demoTask(context, isReset))) : undefined,
       ])
+      // After the demo has made its people, whose phones it is.
+      if (config.pushTrapPort !== undefined) await supervisor.serve(parts.pushTrap(context))
       // Not before the demo is whole: these would act on what is half made.
       await supervisor.serve(parts.notices(context))
       await supervisor.serve(parts.delivery(context))
@@ -148,6 +152,8 @@ interface Made {
   authSecret: string
   database: number
   mailTrap: number
+  pushTrap: number
+  vapid: { publicKey: string; privateKey: string }
 }
 
 function fillIn(given: Config, folder: DataFolder, made: Made): Config {
@@ -159,6 +165,8 @@ function fillIn(given: Config, folder: DataFolder, made: Made): Config {
     databaseUrl: given.databaseUrl ?? clusterUrl(at, databaseName),
     authSecret: given.authSecret ?? made.authSecret,
     smtpUrl: given.smtpUrl ?? trap,
+    vapid: given.vapid ?? made.vapid,
+    pushTrapPort: given.pushTrapPort ?? (given.demo ? made.pushTrap : undefined),
   }
 }
 
@@ -176,6 +184,9 @@ const environmentOf = (config: Config): Record<string, string | undefined> => ({
   AUTH_SECRET: config.authSecret,
   AUTH_RATE_LIMIT: String(config.authRateLimit),
   PEER_ADDRESS_HEADER: config.peerAddressHeader,
+  VAPID_PUBLIC_KEY: config.vapid?.publicKey,
+  VAPID_PRIVATE_KEY: config.vapid?.privateKey,
+  PUSH_TRAP_PORT: config.pushTrapPort === undefined ? undefined : String(config.pushTrapPort),
   LOG_LEVEL: config.logLevel,
   DATA_DIR: config.dataDir,
 })

@@ -1,7 +1,8 @@
 import type { Metadata } from 'next'
 import { database } from '@/app/_server/database'
 import { listInvitations } from '@/app/_server/invitations'
-import { getOwnSettings, listMembers } from '@/app/_server/members'
+import { listMembers } from '@/app/_server/members'
+import { getOwnSettings } from '@/app/_server/own-settings'
 import { requireMember } from '@/app/_server/session'
 import { may } from '@/lib/sites/permissions'
 import { readerOf } from '@/lib/sites/reader'
@@ -19,7 +20,7 @@ export default async function PlacePage({ params }: Props) {
   const [members, invitations, settings] = await Promise.all([
     may(member.role, 'members:see') ? listMembers(db, member) : null,
     may(member.role, 'invitations:see') ? listInvitations(db, member.siteId, now) : null,
-    getOwnSettings(db, member),
+    getOwnSettings(db, member, now),
   ])
   return (
     <PlaceView

@@ -6,19 +6,22 @@ import { apiFetch } from '@/app/_components/api'
 import { Choice } from '@/app/_components/ui/choice'
 import { Sheet } from '@/app/_components/ui/sheet'
 import { Switch } from '@/app/_components/ui/switch'
+import { TextLink } from '@/app/_components/ui/text-link'
 import { useAction } from '@/app/_components/use-action'
+import type { OwnSettings, OwnSettingsChange } from '@/lib/notices/own-settings'
 import { may } from '@/lib/sites/permissions'
 import type { Reader } from '@/lib/sites/reader'
-import type { OwnSettings, Site } from '@/lib/sites/site'
+import type { Site } from '@/lib/sites/site'
 
-type OwnSettingsFormProps = { reader: Reader; site: Site; initial: Required<OwnSettings> }
+type OwnSettingsFormProps = { reader: Reader; site: Site; initial: OwnSettings }
 
 /** What one member chooses for themselves. Each choice is kept as it is made. */
 export function OwnSettingsForm({ reader, site, initial }: OwnSettingsFormProps) {
   const router = useRouter()
   const [kept, setKept] = useState(initial)
-  const change = useAction<OwnSettings, Required<OwnSettings>>({
-    run: (body) => apiFetch(`/sites/${reader.site}/members/me`, { method: 'PATCH', body }),
+  const change = useAction<OwnSettingsChange, OwnSettings>({
+    run: (body) =>
+      apiFetch(`/sites/${reader.site}/members/me`, { method: 'PATCH', body, ifMatch: kept.version }),
     invalidates: [['site', reader.site]],
     done: 'Kept',
     onDone: (settings) => {
@@ -46,16 +49,6 @@ export function OwnSettingsForm({ reader, site, initial }: OwnSettingsFormProps)
         />
         {may(reader.role, 'notices:see') ? (
           <>
-            <Line words="Send me what I am told by e-mail, too">
-              <Switch
-                label="E-mail"
-                checked={kept.mailOn}
-                disabled={change.pending}
-                onCheckedChange={(mailOn) => {
-                  change.act({ mailOn })
-                }}
-              />
-            </Line>
             <Line words="I am on the house list: tell me when a piece must come in">
               <Switch
                 label="House list"
@@ -66,6 +59,10 @@ export function OwnSettingsForm({ reader, site, initial }: OwnSettingsFormProps)
                 }}
               />
             </Line>
+            <p className="border-t border-line pt-3 text-ink-soft">
+              By what you hear of it, when to be left alone and who covers while you are away:{' '}
+              <TextLink href={`/sites/${reader.site}/notices#hearing`}>under Notices</TextLink>.
+            </p>
           </>
         ) : null}
       </div>

@@ -10,12 +10,14 @@ import { TextLink } from '@/app/_components/ui/text-link'
 import { may } from '@/lib/sites/permissions'
 import { placeSentence } from '@/lib/sites/place-sentence'
 import type { Reader } from '@/lib/sites/reader'
-import type { Invitation, Member, OwnSettings, Site } from '@/lib/sites/site'
+import type { OwnSettings } from '@/lib/notices/own-settings'
+import type { Invitation, Member, Site } from '@/lib/sites/site'
 import { DeleteSite } from './delete-site'
+import { DoorsPart } from './doors-part'
 import { MembersPart } from './members-part'
 import { SettingsPart } from './settings-part'
 
-const parts = ['members', 'place', 'delete'] as const
+const parts = ['members', 'place', 'doors', 'delete'] as const
 type Part = (typeof parts)[number]
 
 type List<Item> = { items: Item[] }
@@ -26,7 +28,7 @@ type PlaceViewProps = {
   /** Absent for readers who may not see them. */
   members: List<Member> | null
   invitations: List<Invitation> | null
-  settings: Required<OwnSettings>
+  settings: OwnSettings
   timeZones: readonly string[]
 }
 
@@ -64,9 +66,13 @@ export function PlaceView({
   const names: Record<Part, string> = {
     members: 'Members and roles',
     place: 'Units and place',
+    doors: 'Screens by a door',
     delete: site.isDemo ? 'Remove the demo' : 'Delete the site',
   }
-  const shown = parts.filter((one) => one !== 'delete' || may(reader.role, 'site:delete'))
+  const needed = { delete: 'site:delete', doors: 'doors:see' } as const
+  const shown = parts.filter(
+    (one) => one === 'members' || one === 'place' || may(reader.role, needed[one]),
+  )
   const current = shown.includes(part) ? part : 'members'
   const choose = (wanted: string) => {
     const chosen = shown.find((one) => one === wanted)
@@ -81,6 +87,8 @@ export function PlaceView({
       />
     ) : current === 'place' ? (
       <SettingsPart reader={reader} site={site} settings={settings} timeZones={timeZones} />
+    ) : current === 'doors' ? (
+      <DoorsPart reader={reader} />
     ) : (
       <DeleteSite reader={reader} site={site} />
     )

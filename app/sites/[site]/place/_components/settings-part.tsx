@@ -1,8 +1,9 @@
 'use client'
 
+import type { OwnSettings } from '@/lib/notices/own-settings'
 import { may } from '@/lib/sites/permissions'
 import type { Reader } from '@/lib/sites/reader'
-import type { OwnSettings, Site } from '@/lib/sites/site'
+import type { Site } from '@/lib/sites/site'
 import { OwnSettingsForm } from './own-settings-form'
 import { PlaceFacts } from './place-facts'
 import { PlaceForm } from './place-form'
@@ -10,7 +11,7 @@ import { PlaceForm } from './place-form'
 type SettingsPartProps = {
   reader: Reader
   site: Site
-  settings: Required<OwnSettings>
+  settings: OwnSettings
   timeZones: readonly string[]
 }
 
