@@ -55,6 +55,8 @@ export const routeTable: Record<string, Row> = {
   'GET /api/v1/demo/inbox': { action: 'anyone' },
   'POST /api/v1/demo/sign-in': { action: 'anyone' },
 
+  'GET /api/v1/door/[doorToken]': { action: 'anyone' },
+
   'GET /api/v1/sites': { action: 'signed-in' },
   'POST /api/v1/sites': {
     action: 'signed-in',
@@ -80,6 +82,14 @@ export const routeTable: Record<string, Row> = {
     status: 204,
   },
   'GET /api/v1/sites/[site]/frame': { action: 'site:see' },
+
+  'GET /api/v1/sites/[site]/doors': { action: 'doors:see' },
+  'POST /api/v1/sites/[site]/doors': {
+    action: 'doors:change',
+    body: ({ room }) => ({ name: 'By the shop door', roomId: room }),
+    status: 201,
+  },
+  'DELETE /api/v1/sites/[site]/doors/[door]': { action: 'doors:change', status: 204 },
 
   'GET /api/v1/sites/[site]/members': { action: 'members:see' },
   'PATCH /api/v1/sites/[site]/members/[member]': {
@@ -219,6 +229,13 @@ export const routeTable: Record<string, Row> = {
     prepare: planFor,
   },
   'POST /api/v1/sites/[site]/carries/[carry]/put-back': { action: 'carries:do' },
+
+  'GET /api/v1/sites/[site]/lock-up': { action: 'carries:see' },
+  'POST /api/v1/sites/[site]/lock-up/nothing-else': {
+    action: 'carries:do',
+    body: () => ({ isNothing: true }),
+  },
+  'POST /api/v1/sites/[site]/lock-up/close': { action: 'carries:do', body: () => ({ isClosed: true }) },
 
   'GET /api/v1/sites/[site]/repeats': { action: 'carries:see' },
   'POST /api/v1/sites/[site]/repeats': {
