@@ -42,16 +42,25 @@ export function toldByYesterday(record: HourlyRecord, leadH: number, measure: Me
 export const fitOf = ({ calm, table, isWarmed }: Prepared, leads: readonly number[]): RecordFit | undefined =>
   fitRecord(calm, table, (n) => isWarmed[n] === 0, leads)
 
+/** The fit that a forecast is made by, for callers that make many and fit anew only now and then; undefined where too little is on record. */
+export const fitForecast = (input: ForecastInput): RecordFit | undefined =>
+  isEnough(input.record) ? fitOf(prepared(input), ALL_LEADS) : undefined
+
 /**
  * The next 48 hours of a room from its own record: hour of day, how the present stands against the days before and how
  * soon that fades, the season of the year before, an outdoor room's air. Warmed hours are left out and told apart.
  * @param scores how far off each way has been; where the record was no better, the better of the others is used
+ * @param fitted by `fitForecast`, of some days ago at most; fitted anew where it is left out
  * @returns undefined where too little is on record, or the last hour is not
  */
-export function makeForecast(input: ForecastInput, scores: readonly LeadScore[]): RoomForecast | undefined {
+export function makeForecast(
+  input: ForecastInput,
+  scores: readonly LeadScore[],
+  fitted?: RecordFit,
+): RoomForecast | undefined {
   if (!isEnough(input.record)) return undefined
   const prep = prepared(input)
-  const fit = fitOf(prep, ALL_LEADS)
+  const fit = fitted?.size === prep.table.size ? fitted : fitOf(prep, ALL_LEADS)
   if (fit === undefined) return undefined
   const { record } = input
   const now = (measure: Measure) => record[measure].at(-1) ?? NaN
