@@ -51,7 +51,9 @@ describe('lock-up', () => {
 
   it('asks for what is not logged on a day on which the shop was warmed', async () => {
     await newYard()
-    await yard.shop.readSpan({ ...shopAir, temperatureC: 17 }, hoursBefore(now, 8), hoursBefore(now, 5))
+    // Between the readings that are there already, so that each hour's mean is half way.
+    const from = new Date(hoursBefore(now, 8).getTime() + 300_000)
+    await yard.shop.readSpan({ ...shopAir, temperatureC: 22 }, from, hoursBefore(now, 5))
     expect((await getLockUp(database.db, maker, now)).used).toBe('warmed')
     // Yesterday's fire says nothing of today.
     expect((await getLockUp(database.db, maker, hoursAfter(now, 24))).used).toBeNull()
