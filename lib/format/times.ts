@@ -16,6 +16,11 @@ export function dayOn(at: Date | string, timeZone: string): string {
   return format(inZone(at, timeZone), 'yyyy-MM-dd')
 }
 
+/** "Thursday" in the site's time zone. */
+export function formatWeekday(at: Date | string, timeZone: string): string {
+  return format(inZone(at, timeZone), 'EEEE')
+}
+
 /** "Thu 5 Mar", with the year only when it is another one. */
 export function formatDay(at: Date | string, timeZone: string, now: Date): string {
   const local = inZone(at, timeZone)

@@ -15,6 +15,8 @@ export const whoMay = {
   'site:see': ['owner', 'maker', 'hand', 'onlooker'],
   'site:change': ['owner'],
   'site:delete': ['owner'],
+  'doors:see': ['owner', 'maker', 'hand'],
+  'doors:change': ['owner', 'maker'],
   'settings:own': ['owner', 'maker', 'hand', 'onlooker'],
   'members:see': ['owner', 'maker', 'hand'],
   'members:change': ['owner'],

@@ -4,6 +4,7 @@ import { insertRepeat } from '@/db/queries/carry-repeats'
 import { newCode, takeIds } from '@/db/queries/counters'
 import { insertOutcome } from '@/db/queries/outcomes'
 import { insertPieceEvent } from '@/db/queries/piece-events'
+import { doorTokenHash, insertDoor } from '@/db/queries/door-links'
 import { insertRoom } from '@/db/queries/rooms'
 import { insertSiteWood } from '@/db/queries/site-woods'
 import { insertWeighing } from '@/db/queries/weighings'
@@ -25,6 +26,9 @@ export interface Things {
   carry: string
   /** A plan that comes again, for whatever is taken. */
   repeat: string
+  /** A screen by a door, and the secret of its link. */
+  door: string
+  doorToken: string
   /** A wood of the site's own. */
   wood: string
   notice: string
@@ -91,6 +95,13 @@ export async function makeSite(db: Kysely<Database>, team: Team): Promise<WorldS
       },
       now,
     )
+    const doorToken = randomBytes(32).toString('base64url')
+    const door = await insertDoor(
+      trx,
+      siteId,
+      { name: 'By the door', roomId: shop.id, tokenHash: doorTokenHash(doorToken), userId: team.maker },
+      now,
+    )
     const wood = await makeWood(trx, siteId)
     const notice = await makeNotice(trx, siteId)
     const event = await makeEvent(trx, siteId, piece.id, team.hand)
@@ -122,6 +133,8 @@ export async function makeSite(db: Kysely<Database>, team: Team): Promise<WorldS
         weighing,
         carry,
         repeat,
+        door,
+        doorToken,
         wood,
         notice,
         event,

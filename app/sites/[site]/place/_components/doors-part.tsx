@@ -38,8 +38,8 @@ export function DoorsPart({ reader }: { reader: Reader }) {
   return (
     <Sheet title="Screens by a door" id="doors">
       <p className="max-w-words text-ink-soft">
-        A screen that shows what is out, until when, and the hours of one room. It needs no account: its link is
-        the key, so give it to that screen alone.
+        A screen that shows what is out, until when, and the hours of one room. It needs no account: its link
+        is the key, so give it to that screen alone.
       </p>
       {made ? <MadeLink door={made} /> : null}
       {isError ? <p className="mt-4 text-warn">The screens could not be fetched. Nothing was lost.</p> : null}

@@ -70,9 +70,7 @@ export function PlaceView({
     delete: site.isDemo ? 'Remove the demo' : 'Delete the site',
   }
   const needed = { delete: 'site:delete', doors: 'doors:see' } as const
-  const shown = parts.filter(
-    (one) => one === 'members' || one === 'place' || may(reader.role, needed[one]),
-  )
+  const shown = parts.filter((one) => one === 'members' || one === 'place' || may(reader.role, needed[one]))
   const current = shown.includes(part) ? part : 'members'
   const choose = (wanted: string) => {
     const chosen = shown.find((one) => one === wanted)
