@@ -25,6 +25,7 @@ export const whoMay = {
   'now:see': ['owner', 'maker', 'hand', 'onlooker'],
   'rooms:see': ['owner', 'maker', 'hand', 'onlooker'],
   'rooms:readings': ['owner', 'maker', 'hand', 'onlooker'],
+  'rooms:forecast': ['owner', 'maker', 'hand'],
   'rooms:change': ['owner', 'maker'],
   'readings:type': ['owner', 'maker', 'hand'],
   'sensors:see': ['owner', 'maker', 'hand'],

@@ -145,6 +145,7 @@ export const routeTable: Record<string, Row> = {
     action: 'rooms:readings',
     query: () => ({ from: '2026-01-01T00:00:00Z', to: '2026-02-01T00:00:00Z' }),
   },
+  'GET /api/v1/sites/[site]/rooms/[room]/forecast': { action: 'rooms:forecast' },
   'GET /api/v1/sites/[site]/rooms/[room]/felt': {
     action: 'rooms:readings',
     query: () => ({ thicknessMm: '4,10', wood: 'fraxinus-excelsior', days: '30' }),
