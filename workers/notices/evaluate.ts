@@ -10,19 +10,24 @@ import {
 import type { Database } from '@/db/schema'
 import { decideNotices } from '@/lib/notices/decide'
 import { loadNoticeInputs } from './inputs'
+import type { CostlyFacts } from './surroundings'
 
-/** Decides for one site and stores what was decided, all in one transaction. Returns how many notices are new. */
+/**
+ * Decides for one site and stores what was decided, all in one transaction.
+ * @returns how many notices are new; null where somebody else was at it
+ */
 export function evaluateSite(
   db: Kysely<Database>,
   site: NoticeSite,
   now: Date,
   baseUrl: string,
-): Promise<number> {
+  costly?: CostlyFacts,
+): Promise<number | null> {
   const host = new URL(baseUrl).hostname
   return db.transaction().execute(async (trx) => {
-    if (!(await takeSiteForNotices(trx, site.siteId))) return 0
+    if (!(await takeSiteForNotices(trx, site.siteId))) return null
     const state = await loadNoticeState(trx, site.siteId, now)
-    const inputs = await loadNoticeInputs(trx, site, now)
+    const inputs = await loadNoticeInputs(trx, site, now, costly)
     const decision = decideNotices(now.getTime(), state, inputs)
     const episodes = await storeEpisodes(trx, site.siteId, now, decision.episodes)
     return storeNotices(
@@ -42,11 +47,12 @@ export async function evaluateAll(
   now: Date,
   baseUrl: string,
   onError: (siteCode: string, error: unknown) => void,
+  costly: CostlyFacts = new Map(),
 ): Promise<number> {
   let told = 0
   for (const site of await listNoticeSites(db)) {
     try {
-      told += await evaluateSite(db, site, now, baseUrl)
+      told += (await evaluateSite(db, site, now, baseUrl, costly)) ?? 0
     } catch (error) {
       onError(site.siteCode, error)
     }

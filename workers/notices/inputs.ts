@@ -1,8 +1,10 @@
 import type { Kysely } from 'kysely'
 import { loadCarryMaterial } from '@/db/queries/carry-inputs'
 import { type CarryRecord, listOpenCarries } from '@/db/queries/carries'
+import { findBatteries } from '@/db/queries/notice-inputs'
 import { listNoticePeople, type NoticeSite } from '@/db/queries/notice-state'
 import { listHangingSensors, listRoomRecords } from '@/db/queries/rooms'
+import { loadRuleBook } from '@/db/queries/rules'
 import { listWhateverCandidates } from '@/db/queries/whatever'
 import type { Database } from '@/db/schema'
 import { carryCheck } from '@/lib/carry/check'
@@ -11,13 +13,19 @@ import { isTooFarAhead } from '@/lib/carry/repeat'
 import { whateverJudged } from '@/lib/carry/whatever'
 import type { NoticeCarry, NoticeInputs, NoticePiece, NoticeSensor } from '@/lib/notices/inputs'
 import { freshForMs, silentAfterMs } from '@/lib/notices/policy'
+import { choiceOf } from '@/lib/notices/rule-settings'
 import { isKeepingRoom } from '@/lib/rooms/room'
+import { type CostlyFacts, loadSurroundings } from './surroundings'
 
-/** How things stand at a site, judged by the same loader and the same check as its pages. */
+/**
+ * How things stand at a site, judged by the same loader and the same check as its pages.
+ * @param costly what was worked out this hour already; kept by the caller from one look to the next
+ */
 export async function loadNoticeInputs(
   db: Kysely<Database>,
   site: NoticeSite,
   now: Date,
+  costly: CostlyFacts = new Map(),
 ): Promise<NoticeInputs> {
   const { siteId } = site
   const carries = (await listOpenCarries(db, siteId)).filter(
@@ -28,8 +36,10 @@ export async function loadNoticeInputs(
     ...new Set([...candidates, ...carries.flatMap((carry) => carry.pieces.map((piece) => piece.pieceId))]),
   ]
   const roomIds = carries.map((carry) => carry.toRoom.roomId)
-  const [material, people, hanging, rooms] = await Promise.all([
+  const [material, rules, batteries, people, hanging, rooms] = await Promise.all([
     loadCarryMaterial(db, site, pieceIds, roomIds, now),
+    loadRuleBook(db, siteId),
+    findBatteries(db, siteId),
     listNoticePeople(db, siteId),
     listHangingSensors(db, siteId),
     listRoomRecords(db, siteId),
@@ -38,6 +48,8 @@ export async function loadNoticeInputs(
     roomId: carry.toRoom.roomId,
     carry: noticeCarry(material, carry, candidates),
   }))
+
+  const patience = choiceOf(rules, 'sensor-silent').values
 
   const sensors = hanging
     .filter((sensor) => sensor.kind === 'device')
@@ -60,11 +72,16 @@ export async function loadNoticeInputs(
         roomName: room?.name ?? null,
         lastHeardAt,
         freshUntil: lastHeardAt === null ? null : lastHeardAt + freshMs,
-        silentFrom: lastHeardAt === null ? null : lastHeardAt + silentAfterMs(sensor.usualGapS),
+        silentFrom:
+          lastHeardAt === null
+            ? null
+            : lastHeardAt + silentAfterMs(sensor.usualGapS, patience.gaps, patience.leastH * 3_600_000),
         piecesOutThere: isAirKnown ? [] : piecesOut,
+        batteryPct: batteries.get(sensor.sensorId) ?? null,
       }
     })
-  return { site, carries: open.map(({ carry }) => carry), sensors, people }
+  const surroundings = await loadSurroundings(db, site, now, { rooms, carries, material }, costly)
+  return { site, carries: open.map(({ carry }) => carry), sensors, people, rules, surroundings }
 }
 
 const isWhatever = (carry: CarryRecord): boolean => carry.takesWhatever && carry.state === 'planned'

@@ -9,6 +9,8 @@ import { readRunningConfig } from '../env'
 import { forecastTurn } from '../forecast/forecast-sites'
 import { followSites } from '../wood/follow-sites'
 import { evaluateAll } from './evaluate'
+import { evaluateHeard } from './evaluate-heard'
+import type { CostlyFacts } from './surroundings'
 import { makeRepeats } from './make-repeats'
 
 /** Often enough for a time told to the minute; what a person does is looked at at once. */
@@ -23,13 +25,39 @@ const db = createDatabase(config.databaseUrl, {
 })
 await migrateJobs(config.databaseUrl)
 
+/** Means of days and the readiness of blanks are worked out once an hour. */
+const costly: CostlyFacts = new Map()
 const loop = every(
   { intervalMs, onError: (error) => logger.error({ err: error }, 'could not decide') },
   async () => {
-    const told = await evaluateAll(db, new Date(), config.baseUrl, (site, error) =>
-      logger.error({ err: error, site }, 'could not decide for a site'),
+    const told = await evaluateAll(
+      db,
+      new Date(),
+      config.baseUrl,
+      (site, error) => logger.error({ err: error, site }, 'could not decide for a site'),
+      costly,
     )
     await beat(db, 'notices', new Date())
+    if (told > 0) logger.info({ told }, 'notices made')
+  },
+)
+/** Sites whose air was read: looked at within the second, so that a reading is told of while it is news. */
+const heard = new Set<number>()
+const heardIntervalMs = 1_000
+const afterReadings = every(
+  {
+    intervalMs: heardIntervalMs,
+    onError: (error) => logger.error({ err: error }, 'could not decide after readings'),
+  },
+  async () => {
+    const told = await evaluateHeard(
+      db,
+      heard,
+      new Date(),
+      config.baseUrl,
+      (site, error) => logger.error({ err: error, site }, 'could not decide for a site'),
+      costly,
+    )
     if (told > 0) logger.info({ told }, 'notices made')
   },
 )
@@ -76,8 +104,9 @@ const repeats = every(
   },
 )
 const listener = listen(config.databaseUrl, {
-  onMessage: ({ kind }) => {
-    if (kind !== 'reading' && kind !== 'notice') loop.nudge()
+  onMessage: ({ kind, site }) => {
+    if (kind === 'reading') heard.add(site)
+    else if (kind !== 'notice') loop.nudge()
   },
   onError: (error) => logger.warn({ err: error }, 'not listening; going by the clock alone'),
 })
@@ -87,6 +116,7 @@ onShutdown(
   async () => {
     await listener.stop()
     await loop.stop()
+    await afterReadings.stop()
     await follow.stop()
     await repeats.stop()
     await forecast.stop()

@@ -11,7 +11,8 @@ import {
   type Severity,
 } from '../inputs'
 import { recipients, planners } from '../people'
-import { planLapsesMs, warnBeforePlannedMs, warnEveningBefore } from '../policy'
+import { planLapsesMs } from '../policy'
+import { choiceOf, isRuleOn } from '../rule-settings'
 import { nextVerdictHold } from '../verdict-hold'
 import { plannedBody, plannedTitle, severityOf } from '../wording'
 
@@ -26,6 +27,7 @@ export function plannedCarry(
   carry: NoticeCarry,
 ): RulePart {
   if (now > carry.plannedAt + planLapsesMs) return { episodes: [], notices: [] }
+  const { values } = choiceOf(inputs.rules, 'planned-carry')
   const { timeZone } = inputs.site
   const subject = `carry ${carry.code}`
   const occasion = new Date(carry.plannedAt).toISOString()
@@ -36,30 +38,34 @@ export function plannedCarry(
   })
   const eveningBefore = instantOfLocalTime(
     daysAfter(dayOfInstant(new Date(carry.plannedAt), timeZone), -1),
-    warnEveningBefore,
+    values.eveningAt,
     timeZone,
   )
   const moment =
-    now >= carry.plannedAt - warnBeforePlannedMs ? 'hour' : now >= eveningBefore ? 'evening' : null
+    now >= carry.plannedAt - values.beforeMin * 60_000 ? 'hour' : now >= eveningBefore ? 'evening' : null
   const key = `planned-carry/${carry.code}/${occasion}/${moment ?? ''}`
   const momentIsNew = moment !== null && !state.told.has(key)
   const isBad = severities[hold.held] > 0
   const isWorse = moment !== null && severities[hold.held] > severities[hold.told]
   const tells = isBad && (momentIsNew || isWorse)
 
+  // The two rules share what was told: with one of them off, the other goes on as if it had spoken.
+  const isFirstWord = isRuleOn(inputs.rules, 'planned-carry') || hold.told === 'fine'
+  const rule = momentIsNew && isFirstWord ? 'planned-carry' : 'verdict-worse'
   const episode: Episode = {
     rule: 'planned-carry',
     subject,
     key: occasion,
-    state: isBad && moment !== null ? 'telling' : 'pending',
+    state: isBad && moment !== null && isRuleOn(inputs.rules, 'planned-carry') ? 'telling' : 'pending',
     beganAt: now,
     hold: tells ? { ...hold, told: hold.held } : hold,
   }
-  if (!tells) return { episodes: [episode], notices: [] }
+  if (!tells || (rule === 'verdict-worse' && !isWorse) || !isRuleOn(inputs.rules, rule))
+    return { episodes: [episode], notices: [] }
   const at = new Date(now)
   const notice: NewNotice = {
-    key: momentIsNew ? key : `verdict-worse/${carry.code}/${occasion}/${hold.held}`,
-    rule: momentIsNew ? 'planned-carry' : 'verdict-worse',
+    key: rule === 'planned-carry' ? key : `verdict-worse/${carry.code}/${occasion}/${hold.held}`,
+    rule,
     urgency: 'soon',
     mark: hold.held,
     title: plannedTitle(carry, timeZone, at),

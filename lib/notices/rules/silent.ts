@@ -1,21 +1,33 @@
-import type { Episode, NewNotice, NoticeInputs, RulePart } from '../inputs'
+import type { Episode, NewNotice, NoticeInputs, NoticeSensor, RulePart } from '../inputs'
 import { recipients, makers } from '../people'
+import { isRuleOn } from '../rule-settings'
 import { silentBody, silentTitle } from '../wording'
+
+/** From when a sensor counts as silent; null where it was never heard. */
+export function silentSince({
+  lastHeardAt,
+  silentFrom,
+  freshUntil,
+  piecesOutThere,
+}: NoticeSensor): number | null {
+  if (lastHeardAt === null || silentFrom === null) return null
+  // A piece out there is judged by this sensor: then the end of its freshness counts, not the usual patience.
+  const isWatched = piecesOutThere.length > 0 && freshUntil !== null
+  return isWatched ? Math.min(freshUntil, silentFrom) : silentFrom
+}
 
 /** A sensor that has gone silent: told once for one silence, at once when a piece is out in its room. */
 export function silent(now: number, inputs: NoticeInputs): RulePart {
+  if (!isRuleOn(inputs.rules, 'sensor-silent')) return { episodes: [], notices: [] }
   const parts = inputs.sensors.map((sensor): RulePart => {
-    const { lastHeardAt, silentFrom, freshUntil, piecesOutThere } = sensor
-    if (lastHeardAt === null || silentFrom === null) return { episodes: [], notices: [] }
-    // A piece out there is judged by this sensor: then the end of its freshness counts, not the usual patience.
-    const isWatched = piecesOutThere.length > 0 && freshUntil !== null
-    const from = isWatched ? Math.min(freshUntil, silentFrom) : silentFrom
-    if (now < from) return { episodes: [], notices: [] }
+    const from = silentSince(sensor)
+    if (from === null || sensor.lastHeardAt === null || now < from) return { episodes: [], notices: [] }
+    const isWatched = sensor.piecesOutThere.length > 0 && sensor.freshUntil !== null
     const at = new Date(now)
     const episode: Episode = {
       rule: 'sensor-silent',
       subject: `sensor ${sensor.code}`,
-      key: new Date(lastHeardAt).toISOString(),
+      key: new Date(sensor.lastHeardAt).toISOString(),
       state: 'telling',
       beganAt: from,
     }
