@@ -230,6 +230,7 @@ export const routeTable: Record<string, Row> = {
     prepare: planFor,
   },
   'POST /api/v1/sites/[site]/carries/[carry]/put-back': { action: 'carries:do' },
+  'GET /api/v1/sites/[site]/carries/how-good': { action: 'carries:see' },
   'GET /api/v1/sites/[site]/carries/[carry]/forgotten': { action: 'carries:see' },
 
   'GET /api/v1/sites/[site]/lock-up': { action: 'carries:see' },
