@@ -52,9 +52,24 @@ export function pieceView(piece: PieceRecord, member: SiteMember): Piece {
   }
 }
 
-/** A verdict without the sizes and the wood that it rests on. */
+/** A verdict without the sizes and the wood that it rests on: how long it may stay, and nothing of why. */
 export function hiddenCheck(check: PieceCheck): PieceCheck {
-  if (check.kind === 'verdict') return { ...check, reason: '', second: '', assumed: [] }
+  if (check.kind === 'verdict')
+    return {
+      ...check,
+      reason: '',
+      second: '',
+      assumed: [],
+      ringMcPct: null,
+      lidMcPct: null,
+      mcDoubtPct: null,
+      cutMcPct: null,
+      changePct: null,
+      allowedMcPct: null,
+      lossMm: null,
+      allowanceMm: null,
+      curve: null,
+    }
   if (check.kind === 'words')
     return { ...check, reason: 'no-joint', words: 'Private to its maker.', second: '' }
   return check

@@ -1,13 +1,6 @@
 import { z } from 'zod'
 import type { AirFrom, WoodState } from '@/lib/follow/wood-state'
-import {
-  type Cover,
-  coverSchema,
-  type FitGrade,
-  type Grain,
-  type Stage,
-  type WoodKind,
-} from '@/lib/pieces/piece'
+import { type Cover, type FitGrade, type Grain, type Stage, type WoodKind } from '@/lib/pieces/piece'
 import type { WoodFigures } from '@/lib/wood/movement-class'
 
 /**
@@ -45,6 +38,8 @@ export type AirThere =
   | { kind: 'fresh'; at: number; emcPct: number; temperatureC: number; humidityPct: number }
   | { kind: 'stale'; at: number; emcPct: number; temperatureC: number; humidityPct: number }
   | { kind: 'never' }
+  /** Air as somebody tells it, of a place that nothing reads: never a fresh reading, but something to judge by. */
+  | { kind: 'told'; emcPct: number; temperatureC: number; humidityPct: number }
 
 /** The moisture content at which a joint was cut, and how well that is known: ± % MC, 8 in 10. */
 export interface CutMc {
@@ -71,6 +66,10 @@ export interface CarryCheckInput {
   startsAt: number
   stayMinutes: number
   cover: Cover
+  /** The air at home from `startsAt` on, where it comes back to; left out or empty: not known. */
+  home?: readonly AirFrom[]
+  /** A tub that is read by a sensor of its own: its air rules instead of the reckoned one. */
+  tub?: { name: string; emcPct: number; temperatureC: number } | undefined
 }
 
 export const verdictSchema = z.enum(['fine', 'keep-short', 'leave'])
@@ -78,43 +77,64 @@ export type Verdict = z.infer<typeof verdictSchema>
 
 const instant = z.iso.datetime()
 
+const figureOrHidden = z.number().nullable()
+
+const curveSchema = z.object({
+  at: z.array(instant),
+  usedEarly: z.array(z.number()),
+  used: z.array(z.number()),
+  usedLate: z.array(z.number()),
+})
+
+/** What is said of a piece that can be judged. */
+export const verdictCheckSchema = z.object({
+  kind: z.literal('verdict'),
+  verdict: verdictSchema,
+  /** "Keep it short: back by 16:10" without the clock time: the page adds it in the site's zone. */
+  words: z.string(),
+  /** Why: in points of % MC, in the quarter turn, and in mm. */
+  reason: z.string(),
+  /** The second line: when it may bind, a suction lid's sigh, or a grade no sensor can call. Empty when nothing to add. */
+  second: z.string(),
+  /** Moments by which the allowance is used up; null: not within 30 days in that air. */
+  earlyAt: instant.nullable(),
+  middleAt: instant.nullable(),
+  lateAt: instant.nullable(),
+  /** Where the two parts of the joint stand now, % MC, and how far that may be out (± % MC, 8 in 10). */
+  ringMcPct: z.number(),
+  lidMcPct: z.number(),
+  mcDoubtPct: z.number(),
+  cutMcPct: z.number(),
+  thereEmcPct: z.number(),
+  /** Points of % MC that the ring changes over the stay. */
+  changePct: z.number(),
+  /** Points either side of the cut MC at which the allowance is gone at a quarter turn. */
+  allowedMcPct: z.number(),
+  lossMm: z.number(),
+  allowanceMm: z.number(),
+  usedAtStart: z.number(),
+  usedAtEnd: z.number(),
+  /** Allowance used against time, from the start to past the stay: fractions, may pass 1. */
+  curve: curveSchema,
+  assumed: z.array(z.string()),
+})
+export type VerdictCheck = z.infer<typeof verdictCheckSchema>
+
+/** The same as a member sees it: of a piece that is private to another, nothing of its sizes and its wood. */
+const shownVerdictSchema = verdictCheckSchema.extend({
+  ringMcPct: figureOrHidden,
+  lidMcPct: figureOrHidden,
+  mcDoubtPct: figureOrHidden,
+  cutMcPct: figureOrHidden,
+  changePct: figureOrHidden,
+  allowedMcPct: figureOrHidden,
+  lossMm: figureOrHidden,
+  allowanceMm: figureOrHidden,
+  curve: curveSchema.nullable(),
+})
+
 export const pieceCheckSchema = z.discriminatedUnion('kind', [
-  z.object({
-    kind: z.literal('verdict'),
-    verdict: verdictSchema,
-    /** "Keep it short: back by 16:10" without the clock time: the page adds it in the site's zone. */
-    words: z.string(),
-    /** Why: in points of % MC, in the quarter turn, and in mm. */
-    reason: z.string(),
-    /** The second line: when it may bind, a suction lid's sigh, or a grade no sensor can call. Empty when nothing to add. */
-    second: z.string(),
-    /** Moments by which the allowance is used up; null: not within 30 days in that air. */
-    earlyAt: instant.nullable(),
-    middleAt: instant.nullable(),
-    lateAt: instant.nullable(),
-    /** Where the two parts of the joint stand now, % MC, and how far that may be out (± % MC, 8 in 10). */
-    ringMcPct: z.number(),
-    lidMcPct: z.number(),
-    mcDoubtPct: z.number(),
-    cutMcPct: z.number(),
-    thereEmcPct: z.number(),
-    /** Points of % MC that the ring changes over the stay. */
-    changePct: z.number(),
-    /** Points either side of the cut MC at which the allowance is gone at a quarter turn. */
-    allowedMcPct: z.number(),
-    lossMm: z.number(),
-    allowanceMm: z.number(),
-    usedAtStart: z.number(),
-    usedAtEnd: z.number(),
-    /** Allowance used against time, from the start to past the stay: fractions, may pass 1. */
-    curve: z.object({
-      at: z.array(instant),
-      usedEarly: z.array(z.number()),
-      used: z.array(z.number()),
-      usedLate: z.array(z.number()),
-    }),
-    assumed: z.array(z.string()),
-  }),
+  shownVerdictSchema,
   z.object({
     kind: z.literal('words'),
     reason: z.enum(['blank', 'threaded', 'wild-grain', 'stabilised', 'no-joint']),
@@ -131,39 +151,5 @@ export const pieceCheckSchema = z.discriminatedUnion('kind', [
   }),
 ])
 export type PieceCheck = z.infer<typeof pieceCheckSchema>
-
-export const carryCheckRequestSchema = z.strictObject({
-  pieceIds: z.array(z.string()).min(1, 'choose at least one piece').max(60),
-  toRoomId: z.string(),
-  startsAt: instant.optional(),
-  stayMinutes: z.int().min(1).max(43_200),
-  cover: coverSchema,
-})
-export type CarryCheckRequest = z.infer<typeof carryCheckRequestSchema>
-
-export const carryCheckAnswerSchema = z.object({
-  at: instant,
-  startsAt: instant,
-  stayMinutes: z.int(),
-  cover: coverSchema,
-  room: z.object({ id: z.string(), name: z.string(), mark: z.int(), emcPct: z.number().nullable() }),
-  /** The most pressing piece first, one sentence. */
-  headline: z.string(),
-  pieces: z.array(
-    z.object({
-      id: z.string(),
-      number: z.string(),
-      title: z.string(),
-      check: pieceCheckSchema,
-      /** The same carry in the best other cover; null when it changes nothing. */
-      bagged: z.object({ verdict: verdictSchema, earlyAt: instant.nullable() }).nullable(),
-    }),
-  ),
-  worst: z.enum(['leave', 'unknown', 'keep-short', 'words', 'fine']),
-  /** "No forecast yet: …" while the coming hours are only carried over from yesterday. */
-  forecastNote: z.string(),
-  cautions: z.array(z.string()),
-  completeTo: instant.nullable(),
-  age: z.number().nullable(),
-})
-export type CarryCheckAnswer = z.infer<typeof carryCheckAnswerSchema>
+/** As it leaves the check, with every figure. */
+export type FullCheck = VerdictCheck | Exclude<PieceCheck, { kind: 'verdict' }>

@@ -1,7 +1,7 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { airAt, carry, HOUR_MS, hoursUntil, judged, MINUTE_MS, msAt, NOW } from '@/tests/support/carry'
-import { carryCheck, carryCheckClosed } from './check'
+import { carryCheck } from './check'
 import { pieceCheckSchema } from './carry-check'
 import { verdictOf } from './verdict'
 
@@ -247,15 +247,5 @@ describe('a plan, and a piece that is out', () => {
     const again = judged(carry({ history }))
     expect(again.usedAtStart).toBeGreaterThan(0.3)
     expect(msAt(again.earlyAt)).toBeLessThan(msAt(judged(carry()).earlyAt))
-  })
-
-  it('the closed cover is offered only where it betters the verdict', () => {
-    const short = carry()
-    const better = carryCheckClosed(short, carryCheck(short))
-    expect(better?.verdict).toBe('fine')
-    const fine = carry({}, { jointDiameterMm: 30, allowanceMm: 0.4 })
-    expect(carryCheckClosed(fine, carryCheck(fine))).toBeUndefined()
-    const past = carry({ cutMcPct: 12 })
-    expect(carryCheckClosed(past, carryCheck(past))).toBeUndefined()
   })
 })

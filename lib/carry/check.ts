@@ -1,25 +1,20 @@
-import { assertFinite, assertInRange } from '@/lib/assert'
-import { mcDoubtPct, startDoubtPct } from '@/lib/follow/doubt'
-import type { Cover } from '@/lib/pieces/piece'
-import type { CarryCheckInput, PieceCheck, PieceFacts, Verdict } from './carry-check'
+import { mcDoubtPct } from '@/lib/follow/doubt'
+import type { CarryCheckInput, FullCheck, PieceCheck, PieceFacts, VerdictCheck } from './carry-check'
 import { jointOfPiece, type ResolvedJoint } from './joint-defaults'
-import { lossMm } from './joint-loss'
-import { spreadsOfJoint } from './joint-spread'
-import { stayRun, type StayRun } from './stay-run'
-import { firstReachedHours, usedInTheMiddle, type UsedSpread, usedSpread, valueAt } from './used-doubt'
+import { edgeOf, type Reckoned, reckoned, TOLD_WITHIN_HOURS } from './reckon'
+import type { StayRun } from './stay-run'
+import { type UsedSpread, valueAt } from './used-doubt'
 import { verdictOf } from './verdict'
 import { blankAirWords, PIECE_WORDS, reasonWords, secondWords, UNKNOWN_WORDS, VERDICT_WORDS } from './words'
 
-const MINUTE_MS = 60_000
-const HOUR_MS = 60 * MINUTE_MS
-/** Times further off than this are not told: 30 days, and the half hour that "fine" asks for after the longest stay. */
-const TOLD_WITHIN_HOURS = 30 * 24 + 1
+const HOUR_MS = 3_600_000
 const CURVE_POINTS = 25
 
 type WordsCheck = Extract<PieceCheck, { kind: 'words' }>
-type VerdictCheck = Extract<PieceCheck, { kind: 'verdict' }>
+type UnknownCheck = Extract<PieceCheck, { kind: 'unknown' }>
 
-function wordsReason(piece: PieceFacts): WordsCheck['reason'] | undefined {
+/** Why a piece is told of in words alone; undefined for one that can be judged. */
+export function wordsReason(piece: PieceFacts): WordsCheck['reason'] | undefined {
   if (piece.stage !== 'box') return 'blank'
   if (piece.woodKind === 'wild') return 'wild-grain'
   if (piece.woodKind === 'stabilised' || piece.woodKind === 'hybrid') return 'stabilised'
@@ -29,12 +24,17 @@ function wordsReason(piece: PieceFacts): WordsCheck['reason'] | undefined {
 
 function wordsCheck(reason: WordsCheck['reason'], there: CarryCheckInput['there']): WordsCheck {
   const { words, second } = PIECE_WORDS[reason]
-  const isToldAir = reason === 'blank' && there.kind === 'fresh'
-  return { kind: 'words', reason, words, second: isToldAir ? blankAirWords(there.emcPct) : second }
+  const isKnown = there.kind === 'fresh' || there.kind === 'told'
+  return {
+    kind: 'words',
+    reason,
+    words,
+    second: reason === 'blank' && isKnown ? blankAirWords(there.emcPct) : second,
+  }
 }
 
 const instant = (at: number): string => new Date(at).toISOString()
-const unknown = (reason: keyof typeof UNKNOWN_WORDS, sinceAt: number | null): PieceCheck => ({
+const unknown = (reason: UnknownCheck['reason'], sinceAt: number | null): UnknownCheck => ({
   kind: 'unknown',
   reason,
   words: UNKNOWN_WORDS[reason],
@@ -54,7 +54,13 @@ const unknown = (reason: keyof typeof UNKNOWN_WORDS, sinceAt: number | null): Pi
  * Source: derived from Wood Handbook (FPL-GTR-190, 2010), Eq. 13-2 and Crank, The Mathematics of Diffusion (1975); the
  * doubt by `usedSpread`.
  */
-export function carryCheck(input: CarryCheckInput): PieceCheck {
+export function carryCheck(input: CarryCheckInput): FullCheck {
+  const one = prepared(input)
+  return isReckoned(one) ? verdictCheck(one) : one
+}
+
+/** A carry run through, or what is said where there is nothing to run. */
+export function prepared(input: CarryCheckInput): Exclude<PieceCheck, { kind: 'verdict' }> | Reckoned {
   const reason = wordsReason(input.piece)
   if (reason !== undefined) return wordsCheck(reason, input.there)
   const joint = jointOfPiece(input.piece)
@@ -62,68 +68,24 @@ export function carryCheck(input: CarryCheckInput): PieceCheck {
   if (input.there.kind === 'never') return unknown('never-read', null)
   if (input.there.kind === 'stale') return unknown('no-reading', input.there.at)
   if (input.start === null) return unknown('no-history', null)
-  assertFinite('start.ringPct', input.start.ringPct)
-  assertFinite('there.temperatureC', input.there.temperatureC)
-  assertInRange('there.emcPct', input.there.emcPct, 0, 30)
-  assertInRange('stayMinutes', input.stayMinutes, 0, 60 * TOLD_WITHIN_HOURS)
-  assertFinite('startsAt', input.startsAt)
-  assertFinite('now', input.now)
-  return judged(input, joint, input.start, input.there)
+  return reckoned(input, joint, input.start, input.there)
 }
 
-type Start = NonNullable<CarryCheckInput['start']>
-type FreshAir = Extract<CarryCheckInput['there'], { kind: 'fresh' }>
+export const isReckoned = (one: FullCheck | Reckoned): one is Reckoned => 'run' in one
 
-interface Reckoned {
-  run: StayRun
-  /** Allowance used in the middle after some hours. */
-  usedAfter: (hours: number) => number
-  /** Hours until the middle has used so much of it. */
-  middleHours: (level: number) => number | undefined
-  spread: UsedSpread
-  cut: { ring: number; lid: number }
-  atStartMm: number
-}
-
-function reckoned(input: CarryCheckInput, joint: ResolvedJoint, start: Start, there: FreshAir): Reckoned {
-  const airs =
-    input.airs.length > 0 ? input.airs : [{ ...there, at: input.startsAt, cover: input.cover, isKnown: true }]
-  const run = stayRun(joint.filter, start, airs, input.startsAt, TOLD_WITHIN_HOURS, input.pace)
-  const cut =
-    input.cut === null
-      ? { ring: start.ringPct, lid: start.lidPct }
-      : { ring: input.cut.ringMcPct, lid: input.cut.lidMcPct }
-  const spreads = spreadsOfJoint(joint, {
-    // A joint that counts from what it is now has lost nothing yet, whatever that is.
-    cutPct: input.cut?.doubtPct ?? 0,
-    startPct: input.cut === null ? 0 : startDoubtPct(start),
-    airPct: input.airDoubtPct,
-  })
-  const question = { run, loss: joint.loss, allowanceMm: joint.allowance.allowanceMm, cut, spreads }
-  const used = usedInTheMiddle(question)
-  return {
-    run,
-    usedAfter: (hours) => valueAt(used, run.hours, hours),
-    middleHours: (level) => firstReachedHours(used, run.hours, level),
-    spread: usedSpread(question),
-    cut,
-    atStartMm: lossMm(joint.loss, start.ringPct - cut.ring, start.lidPct - cut.lid),
-  }
-}
-
-function judged(input: CarryCheckInput, joint: ResolvedJoint, start: Start, there: FreshAir): VerdictCheck {
+/** What is said of a carry that has been run through. */
+export function verdictCheck(one: Reckoned): VerdictCheck {
+  const { input, joint, start, there, run, usedAfter, middleHours, spread, cut } = one
   const { startsAt } = input
   const { allowanceMm, clearanceMm } = joint.allowance
   const stayHours = input.stayMinutes / 60
-  const { run, usedAfter, middleHours, spread, cut, atStartMm } = reckoned(input, joint, start, there)
   const ringAt = (hours: number): number => valueAt(run.middle.ring, run.hours, hours)
   const nowHours = Math.max(0, (input.now - startsAt) / HOUR_MS)
 
-  const usedAtStart = Math.max(0, atStartMm / allowanceMm)
+  const { usedAtStart, earlyHours: early } = edgeOf(one)
   const usedAtEnd = usedAfter(stayHours)
   const isPast = usedAtStart >= 1
   const middle = middleHours(1)
-  const early = isPast ? 0 : earlier(spread.early(1), middle)
   const late = middle === undefined ? undefined : spread.late(1)
   const toldAt = (hours: number | undefined): string | null =>
     hours === undefined ? null : instant(startsAt + Math.round(hours * HOUR_MS))
@@ -193,9 +155,6 @@ function allRound(
   return loss.swellMmPerPct * (loss.isRingInside ? ring - lid : lid - ring)
 }
 
-const earlier = (one: number | undefined, other: number | undefined): number | undefined =>
-  one === undefined || other === undefined ? (one ?? other) : Math.min(one, other)
-
 /** Past the stay, far enough to see the late edge if that is near, and past the present for a piece that is out. */
 function curveHours(stayHours: number, goneHours: number, lateHours: number | undefined): number {
   const pastStay = Math.max(1.25 * stayHours, 0.5)
@@ -219,23 +178,4 @@ function curveOf(
     used: elapsed.map(usedAfter),
     usedLate: bands.map((band) => band.low),
   }
-}
-
-const RANK: Readonly<Record<Verdict, number>> = { fine: 0, 'keep-short': 1, leave: 2 }
-
-/**
- * The same carry in the cover that closes it best.
- * @returns undefined where there is no verdict to better, or closing it betters nothing
- */
-export function carryCheckClosed(
-  input: CarryCheckInput,
-  check: PieceCheck,
-): { cover: Cover; verdict: Verdict; earlyAt: string | null } | undefined {
-  if (check.kind !== 'verdict' || check.verdict === 'fine') return undefined
-  // What was recorded stays as it was; only what is still to come can be covered.
-  const fromMs = Math.max(input.now, input.startsAt)
-  const airs = input.airs.map((air) => (air.at < fromMs ? air : { ...air, cover: 'bagged' as const }))
-  const closed = carryCheck({ ...input, airs, cover: 'bagged' })
-  if (closed.kind !== 'verdict' || RANK[closed.verdict] >= RANK[check.verdict]) return undefined
-  return { cover: 'bagged', verdict: closed.verdict, earlyAt: closed.earlyAt }
 }

@@ -1,27 +1,46 @@
-import { carryCheck, carryCheckClosed } from './check'
-import type { CarryCheckAnswer, PieceCheck } from './carry-check'
-import { type CarryAsked, carryCheckInput, type CarryMaterial } from './material'
+import { backHome } from './back-home'
+import { bestCover, coverEdge, otherCovers } from './best-cover'
+import type { CheckedPiece } from './carry-answer'
+import type { CarryCheckInput, FullCheck } from './carry-check'
+import { carryCheck, isReckoned, prepared, verdictCheck } from './check'
+import { hangsOn } from './hangs-on'
+import {
+  type CarryAsked,
+  carryCheckInput,
+  type CarryMaterial,
+  carryThereAndBack,
+  type ToldCarryAsked,
+} from './material'
 
-export interface JudgedPiece {
-  check: PieceCheck
-  /** The same carry in the cover that closes it best, where that betters the verdict. */
-  closed: CarryCheckAnswer['pieces'][number]['bagged']
-}
+export type JudgedPiece = Omit<CheckedPiece, 'id' | 'number' | 'title' | 'check'> & { check: FullCheck }
 
 /** What the check says of one piece; `undefined` for a piece that was not loaded. */
-export function checkPiece(material: CarryMaterial, asked: CarryAsked): PieceCheck | undefined {
+export function checkPiece(material: CarryMaterial, asked: CarryAsked): FullCheck | undefined {
   const input = carryCheckInput(material, asked)
   return input === undefined ? undefined : carryCheck(input)
 }
 
-/** As `checkPiece`, with the better cover beside it, which costs a second check. Page, API and the notices' worker all judge by this. */
-export function judgePiece(material: CarryMaterial, asked: CarryAsked): JudgedPiece | undefined {
-  const input = carryCheckInput(material, asked)
-  if (input === undefined) return undefined
-  const check = carryCheck(input)
-  const closed = carryCheckClosed(input, check)
+/**
+ * As `checkPiece`, with what to do about it: the better covers, what the time hangs on, how long to wait at home. All of
+ * it from one run of its wood, and other covers only where the one asked about is not fine.
+ */
+export function judgePiece(
+  material: CarryMaterial,
+  asked: CarryAsked | ToldCarryAsked,
+): JudgedPiece | undefined {
+  const input = carryThereAndBack(material, asked)
+  return input === undefined ? undefined : judgeInput(input)
+}
+
+export function judgeInput(input: CarryCheckInput): JudgedPiece {
+  const one = prepared(input)
+  if (!isReckoned(one)) return { check: one, covers: [], bestCover: null, hangsOn: null, backHome: null }
+  const covers = otherCovers(one)
   return {
-    check,
-    closed: closed === undefined ? null : { verdict: closed.verdict, earlyAt: closed.earlyAt },
+    check: verdictCheck(one),
+    covers,
+    bestCover: bestCover(coverEdge(one), covers, input.tub?.name),
+    hangsOn: hangsOn(one),
+    backHome: backHome(one) ?? null,
   }
 }

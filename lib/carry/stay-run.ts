@@ -41,7 +41,7 @@ export function momentsOf(horizonHours: number): Float64Array {
 }
 
 /** Airs with a step at every moment looked at, so that each part of the way between two of them has one air. */
-function stepsBetween(airs: readonly AirFrom[], startsAt: number, hours: Float64Array): AirStep[][] {
+export function stepsBetween(airs: readonly AirFrom[], startsAt: number, hours: Float64Array): AirStep[][] {
   let index = 0
   const steps: AirStep[][] = []
   for (let n = 1; n < hours.length; n += 1) {

@@ -1,7 +1,9 @@
 import { formatCount } from '@/lib/format/figures'
 import { formatDuration, formatMoment } from '@/lib/format/times'
+import type { Cover } from '@/lib/pieces/piece'
 import type { Carry } from './carry'
-import type { CarryCheckAnswer, PieceCheck } from './carry-check'
+import type { BestCover } from './carry-answer'
+import type { PieceCheck } from './carry-check'
 
 export type Worst = Carry['worst']
 
@@ -14,10 +16,17 @@ export function worstOf(checks: readonly PieceCheck[]): Worst {
   return order.find((grade) => grades.has(grade)) ?? 'fine'
 }
 
+const COVERED_WORDS: Readonly<Record<Cover, string>> = {
+  open: 'Open in work',
+  'lid-on': 'With the lid on',
+  bagged: 'Bagged',
+  tub: 'In the shut tub',
+}
+
 export interface NumberedCheck {
   number: string
   check: PieceCheck
-  bagged?: CarryCheckAnswer['pieces'][number]['bagged']
+  bestCover?: BestCover | null
 }
 
 /** The most pressing first: the worst verdict, and within it the earliest edge. */
@@ -42,28 +51,67 @@ export function checkHeadline(
   const moment = (at: string) => formatMoment(at, clock.timeZone, clock.now)
   if (check.kind === 'unknown') return unknownWords(check, roomName, moment)
   if (check.kind === 'words') return `${number}: ${check.words}`
-  if (check.verdict === 'leave') return `Leave ${number} where it is: ${whyLeave(first, moment)}`
+  const stay = formatDuration(stayMinutes)
+  const going = goingWords(pieces, stay, moment)
+  if (check.verdict === 'leave') {
+    const leave = namesOf(pieces.filter((piece) => gradeOf(piece.check) === 'leave'))
+    return going === '' || check.usedAtStart >= 1
+      ? `Leave ${number} where it is: ${whyLeave(first, moment)}`
+      : `Leave ${leave} where ${isOne(leave) ? 'it is' : 'they are'}; ${going}.`
+  }
   if (check.verdict === 'keep-short')
     return check.earlyAt === null
       ? `Keep it short with ${number}.`
-      : `Keep it short: ${number} back by ${moment(check.earlyAt)}.`
-  const stay = formatDuration(stayMinutes)
+      : `Keep it short: ${number} back by ${moment(check.earlyAt)}${restWords(pieces, first, stay, moment)}.`
   return pieces.length === 1
     ? `Fine: ${number} keeps its fit there for ${stay}.`
     : `Fine: all ${String(pieces.length)} keep their fit there for ${stay}.`
 }
 
+const isOne = (names: string): boolean => !/[ ,]/.test(names)
+
+type Moment = (at: string) => string
+
+/** What may go, and for how long: "214 may go until 16:10 and 226 for the whole 3 h". Empty where nothing may. */
+function goingWords(pieces: readonly NumberedCheck[], stay: string, moment: Moment): string {
+  const short = byPress(pieces).filter(({ check }) => gradeOf(check) === 'keep-short')
+  const fine = pieces.filter(({ check }) => gradeOf(check) === 'fine')
+  const untils = short.map(({ number, check }) =>
+    check.kind === 'verdict' && check.earlyAt !== null ? `${number} until ${moment(check.earlyAt)}` : number,
+  )
+  const parts = [...untils, ...(fine.length === 0 ? [] : [`${namesOf(fine)} for the whole ${stay}`])]
+  const [first, ...rest] = parts
+  if (first === undefined) return ''
+  const all = [first.replace(/^(.*?) (until|for the whole) /, '$1 may go $2 '), ...rest]
+  return all.length === 1 ? (all[0] ?? '') : `${all.slice(0, -1).join(', ')} and ${all.at(-1) ?? ''}`
+}
+
+/** After the piece that is told of first: the others that may go. */
+function restWords(
+  pieces: readonly NumberedCheck[],
+  first: NumberedCheck,
+  stay: string,
+  moment: Moment,
+): string {
+  const others = goingWords(
+    pieces.filter((piece) => piece !== first),
+    stay,
+    moment,
+  )
+  return others === '' ? '' : `; ${others}`
+}
+
 function whyLeave(piece: NumberedCheck, moment: (at: string) => string): string {
-  const { check, bagged } = piece
+  const { check, bestCover } = piece
   if (check.kind !== 'verdict') return ''
   if (check.usedAtStart >= 1) return 'its joint has already moved past what it may lose.'
   const edge =
     check.earlyAt === null
       ? 'the air there is too far from what it was cut at.'
       : `it may have used up its allowance by ${moment(check.earlyAt)}.`
-  if (bagged === null || bagged === undefined || bagged.verdict === 'leave') return edge
-  const until = bagged.earlyAt === null ? '' : ` until ${moment(bagged.earlyAt)}`
-  return `${edge} Bagged, it may go${until}.`
+  if (bestCover === null || bestCover === undefined || bestCover.verdict === 'leave') return edge
+  const until = bestCover.earlyAt === null ? '' : ` until ${moment(bestCover.earlyAt)}`
+  return `${edge} ${COVERED_WORDS[bestCover.cover]}, it may go${until}.`
 }
 
 function unknownWords(

@@ -20,6 +20,8 @@ export type UsedQuestion = {
   /** Where the ring and the lid were cut, % MC. */
   readonly cut: { readonly ring: number; readonly lid: number }
   readonly spreads: Spreads
+  /** How much of the pace's spread counts, 0 to 1; all of it when left out. */
+  readonly paceShare?: number
 }
 
 /** Allowance used in the middle, 0 and up, at each of the run's moments. */
@@ -34,13 +36,13 @@ export function usedInTheMiddle({ run, loss, allowanceMm, cut }: UsedQuestion): 
  * be, each of equal chance.
  */
 function usedInAllWays(question: UsedQuestion, draws: Draws): Float64Array {
-  const { run, loss, allowanceMm, cut, spreads } = question
+  const { run, loss, allowanceMm, cut, spreads, paceShare = 1 } = question
   const moments = run.hours.length
   const table = new Float64Array(DRAWS * moments)
   const sign = loss.isRingInside ? 1 : -1
   for (let way = 0; way < DRAWS; way += 1) {
     // The three runs lie at -√3, 0 and √3 deviations: a parabola through them, held at its ends.
-    const node = Math.min(1, Math.max(-1, (draws.diffusion[way] ?? 0) / PACE_NODE))
+    const node = Math.min(1, Math.max(-1, (paceShare * (draws.diffusion[way] ?? 0)) / PACE_NODE))
     const slow = (node * (node - 1)) / 2
     const middle = 1 - node * node
     const fast = (node * (node + 1)) / 2

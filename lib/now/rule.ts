@@ -21,16 +21,19 @@ export function ruleBrackets(carries: readonly Carry[], now: Date): RuleBracket[
       carry.pieces.flatMap((piece) => {
         const { check } = piece
         if (check?.kind !== 'verdict') return []
+        const { cutMcPct, ringMcPct, allowedMcPct } = check
+        // Of a piece that is private to another, where its wood stands is not told.
+        if (cutMcPct === null || ringMcPct === null || allowedMcPct === null) return []
         return {
           id: piece.id,
           number: piece.number,
-          cutMcPct: check.cutMcPct,
-          mcPct: check.ringMcPct,
-          lowMcPct: check.cutMcPct - check.allowedMcPct,
-          highMcPct: check.cutMcPct + check.allowedMcPct,
+          cutMcPct,
+          mcPct: ringMcPct,
+          lowMcPct: cutMcPct - allowedMcPct,
+          highMcPct: cutMcPct + allowedMcPct,
           isOut: piece.outAt !== null && piece.backAt === null,
           earlyAt: check.earlyAt,
-          leftPct: Math.max(0, check.allowedMcPct - Math.abs(check.ringMcPct - check.cutMcPct)),
+          leftPct: Math.max(0, allowedMcPct - Math.abs(ringMcPct - cutMcPct)),
         }
       }),
     )

@@ -9,7 +9,7 @@ import { listOpenCarries, type CarryRecord } from '@/db/queries/carries'
 import { findSiteMember, type SiteMember } from '@/db/queries/members'
 import { deleteSite } from '@/db/queries/sites'
 import { isSensorSecret } from '@/db/sensor-secret'
-import type { PieceCheck } from '@/lib/carry/carry-check'
+import type { VerdictCheck } from '@/lib/carry/carry-check'
 import { judgePiece } from '@/lib/carry/judge'
 import type { CarryMaterial } from '@/lib/carry/material'
 import { silentAfterMs } from '@/lib/notices/policy'
@@ -59,7 +59,7 @@ describe.each(seasons.flatMap((day) => hours.map((hour) => `${day}T${hour}:00Z`)
     afterAll(() => database.drop())
 
     /** As the page and the notices judge a piece of an open carry. */
-    function judged(number: string): { carry: CarryRecord; check: Extract<PieceCheck, { kind: 'verdict' }> } {
+    function judged(number: string): { carry: CarryRecord; check: VerdictCheck } {
       const pieceId = ids.get(number)
       const carry = carries.find((one) => one.pieces.some((piece) => piece.pieceId === pieceId))
       const part = carry?.pieces.find((piece) => piece.pieceId === pieceId)

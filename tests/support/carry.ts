@@ -1,5 +1,5 @@
 import { carryCheck } from '@/lib/carry/check'
-import type { CarryCheckInput, PieceCheck, PieceFacts } from '@/lib/carry/carry-check'
+import type { CarryCheckInput, PieceFacts, VerdictCheck } from '@/lib/carry/carry-check'
 import { woodOfPiece } from '@/lib/carry/joint-defaults'
 import { UNLEARNED_PACE } from '@/lib/follow/learned-pace'
 import { airsOf, stepThrough } from '@/lib/follow/record'
@@ -163,7 +163,7 @@ export function carry(over: Partial<Told> = {}, piece: Partial<PieceFacts> = {})
   }
 }
 
-export type Judged = Extract<PieceCheck, { kind: 'verdict' }>
+export type Judged = VerdictCheck
 
 export function judged(input: CarryCheckInput): Judged {
   const check = carryCheck(input)

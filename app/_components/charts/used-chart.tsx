@@ -10,9 +10,13 @@ import { textWidth } from './rule-layout'
 import { timeTicks } from './time-ticks'
 import { useWidth } from './use-width'
 
+type ShownVerdict = Extract<PieceCheck, { kind: 'verdict' }>
+/** A verdict that can be drawn: of a piece that is private to another, no curve is told. */
+export type DrawnCheck = ShownVerdict & { curve: NonNullable<ShownVerdict['curve']> }
+
 type UsedChartProps = {
   number: string
-  check: Extract<PieceCheck, { kind: 'verdict' }>
+  check: DrawnCheck
   startsAt: string
   stayMinutes: number
   timeZone: string

@@ -9,65 +9,79 @@ import { PageActions } from '@/app/_components/ui/page-actions'
 import { useAction } from '@/app/_components/use-action'
 import { problemCodeOf } from '@/lib/api/problems'
 import type { Carry, NewCarry } from '@/lib/carry/carry'
-import type { CarryCheckAnswer, CarryCheckRequest } from '@/lib/carry/carry-check'
+import type { CarryCheckAnswer, CarryCheckRequest } from '@/lib/carry/carry-answer'
 import type { Reader } from '@/lib/sites/reader'
 import { AgainstAdvice } from '../../_components/against-advice'
+import { someWay, type Way } from './carry-ways'
 
 type CarryDecisionProps = {
   reader: Reader
   request: CarryCheckRequest
   answer: CarryCheckAnswer | undefined
+  ways: readonly Way[]
+  best: Way | undefined
   mode: 'now' | 'plan'
   /** It went some time ago: it is logged, and no advice can keep it in. */
   isLogged: boolean
-  isBaggedBetter: boolean
-  onBagged: () => void
   onDone: (carry: Carry) => void
 }
 
-/** What is done about it. The filled button is the act that best keeps the fit. */
+/** What is done about it, each way in one press. The filled button is the act that best keeps the fit. */
 export function CarryDecision(props: CarryDecisionProps) {
-  const { reader, request, answer, mode, isLogged, isBaggedBetter, onBagged, onDone } = props
+  const { reader, request, answer, ways, best, mode, isLogged, onDone } = props
   const create = useAction({
     run: (body: Partial<NewCarry>, idempotencyKey) =>
-      apiFetch<Carry>(`/sites/${reader.site}/carries`, {
-        method: 'POST',
-        body,
-        idempotencyKey,
-      }),
-    invalidates: [
-      siteKey(reader.site, 'now'),
-      siteKey(reader.site, 'carries'),
-      siteKey(reader.site, 'pieces'),
-      siteKey(reader.site, 'rooms'),
-    ],
-    done: mode === 'plan' ? 'It is planned, and watched' : 'It is logged out, and watched',
+      apiFetch<Carry>(`/sites/${reader.site}/carries`, { method: 'POST', body, idempotencyKey }),
+    invalidates: (['now', 'carries', 'pieces', 'rooms'] as const).map((area) => siteKey(reader.site, area)),
+    done: (carry) =>
+      carry.state === 'planned' ? 'It is planned, and watched' : 'It is logged out, and watched',
     errors: 'inline',
     onDone,
   })
   const [asking, setAsking] = useState(false)
   const isAdvised = create.problem !== null && problemCodeOf(create.problem) === 'advised-against'
   const isBad = answer?.worst === 'leave' && !isLogged
-  const goWords = mode === 'plan' ? 'Plan it' : isLogged ? 'Log it as out' : 'Take it out now'
+  const others = isLogged ? [] : ways.filter((way) => way.key !== 'asked')
+  const some = answer && !isLogged ? someWay(answer, request) : undefined
+  const isBestOther = best !== undefined && best.key !== 'asked' && others.includes(best)
   return (
     <div className="contents sm:flex sm:flex-col sm:gap-3">
       <PageActions>
-        {isBad && isBaggedBetter ? (
-          <Button variant="filled" onClick={onBagged}>
-            Take it bagged instead
+        {[...others.filter((way) => way === best), ...others.filter((way) => way !== best)].map((way) => (
+          <Button
+            key={way.key}
+            variant={way === best ? 'filled' : 'second'}
+            pending={create.pending}
+            className={way === best ? undefined : 'max-sm:hidden'}
+            onClick={() => {
+              create.act(bodyOf(way.request, way.key === 'hour' ? 'plan' : mode, false))
+            }}
+          >
+            {way.act}
+          </Button>
+        ))}
+        {some ? (
+          <Button
+            pending={create.pending}
+            className="max-sm:hidden"
+            onClick={() => {
+              create.act(bodyOf(some.request, mode, false))
+            }}
+          >
+            {some.act}
           </Button>
         ) : null}
         <Button
-          variant={isBad ? 'second' : 'filled'}
+          variant={isBestOther ? 'link' : isBad ? 'second' : 'filled'}
           pending={create.pending}
           onClick={() => {
             if (isBad && mode === 'now') setAsking(true)
             else create.act(bodyOf(request, mode, false))
           }}
         >
-          {goWords}
+          {goWords(mode, isLogged, isBad)}
         </Button>
-        {isBad && !isBaggedBetter ? (
+        {isBad && !isBestOther ? (
           <p className="text-label text-ink-soft">Best left where it is. Nothing needs pressing for that.</p>
         ) : null}
       </PageActions>
@@ -93,6 +107,12 @@ export function CarryDecision(props: CarryDecisionProps) {
   )
 }
 
+function goWords(mode: 'now' | 'plan', isLogged: boolean, isBad: boolean): string {
+  if (mode === 'plan') return isBad ? 'Plan it as asked' : 'Plan it'
+  if (isLogged) return 'Log it as out'
+  return isBad ? 'Take it out as asked' : 'Take it out now'
+}
+
 /** The verdict against it and its reason, for each piece that should stay. */
 function whyNot(answer: CarryCheckAnswer | undefined): string {
   const reasons = (answer?.pieces ?? []).flatMap(({ number, check }) =>
@@ -102,6 +122,14 @@ function whyNot(answer: CarryCheckAnswer | undefined): string {
 }
 
 function bodyOf(request: CarryCheckRequest, mode: 'now' | 'plan', againstAdvice: boolean): Partial<NewCarry> {
-  const { startsAt, ...rest } = request
-  return { ...rest, plannedAt: startsAt, startsNow: mode === 'now', againstAdvice }
+  const { startsAt, pieceIds, toRoomId, stayMinutes, cover } = request
+  return {
+    pieceIds,
+    ...(toRoomId === undefined ? {} : { toRoomId }),
+    stayMinutes,
+    cover,
+    plannedAt: startsAt,
+    startsNow: mode === 'now',
+    againstAdvice,
+  }
 }

@@ -16,10 +16,14 @@ import type { Room } from '@/lib/rooms/room'
 import { may } from '@/lib/sites/permissions'
 import type { Reader } from '@/lib/sites/reader'
 import { CarryDecision } from './carry-decision'
-import { requestOf, roomOf, useCarryForm } from './carry-form-state'
+import { OTHER_AIR, requestOf, roomOf, toldAirOf, useCarryForm } from './carry-form-state'
 import { CarryLists } from './carry-lists'
 import { CarrySentence } from './carry-sentence'
+import { bestWay, waysOf } from './carry-ways'
 import { CheckPieces } from './check-pieces'
+import { CoverChoice } from './cover-choice'
+import { KeepAsRoom } from './keep-as-room'
+import { SessionSheet } from './session-sheet'
 import { useCarryCheck } from './use-carry-check'
 import { WaysSheet } from './ways-sheet'
 
@@ -62,17 +66,18 @@ export function CarryPageView({
   const chosen = form.pieces.flatMap((id) => pieces.items.find((piece) => piece.id === id) ?? [])
   const room = roomOf(rooms.items, form.to)
   const defaultAt = localFieldValue(nextFullHour(new Date(reader.at), reader.timeZone), reader.timeZone)
-  const request = requestOf(form, chosen, room, reader.timeZone, now, defaultAt)
+  const { units, timeZone } = reader
+  const request = requestOf({ form, chosen, room, units, timeZone, now, defaultAt })
+  const toldAir = form.to === OTHER_AIR ? toldAirOf(form, units) : undefined
+  const where = form.to === OTHER_AIR ? toldAir : room?.id
   const check = useCarryCheck(
     site,
-    [form.pieces, room?.id, form.mode, form.at ?? defaultAt, form.since, form.stay, form.cover],
+    [form.pieces, where, form.mode, form.at ?? defaultAt, form.since, form.stay, form.cover],
     request,
   )
-  const answer = request === null ? undefined : check.data
-  const isBaggedBetter = answer?.pieces.some((piece) => isBetter(piece)) ?? false
-  const takeBagged = () => {
-    void setForm({ cover: 'bagged' })
-  }
+  const answer = request === null || check.isError ? undefined : check.data
+  const ways = answer && request ? waysOf(answer, request, reader, now, form.mode) : []
+  const best = bestWay(ways)
 
   if (pieces.items.length === 0 || rooms.items.length < 2) {
     return (
@@ -100,10 +105,28 @@ export function CarryPageView({
             chosen={chosen}
             rooms={rooms.items}
             room={room}
+            units={units}
             defaultAt={defaultAt}
           />
+          <div className="mt-5">
+            <CoverChoice
+              cover={form.cover}
+              onChange={(cover) => {
+                void setForm({ cover })
+              }}
+              answer={check.isPlaceholderData ? undefined : answer}
+              reader={reader}
+              now={now}
+            />
+          </div>
+          {form.to === OTHER_AIR && toldAir === undefined ? (
+            <p className="mt-3 text-label text-ink-soft">
+              Give the place a name, its temperature and its humidity. A guess will do: it is taken as ±
+              5&nbsp;% RH.
+            </p>
+          ) : null}
         </Sheet>
-        {answer && !check.isError ? (
+        {answer ? (
           <CheckPieces
             answer={answer}
             pieces={pieces.items}
@@ -134,34 +157,35 @@ export function CarryPageView({
       <p role="status" className="sr-only">
         {answer && !check.isPlaceholderData ? answer.headline : ''}
       </p>
-      {answer &&
-      !check.isError &&
-      answer.pieces.some((piece) => piece.bagged !== null) &&
-      (form.cover === 'open' || form.cover === 'lid-on') ? (
-        <WaysSheet
-          answer={answer}
+      {answer && ways.length > 1 ? (
+        <WaysSheet answer={answer} ways={ways} best={best} reader={reader} now={now} />
+      ) : null}
+      {request?.toAir && answer ? (
+        <KeepAsRoom
           reader={reader}
-          now={now}
-          isBaggedBetter={isBaggedBetter}
-          onBagged={takeBagged}
+          air={request.toAir}
+          onKept={(roomId) => {
+            void setForm({ to: roomId, place: null, temperature: null, humidity: null })
+          }}
         />
       ) : null}
-      {request && may(reader.role, 'carries:do') ? (
+      {request?.toRoomId && may(reader.role, 'carries:do') ? (
         <div className="contents sm:block">
           <CarryDecision
             reader={reader}
             request={request}
             answer={answer}
+            ways={ways}
+            best={best}
             mode={form.mode}
             isLogged={form.mode === 'now' && form.since > 0}
-            isBaggedBetter={isBaggedBetter && (form.cover === 'open' || form.cover === 'lid-on')}
-            onBagged={takeBagged}
             onDone={(carry) => {
               router.push(`/sites/${site}/carry/${carry.id}`)
             }}
           />
         </div>
       ) : null}
+      {answer?.session ? <SessionSheet session={answer.session} reader={reader} now={now} /> : null}
       {answer ? (
         <div className="flex flex-col gap-3 max-sm:px-4">
           {answer.forecastNote ? (
@@ -173,20 +197,6 @@ export function CarryPageView({
       <CarryLists reader={reader} now={now} open={open} ended={ended} />
     </>
   )
-}
-
-const order = ['leave', 'keep-short', 'fine']
-
-/** Whether a piece does better bagged: a better verdict, or the same with more time. */
-function isBetter({
-  check,
-  bagged,
-}: {
-  check: { kind: string; verdict?: string }
-  bagged: { verdict: string } | null
-}) {
-  if (bagged === null) return false
-  return check.kind === 'verdict' && order.indexOf(bagged.verdict) > order.indexOf(check.verdict ?? 'fine')
 }
 
 function NothingToCarry({

@@ -5,11 +5,12 @@ import { PieceOutline } from '@/app/_components/ui/piece-outline'
 import { SegmentedTabs } from '@/app/_components/ui/segmented-tabs'
 import { ControlSentence, SentenceInput, SentenceSelect } from '@/app/_components/ui/sentence-control'
 import { formatDuration } from '@/lib/format/times'
-import { coverWords, type Piece } from '@/lib/pieces/piece'
+import type { Piece } from '@/lib/pieces/piece'
 import type { Room } from '@/lib/rooms/room'
+import type { UnitSystem } from '@/lib/sites/site'
 import { stays, stayWords } from '../../_components/stays'
 import { listedOutline } from './listed-outline'
-import { type CarryForm, covers, type SetCarryForm, sinces } from './carry-form-state'
+import { type CarryForm, OTHER_AIR, type SetCarryForm, sinces } from './carry-form-state'
 
 type CarrySentenceProps = {
   form: CarryForm
@@ -18,13 +19,16 @@ type CarrySentenceProps = {
   chosen: readonly Piece[]
   rooms: readonly Room[]
   room: Room | undefined
+  units: UnitSystem
   /** The planned time until another is typed. */
   defaultAt: string
 }
 
 /** A carry as a sentence, whose words are the controls. */
-export function CarrySentence({ form, setForm, pieces, chosen, rooms, room, defaultAt }: CarrySentenceProps) {
+export function CarrySentence(props: CarrySentenceProps) {
+  const { form, setForm, pieces, chosen, rooms, room, units, defaultAt } = props
   const isNow = form.mode === 'now'
+  const isOther = form.to === OTHER_AIR
   return (
     <SegmentedTabs
       label="When it goes"
@@ -75,7 +79,7 @@ export function CarrySentence({ form, setForm, pieces, chosen, rooms, room, defa
           </span>
           <SentenceSelect
             label="The room it goes to"
-            value={room?.id ?? ''}
+            value={isOther ? OTHER_AIR : (room?.id ?? '')}
             onChange={(event) => {
               void setForm({ to: event.target.value })
             }}
@@ -85,7 +89,9 @@ export function CarrySentence({ form, setForm, pieces, chosen, rooms, room, defa
                 {option.name}
               </option>
             ))}
+            <option value={OTHER_AIR}>another air: a show, a van, a gallery</option>
           </SentenceSelect>
+          {isOther ? <OtherAir form={form} setForm={setForm} units={units} /> : null}
           {isNow ? (
             <SentenceSelect
               label="When it went"
@@ -129,23 +135,46 @@ export function CarrySentence({ form, setForm, pieces, chosen, rooms, room, defa
                 </option>
               ))}
           </SentenceSelect>
-          <SentenceSelect
-            label="How it sits out there"
-            value={form.cover}
-            onChange={(event) => {
-              const cover = covers.find((option) => option === event.target.value)
-              if (cover) void setForm({ cover })
-            }}
-          >
-            {covers.map((cover) => (
-              <option key={cover} value={cover}>
-                {coverWords[cover]}
-              </option>
-            ))}
-          </SentenceSelect>
         </ControlSentence>
       </div>
     </SegmentedTabs>
+  )
+}
+
+/** Air that no room of the site has, typed into the sentence. */
+function OtherAir({ form, setForm, units }: Pick<CarrySentenceProps, 'form' | 'setForm' | 'units'>) {
+  return (
+    <>
+      <SentenceInput
+        label="What that place is called"
+        placeholder="the show"
+        maxLength={40}
+        value={form.place}
+        onChange={(event) => {
+          void setForm({ place: event.target.value })
+        }}
+      />
+      <span>at</span>
+      <SentenceInput
+        label="Temperature there"
+        inputMode="decimal"
+        unit={units === 'metric' ? '°C' : '°F'}
+        value={form.temperature}
+        onChange={(event) => {
+          void setForm({ temperature: event.target.value })
+        }}
+      />
+      <span>and</span>
+      <SentenceInput
+        label="Humidity there"
+        inputMode="decimal"
+        unit="% RH"
+        value={form.humidity}
+        onChange={(event) => {
+          void setForm({ humidity: event.target.value })
+        }}
+      />
+    </>
   )
 }
 

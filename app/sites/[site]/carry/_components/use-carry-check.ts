@@ -3,7 +3,7 @@
 import { keepPreviousData, useQuery } from '@tanstack/react-query'
 import { apiFetch } from '@/app/_components/api'
 import { siteKey } from '@/app/_components/live/site-keys'
-import type { CarryCheckAnswer, CarryCheckRequest } from '@/lib/carry/carry-check'
+import type { CarryCheckAnswer, CarryCheckRequest } from '@/lib/carry/carry-answer'
 
 /** The carry check of what the sentence asks; asked anew when the sentence or the air changes. */
 export function useCarryCheck(site: string, key: readonly unknown[], request: CarryCheckRequest | null) {

@@ -1,70 +1,127 @@
 'use client'
 
-import { Button } from '@/app/_components/ui/button'
 import { Mark, markWords } from '@/app/_components/ui/mark'
 import { Sheet } from '@/app/_components/ui/sheet'
-import type { CarryCheckAnswer } from '@/lib/carry/carry-check'
+import type { CarryCheckAnswer } from '@/lib/carry/carry-answer'
+import type { WayPiece } from '@/lib/carry/ways'
 import { formatMoment } from '@/lib/format/times'
-import { coverWords } from '@/lib/pieces/piece'
 import type { Reader } from '@/lib/sites/reader'
-import { CheckLine } from '../../_components/piece-verdict'
+import { stayAside, type Way } from './carry-ways'
 
 type WaysSheetProps = {
   answer: CarryCheckAnswer
+  ways: readonly Way[]
+  best: Way | undefined
   reader: Reader
   now: Date
-  isBaggedBetter: boolean
-  onBagged: () => void
 }
 
-/** As planned, and in the better cover, side by side. */
-export function WaysSheet({ answer, reader, now, isBaggedBetter, onBagged }: WaysSheetProps) {
-  const clock = { timeZone: reader.timeZone, now }
+const COUNT = ['', 'One way', 'Two ways', 'Three ways'] as const
+/** More columns than these would not stand side by side. */
+const COLUMNS_MAX = 5
+
+/** As asked, in the best cover and at the better hour, side by side. */
+export function WaysSheet(props: WaysSheetProps) {
+  const { answer, ways } = props
+  const isWide = answer.pieces.filter(({ check }) => check.kind === 'verdict').length <= COLUMNS_MAX
   return (
-    <Sheet id="ways" title="Two ways to do it">
-      <ul>
-        <li className="border-b border-line py-3 first:pt-0">
-          <p className="font-semibold">{sentenceCase(coverWords[answer.cover])}</p>
-          <p className="text-label text-ink-soft">as asked</p>
-          <p className="mt-1 flex flex-wrap gap-x-6 gap-y-1">
-            {answer.pieces.map((piece) => (
-              <CheckLine key={piece.id} number={piece.number} check={piece.check} {...clock} />
-            ))}
-          </p>
-        </li>
-        <li
-          className={`-mx-4 flex flex-wrap items-center justify-between gap-4 px-4 py-3 sm:-mx-6 sm:px-6 ${isBaggedBetter ? 'bg-wash [--figure-ground:var(--wash)]' : ''}`}
-        >
-          <div>
-            <p className="font-semibold">Bagged, or in the shut tub</p>
-            <p className="text-label text-ink-soft">
-              shut tight, with a little house-dry air; open only while you work it
-            </p>
-            <p className="mt-1 flex flex-wrap gap-x-6 gap-y-1">
-              {answer.pieces.map((piece) => {
-                if (piece.bagged === null)
-                  return <CheckLine key={piece.id} number={piece.number} check={piece.check} {...clock} />
-                const { verdict, earlyAt } = piece.bagged
-                const words =
-                  verdict === 'keep-short' && earlyAt !== null
-                    ? `by ${formatMoment(earlyAt, reader.timeZone, now)}`
-                    : markWords[verdict].toLowerCase()
-                return (
-                  <span key={piece.id} className="inline-flex items-baseline gap-2">
-                    <Mark kind={verdict} className="translate-y-[3px]" />
-                    <span>
-                      <strong>{piece.number}</strong> {words}
-                    </span>
-                  </span>
-                )
-              })}
-            </p>
-          </div>
-          <Button onClick={onBagged}>Ask about it bagged</Button>
-        </li>
-      </ul>
+    <Sheet id="ways" title={`${COUNT[ways.length] ?? 'Ways'} to do it`} aside={stayAside(answer)}>
+      {isWide ? <WaysTable {...props} /> : null}
+      <WaysList {...props} className={isWide ? 'sm:hidden' : undefined} />
     </Sheet>
   )
 }
 
-const sentenceCase = (text: string) => `${text.charAt(0).toUpperCase()}${text.slice(1)}`
+function WaysTable({ answer, ways, best, reader, now }: WaysSheetProps) {
+  const judged = answer.pieces.filter(({ check }) => check.kind === 'verdict')
+  return (
+    <table className="w-full max-sm:hidden">
+      <thead>
+        <tr className="border-b border-edge text-left text-label text-ink-soft">
+          <th scope="col" className="py-2 pr-4 font-semibold">
+            Way
+          </th>
+          {judged.map((piece) => (
+            <th key={piece.id} scope="col" className="px-3 py-2 font-semibold">
+              {piece.number}
+            </th>
+          ))}
+        </tr>
+      </thead>
+      <tbody>
+        {ways.map((way) => (
+          <tr
+            key={way.key}
+            className={`border-b border-line align-top last:border-b-0 ${way === best && ways.length > 1 ? 'bg-wash [--figure-ground:var(--wash)]' : ''}`}
+          >
+            <th scope="row" className="px-3 py-3 text-left font-normal">
+              <span className="block font-semibold">{way.title}</span>
+              <span className="block text-label text-ink-soft">{way.words}</span>
+            </th>
+            {judged.map(({ id }) => {
+              const piece = way.pieces.find((one) => one.id === id)
+              return (
+                <td key={id} className="px-3 py-3">
+                  {piece ? <WayVerdict piece={piece} reader={reader} now={now} /> : null}
+                </td>
+              )
+            })}
+          </tr>
+        ))}
+      </tbody>
+    </table>
+  )
+}
+
+function WaysList({
+  answer,
+  ways,
+  best,
+  reader,
+  now,
+  className,
+}: WaysSheetProps & { className?: string | undefined }) {
+  return (
+    <ul className={className}>
+      {ways.map((way) => (
+        <li
+          key={way.key}
+          className={`-mx-4 border-b border-line px-4 py-3 last:border-b-0 ${way === best && ways.length > 1 ? 'bg-wash [--figure-ground:var(--wash)]' : ''}`}
+        >
+          <p className="font-semibold">{way.title}</p>
+          <p className="text-label text-ink-soft">{way.words}</p>
+          <p className="mt-1 flex flex-wrap gap-x-6 gap-y-1">
+            {way.pieces.map((piece) => (
+              <WayVerdict
+                key={piece.id}
+                piece={piece}
+                number={answer.pieces.find(({ id }) => id === piece.id)?.number}
+                reader={reader}
+                now={now}
+              />
+            ))}
+          </p>
+        </li>
+      ))}
+    </ul>
+  )
+}
+
+type WayVerdictProps = { piece: WayPiece; number?: string | undefined; reader: Reader; now: Date }
+
+function WayVerdict({ piece, number, reader, now }: WayVerdictProps) {
+  const { verdict, earlyAt } = piece
+  const words =
+    verdict === 'keep-short' && earlyAt !== null
+      ? `by ${formatMoment(earlyAt, reader.timeZone, now)}`
+      : markWords[verdict].toLowerCase()
+  return (
+    <span className="inline-flex items-baseline gap-2">
+      <Mark kind={verdict} className="translate-y-[3px]" />
+      <span>
+        {number ? <strong>{number} </strong> : null}
+        {words}
+      </span>
+    </span>
+  )
+}
