@@ -11,6 +11,8 @@ export interface DeviceOptions {
   /** How far into each turn it measures: sensors were not all switched on at the same second. */
   phaseMs: number
   measure: (atMs: number) => ReadingMessage
+  /** What is sent instead of the reading of an instant; undefined: nothing is wrong with it. */
+  spoiled?: (atMs: number) => string | undefined
   /** Whether the network is lost at that instant. */
   isAway: (atMs: number) => boolean
   /** Instants that it measured before this program ran and has not sent yet, oldest first. */
@@ -74,6 +76,9 @@ export function startDevice(options: DeviceOptions): Device {
     sending = false
   }
 
+  const spoiledOf = (batch: readonly number[]): string | undefined =>
+    batch.map((atMs) => options.spoiled?.(atMs)).find((text) => text !== undefined)
+
   function flush(): void {
     const by = client
     if (by === undefined || !by.connected || sending || kept.length === 0) return
@@ -82,7 +87,7 @@ export function startDevice(options: DeviceOptions): Device {
     sending = true
     by.publish(
       readingTopic,
-      JSON.stringify(readings.length === 1 ? readings[0] : { readings }),
+      spoiledOf(batch) ?? JSON.stringify(readings.length === 1 ? readings[0] : { readings }),
       { qos: 1 },
       (error) => {
         // What was sent on a network that is lost by now stays kept; the same reading twice does no harm.

@@ -2,7 +2,7 @@ import path from 'node:path'
 import { z } from 'zod'
 import { parseConfig } from '@/lib/config'
 import { DEMO_ROSTER_FILE } from '@/lib/sensors/demo-roster'
-import { scenarioNames, type ScenarioName } from './scenarios/all'
+import { scenarioNames, scenarioSchema, type ScenarioName } from '@/lib/sensors/scenarios'
 
 export interface FakeSensorsEnvironment {
   brokerUrl: string
@@ -13,7 +13,7 @@ export interface FakeSensorsEnvironment {
 }
 
 const ownSchema = z.object({
-  FAKE_SCENARIO: z.enum(scenarioNames).default('normal-day'),
+  FAKE_SCENARIO: scenarioSchema.default('normal-day'),
   FAKE_SENSORS_FILE: z.string().min(1).optional(),
 })
 

@@ -1,5 +1,9 @@
 import { once } from 'node:events'
+import { scenarioSchema } from '@/lib/sensors/scenarios'
 import { createInstruments, isInstrumentName, type InstrumentName } from './climates/instruments'
+import { HOUR_MS } from './climates/outdoor'
+import { scenarioOf } from './scenarios/all'
+import type { Scenario } from './scenarios/scenario'
 
 /** So many slots make one piece of text: few writes, and no long text in memory. */
 const LINES_TOGETHER = 200
@@ -8,7 +12,9 @@ const LINES_TOGETHER = 200
  * Prints what the simulated instruments would have measured over a stretch of the past, so that it can be loaded
  * without years of waiting. One line a reading: place in the list of instruments, second since 1970, °C, % RH.
  *
- * node --import tsx fake-sensors/history.ts SEED FROM_S TO_S EVERY_S NAME...
+ * node --import tsx fake-sensors/history.ts SCENARIO SEED FROM_S TO_S EVERY_S NAME...
+ *
+ * The scenario starts at TO_S: what it did before then shows.
  */
 export function* historyLines(
   seed: number,
@@ -16,8 +22,13 @@ export function* historyLines(
   toS: number,
   everyS: number,
   names: readonly InstrumentName[],
+  scenario?: Scenario,
 ): Generator<string> {
-  const measure = createInstruments(seed)
+  const measure = createInstruments(
+    seed,
+    undefined,
+    (room, atMs, air) => scenario?.airOf?.(room, (atMs - toS * 1000) / HOUR_MS, air) ?? air,
+  )
   for (let stretchS = fromS; stretchS < toS; stretchS += LINES_TOGETHER * everyS) {
     let text = ''
     const endS = Math.min(toS, stretchS + LINES_TOGETHER * everyS)
@@ -34,12 +45,13 @@ export function* historyLines(
 }
 
 async function main(): Promise<void> {
-  const [seed, fromS, toS, everyS] = process.argv.slice(2, 6).map(Number)
-  const names = process.argv.slice(6).filter(isInstrumentName)
+  const scenario = scenarioOf(scenarioSchema.parse(process.argv[2]))
+  const [seed, fromS, toS, everyS] = process.argv.slice(3, 7).map(Number)
+  const names = process.argv.slice(7).filter(isInstrumentName)
   if (seed === undefined || fromS === undefined || toS === undefined || everyS === undefined || !(everyS > 0))
-    throw new Error('Usage: history.ts SEED FROM_S TO_S EVERY_S NAME...')
-  if (names.length !== process.argv.length - 6) throw new Error('An instrument of that name does not exist.')
-  for (const text of historyLines(seed, fromS, toS, everyS, names))
+    throw new Error('Usage: history.ts SCENARIO SEED FROM_S TO_S EVERY_S NAME...')
+  if (names.length !== process.argv.length - 7) throw new Error('An instrument of that name does not exist.')
+  for (const text of historyLines(seed, fromS, toS, everyS, names, scenario))
     if (!process.stdout.write(text)) await once(process.stdout, 'drain')
 }
 

@@ -4,7 +4,7 @@ import { demoRosterSchema } from '@/lib/sensors/demo-roster'
 import { readFakeSensorsEnvironment } from './env'
 import { KeptState } from './kept-state'
 import { startPlace, type Place } from './place'
-import { scenarios } from './scenarios/all'
+import { scenarioOf } from './scenarios/all'
 
 const SAVE_MS = 20_000
 
@@ -41,7 +41,7 @@ async function follow(): Promise<void> {
   place = undefined
   if (text === '') return void log.info('No demo sensors to simulate; waiting for a demo.')
   const roster = demoRosterSchema.parse(JSON.parse(text))
-  const scenario = scenarios[environment.scenario]
+  const scenario = scenarioOf(environment.scenario)
   place = startPlace({ brokerUrl: environment.brokerUrl, roster, scenario, state, onTrouble: tellOnce })
   log.info({ sensors: place.sensors, scenario: scenario.name }, 'simulated sensors are on')
 }

@@ -4,6 +4,7 @@ import type { ReadingMessage } from '@/lib/readings/payload'
 import { missedInstants } from './backlog'
 import { batteryPct } from './battery'
 import { createInstruments, isInstrumentName } from './climates/instruments'
+import { HOUR_MS } from './climates/outdoor'
 import { startDevice, type Device } from './device'
 import type { KeptState } from './kept-state'
 import type { Scenario } from './scenarios/scenario'
@@ -27,7 +28,11 @@ const PHASE_STEP_MS = 7_000
 /** Switches on every sensor of the roster in one simulated climate. */
 export function startPlace({ roster, scenario, state, now = Date.now, ...rest }: PlaceOptions): Place {
   const startedAtMs = now()
-  const measured = createInstruments(roster.seed, scenario.weatherFrom(startedAtMs))
+  const storyFromMs = Date.parse(roster.storyFrom ?? new Date(startedAtMs).toISOString())
+  const hoursOf = (atMs: number) => (atMs - storyFromMs) / HOUR_MS
+  const measured = createInstruments(roster.seed, scenario.weatherFrom(startedAtMs), (room, atMs, air) =>
+    scenario.airOf === undefined ? air : scenario.airOf(room, hoursOf(atMs), air),
+  )
   const devices = roster.sensors.flatMap((sensor, index) => {
     const measure = measureOf(sensor)
     return measure === undefined ? [] : [start(sensor, index, measure)]
@@ -49,7 +54,7 @@ export function startPlace({ roster, scenario, state, now = Date.now, ...rest }:
     return (atMs) => ({
       at: new Date(atMs).toISOString(),
       ...measured(model, atMs),
-      batteryPct: batteryPct(sensor, atMs),
+      batteryPct: scenario.batteryOf?.(model, hoursOf(atMs)) ?? batteryPct(sensor, atMs),
     })
   }
 
@@ -64,6 +69,7 @@ export function startPlace({ roster, scenario, state, now = Date.now, ...rest }:
       everyMs: everyS * 1000,
       phaseMs: index * PHASE_STEP_MS,
       measure,
+      spoiled: (atMs) => scenario.spoiled?.(sensor.model, hoursOf(atMs)),
       isAway: (atMs) => scenario.isAway(sensor, startedAtMs, atMs),
       missed: missedInstants(lastAtMs, startedAtMs, DEMO_HISTORY_EVERY_S * 1000),
       onAcknowledged: (atMs) => state.acknowledge(code, atMs),

@@ -1,6 +1,6 @@
 import { createNoise, hashed } from './noise'
 import type { Weather } from './outdoor'
-import { createRooms, type ClimateRoom } from './rooms'
+import { type Air, createRooms, type ClimateRoom } from './rooms'
 
 export interface Instrument {
   room: ClimateRoom
@@ -46,13 +46,18 @@ const rounded = (value: number, steps: number): number => Math.round(value * ste
  * What an instrument shows at an instant, with its own offset and noise, to 0.01 °C and 0.1 % RH.
  * @param seed any integer; the same seed gives the same place
  * @param weather what a scenario adds to the weather
+ * @param change what a scenario makes of the air of a room
  */
-export function createInstruments(seed: number, weather?: Weather): Measure {
+export function createInstruments(
+  seed: number,
+  weather?: Weather,
+  change: (room: ClimateRoom, atMs: number, air: Air) => Air = (_room, _atMs, air) => air,
+): Measure {
   const air = createRooms(seed, weather)
   const noise = createNoise(seed)
   return (name, atMs) => {
     const { room, offsetC, offsetPct } = instruments[name]
-    const { temperatureC, humidityPct } = air(room, atMs)
+    const { temperatureC, humidityPct } = change(room, atMs, air(room, atMs))
     const own = 100 + 10 * instrumentNames.indexOf(name)
     const second = Math.floor(atMs / 1000)
     // A closed tub has no draught and no visitors.

@@ -1,13 +1,18 @@
+import { type ScenarioName, scenarioNames } from '@/lib/sensors/scenarios'
 import { dampFront } from './damp-front'
 import { dropOutCatchUp } from './drop-out-catch-up'
 import { normalDay } from './normal-day'
+import { ruleScenario } from './rules'
+import type { Scenario } from './scenario'
 
-/** Every scenario by the name that FAKE_SCENARIO takes. */
-export const scenarios = {
+const own: Partial<Record<ScenarioName, Scenario>> = {
   'normal-day': normalDay,
   'damp-front': dampFront,
+  'verdict-worse': { ...dampFront, name: 'verdict-worse' },
   'drop-out-catch-up': dropOutCatchUp,
-} as const
+}
 
-export type ScenarioName = keyof typeof scenarios
-export const scenarioNames = Object.keys(scenarios) as [ScenarioName, ...ScenarioName[]]
+/** The scenario of a name that FAKE_SCENARIO takes. */
+export const scenarioOf = (name: ScenarioName): Scenario => own[name] ?? ruleScenario(name)
+
+export const scenarios = scenarioNames.map(scenarioOf)

@@ -22,6 +22,8 @@ export type DemoSensor = z.infer<typeof demoSensorSchema>
 export const demoRosterSchema = z.strictObject({
   siteCode: codeSchema,
   seed: z.int(),
+  /** When the demo was made: what a scenario does counts from then, before a restart as after it. */
+  storyFrom: z.iso.datetime().optional(),
   sensors: z.array(demoSensorSchema),
 })
 export type DemoRoster = z.infer<typeof demoRosterSchema>

@@ -5,6 +5,7 @@ import type { Kysely } from 'kysely'
 import { insertReadings, type ReadingRow } from '@/db/queries/readings'
 import type { Database } from '@/db/schema'
 import { DEMO_HISTORY_EVERY_S } from '@/lib/sensors/demo-roster'
+import type { ScenarioName } from '@/lib/sensors/scenarios'
 import { placeSeed, placeSensors, wasWorking } from './place'
 
 export interface HistoryOptions {
@@ -14,6 +15,7 @@ export interface HistoryOptions {
   now: Date
   days: number
   everyS?: number
+  scenario?: ScenarioName
   onProgress: (share: number, readings: number) => void
 }
 
@@ -51,7 +53,7 @@ function sourcesOf(sensorIds: ReadonlyMap<string, number>): Source[] {
  * @returns how many readings were stored
  */
 export async function insertHistory(db: Kysely<Database>, options: HistoryOptions): Promise<number> {
-  const { siteId, now, days, everyS = DEMO_HISTORY_EVERY_S, onProgress } = options
+  const { siteId, now, days, everyS = DEMO_HISTORY_EVERY_S, scenario = 'normal-day', onProgress } = options
   const sources = sourcesOf(options.sensorIds)
   const toS = Math.floor(now.getTime() / 1000)
   const fromS = Math.floor((toS - days * 86_400) / everyS) * everyS
@@ -64,7 +66,7 @@ export async function insertHistory(db: Kysely<Database>, options: HistoryOption
     stored += inserted
     onProgress(share, stored)
   }
-  for await (const line of simulated(fromS, toS, everyS, sources)) {
+  for await (const line of simulated(scenario, fromS, toS, everyS, sources)) {
     const [index, atS, temperatureC, humidityPct] = line.split(',').map(Number)
     if (index === undefined || atS === undefined || temperatureC === undefined || humidityPct === undefined)
       throw new Error(`The simulation wrote a line that is no reading: ${line}`)
@@ -83,6 +85,7 @@ export async function insertHistory(db: Kysely<Database>, options: HistoryOption
 }
 
 async function* simulated(
+  scenario: ScenarioName,
   fromS: number,
   toS: number,
   everyS: number,
@@ -94,6 +97,7 @@ async function* simulated(
       '--import',
       'tsx',
       historyProgram,
+      scenario,
       String(placeSeed),
       String(fromS),
       String(toS),

@@ -4,6 +4,7 @@ import { followPieces } from '@/db/queries/follow-pieces'
 import type { Database } from '@/db/schema'
 import { topicOf } from '@/lib/readings/topic'
 import type { DemoRoster } from '@/lib/sensors/demo-roster'
+import type { ScenarioName } from '@/lib/sensors/scenarios'
 import { dayOfInstant } from '@/lib/climate/days'
 import { insertHistory } from './history'
 import { makeNotices } from './notices'
@@ -19,6 +20,8 @@ export interface DemoOptions {
   days?: number
   /** How far apart its readings are, seconds; a test may do with fewer. */
   everyS?: number
+  /** The course of events that it starts in. */
+  scenario?: ScenarioName
   say: (sentence: string) => void
   /** Given the roster of its sensors before the demo counts as complete. */
   keepRoster: (roster: DemoRoster) => Promise<void>
@@ -29,7 +32,7 @@ const minuteMs = 60_000
 /** Makes the whole demo. What is half made when this ends early is found and made anew at the next start. */
 export async function makeDemo(
   db: Kysely<Database>,
-  { now, days = historyDays, everyS, say, keepRoster }: DemoOptions,
+  { now, days = historyDays, everyS, scenario, say, keepRoster }: DemoOptions,
 ): Promise<MadePlace> {
   say('Making the demo: people, rooms and sensors')
   const place = await makePlace(db, now, days)
@@ -39,6 +42,7 @@ export async function makeDemo(
     now,
     days,
     everyS,
+    scenario,
     onProgress: progressInQuarters(days, say),
   })
   for (const sensor of placeSensors) await settleSensor(db, place, sensor, now)
@@ -114,6 +118,7 @@ async function makeArrivals(db: Kysely<Database>, place: MadePlace, now: Date): 
 const rosterOf = (place: MadePlace, now: Date): DemoRoster => ({
   siteCode: place.siteCode,
   seed: placeSeed,
+  storyFrom: now.toISOString(),
   sensors: placeSensors.map((sensor) => {
     const { code, secret } = madeSensor(place, sensor)
     const { model, everyS, habit, batteryPct } = sensor

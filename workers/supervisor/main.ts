@@ -1,5 +1,6 @@
 import path from 'node:path'
 import { inheritedEnvironment, readConfig } from '../env'
+import { startOptions } from './start-options'
 import { createStack, type Stack } from './stack'
 import { Stopped } from './supervisor'
 
@@ -33,12 +34,11 @@ function endOnSignal(): void {
 }
 
 async function main(): Promise<void> {
-  const unknown = options.find((option) => option !== '--reset-demo')
-  if (unknown !== undefined) throw new Error(`"${unknown}" is not an option. There is one: --reset-demo`)
+  const { resetDemo, scenario } = startOptions(options)
   const config = readConfig()
-  const resetDemo = options.includes('--reset-demo')
-  if (resetDemo && !config.demo) throw new Error('--reset-demo needs the demo, but LIDFAST_DEMO is off.')
-  const common = { root, config, inherited: inheritedEnvironment(), resetDemo, say }
+  if ((resetDemo || scenario !== undefined) && !config.demo)
+    throw new Error('--reset-demo and --scenario need the demo, but LIDFAST_DEMO is off.')
+  const common = { root, config, inherited: inheritedEnvironment(), resetDemo, scenario, say }
   stack = await createStack({ ...common, mode: mode === 'dev' ? 'dev' : 'start' })
   await stack.start()
   greet(stack)

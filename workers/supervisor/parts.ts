@@ -23,10 +23,14 @@ export const buildTask = (context: PartContext): Task => ({
   words: 'Building the pages',
 })
 
-/** Makes the demo when the database is empty; with `--reset` it makes the demo anew. */
-export const demoTask = (context: PartContext, reset: boolean): Task => ({
-  ...part(context, 'demo', [...typescript('workers/demo/main.ts'), ...(reset ? ['--reset'] : [])]),
-  words: reset ? 'Making the demo anew' : 'Looking after the demo',
+/** Makes the demo when the database is empty; told to reset, or to show a scenario, it makes the demo anew. */
+export const demoTask = (context: PartContext, asked: { reset: boolean; scenario?: string }): Task => ({
+  ...part(context, 'demo', [
+    ...typescript('workers/demo/main.ts'),
+    ...(asked.reset ? ['--reset'] : []),
+    ...(asked.scenario === undefined ? [] : ['--scenario', asked.scenario]),
+  ]),
+  words: asked.reset || asked.scenario !== undefined ? 'Making the demo anew' : 'Looking after the demo',
 })
 
 /** A small mail server that keeps what it gets for the demo's inbox page. */

@@ -23,6 +23,8 @@ export interface StackOptions {
   inherited: Record<string, string | undefined>
   mode: 'start' | 'dev'
   resetDemo?: boolean
+  /** A course of events for the demo, which is then made anew. */
+  scenario?: string
   /** Settings of the private PostgreSQL, for tests. */
   clusterSettings?: Record<string, string>
   say: (sentence: string) => void
@@ -52,7 +54,12 @@ export async function createStack(options: StackOptions): Promise<Stack> {
   const ports = await loadPorts(folder)
   if (options.config.demo) await makeTrapCertificate(folder)
   const config = fillIn(options.config, folder, { ...secrets, ...ports })
-  const env = { ...options.inherited, ...environmentOf(config), NEXT_TELEMETRY_DISABLED: '1' }
+  const env = {
+    ...options.inherited,
+    ...(options.scenario === undefined ? {} : { FAKE_SCENARIO: options.scenario }),
+    ...environmentOf(config),
+    NEXT_TELEMETRY_DISABLED: '1',
+  }
   const context: parts.PartContext = { root, config, env }
   const supervisor = createSupervisor({ logFolder: folder.logs, say })
   const isReset = options.resetDemo === true
@@ -102,7 +109,11 @@ export async function createStack(options: StackOptions): Promise<Stack> {
         pages.then(() => supervisor.serve(parts.web(context, options.mode))),
         opened.then(() => supervisor.serve(parts.broker(context))),
         ownMail ? opened.then(() => supervisor.serve(parts.mailTrap(context))) : undefined,
-        config.demo ? opened.then(() => supervisor.run(parts.demoTask(context, isReset))) : undefined,
+        config.demo
+          ? opened.then(() =>
+              supervisor.run(parts.demoTask(context, { reset: isReset, scenario: options.scenario })),
+            )
+          : undefined,
       ])
       // After the demo has made its people, whose phones it is.
       if (config.pushTrapPort !== undefined) await supervisor.serve(parts.pushTrap(context))
