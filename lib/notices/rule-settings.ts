@@ -60,8 +60,10 @@ export function valuesOf<R extends ToldRule>(
 ): ValuesOf<R> {
   const controls: Readonly<Record<string, Control>> = ruleForms[rule].controls
   const values = Object.entries(controls).map(([key, control]) => {
-    const own = valueSchemaOf(control).safeParse(settings[key])
-    return [key, own.success ? own.data : control.usual] as const
+    const set = settings[key]
+    // Most are as they come, and are asked for at every look: no schema is made for those.
+    const own = set === undefined ? undefined : valueSchemaOf(control).safeParse(set)
+    return [key, own?.success === true ? own.data : control.usual] as const
   })
   return Object.fromEntries(values) as ValuesOf<R>
 }

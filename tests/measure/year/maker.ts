@@ -131,9 +131,10 @@ export function heedPage(chance: Chance, carry: YearCarry, isLeave: boolean): vo
 }
 
 /** A call while it is out: whoever hears it brings the piece in, if not at once. */
-export function heedCall(chance: Chance, carry: YearCarry, nowMs: number): void {
-  if (!chance.happens(HEEDS_CALL)) return
+export function heedCall(chance: Chance, carry: YearCarry, nowMs: number): boolean {
+  if (!chance.happens(HEEDS_CALL)) return false
   carry.backAt = Math.min(carry.backAt, nowMs + chance.between(10, 20) * MINUTE_MS)
+  return true
 }
 
 /** When the maker would come back without being told: about when planned, or only the next morning. */

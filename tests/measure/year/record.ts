@@ -1,6 +1,7 @@
 import type { RoomMaterial } from '@/lib/carry/material'
 import { usualGapAfter } from '@/lib/readings/usual-gap'
 import { readingFigures } from '@/lib/readings/figures'
+import type { RoomDay } from '@/lib/notices/surroundings'
 import { type LastReading, roomAir } from '@/lib/rooms/air'
 import type { RoomKind } from '@/lib/rooms/room'
 
@@ -13,6 +14,8 @@ export interface RoomRecord {
   readonly meanPct: (days: number) => number | undefined
   /** Every hour so far, oldest first. */
   readonly hours: () => readonly HourFigures[]
+  /** Every day so far, the last of them still growing. Days of UTC, which is near enough here. */
+  readonly days: () => readonly RoomDay[]
 }
 
 export interface HourFigures {
@@ -21,6 +24,8 @@ export interface HourFigures {
   readonly temperatureC: number
   readonly humidityPct: number
   readonly emcPct: number
+  readonly emcPctMin: number
+  readonly emcPctMax: number
 }
 
 const HOUR_MS = 3_600_000
@@ -31,43 +36,41 @@ const YEAR_DAYS = 365
 export function roomRecord(kind: RoomKind): RoomRecord {
   const hours: HourFigures[] = []
   const recent = new Map<number, { emcPct: number; temperatureC: number }>()
-  const days: { sum: number; n: number }[] = []
+  const days: (RoomDay & { n: number })[] = []
   let last: LastReading | null = null
 
-  const hourOf = (at: number, c: number, pct: number, emc: number): HourFigures => {
+  const hourWith = (at: number, c: number, pct: number, emc: number): HourFigures => {
     const before = hours.at(-1)
-    if (before?.at !== at) return { at, n: 1, temperatureC: c, humidityPct: pct, emcPct: emc }
+    if (before?.at !== at)
+      return { at, n: 1, temperatureC: c, humidityPct: pct, emcPct: emc, emcPctMin: emc, emcPctMax: emc }
     hours.pop()
-    const n = before.n + 1
-    const mean = (old: number, value: number) => old + (value - old) / n
     return {
+      ...withReading(before, c, pct, emc),
       at,
-      n,
-      temperatureC: mean(before.temperatureC, c),
-      humidityPct: mean(before.humidityPct, pct),
-      emcPct: mean(before.emcPct, emc),
+      emcPctMin: Math.min(before.emcPctMin, emc),
+      emcPctMax: Math.max(before.emcPctMax, emc),
     }
+  }
+  const addToDay = (at: number, c: number, pct: number, emc: number): void => {
+    const dayOn = new Date(at).toISOString().slice(0, 10)
+    const before = days.at(-1)
+    if (before?.dayOn !== dayOn) days.push({ dayOn, n: 1, temperatureC: c, humidityPct: pct, emcPct: emc })
+    else days[days.length - 1] = { dayOn, ...withReading(before, c, pct, emc) }
   }
   return {
     take(atMs, reading) {
       const figures = readingFigures(reading.temperatureC, reading.humidityPct)
       const emcPct = figures.emcMilli / 1000
       const at = Math.floor(atMs / HOUR_MS) * HOUR_MS
-      const hour = hourOf(at, reading.temperatureC, reading.humidityPct, emcPct)
-      if (hour.n === 1) {
+      const hour = hourWith(at, reading.temperatureC, reading.humidityPct, emcPct)
+      if (hour.n === 1)
         for (const old of recent.keys()) {
           if (old >= at - KEPT_HOURS * HOUR_MS) break
           recent.delete(old)
         }
-        if (days.length === 0 || at % (24 * HOUR_MS) === 0) days.push({ sum: 0, n: 0 })
-      }
       hours.push(hour)
       recent.set(at, hour)
-      const day = days.at(-1)
-      if (day !== undefined) {
-        day.sum += emcPct
-        day.n += 1
-      }
+      addToDay(at, reading.temperatureC, reading.humidityPct, emcPct)
       const usualGapS = usualGapAfter(last?.usualGapS ?? null, last?.at ?? null, [new Date(atMs)])
       last = { isTyped: false, at: new Date(atMs), ...reading, emcPct, usualGapS }
     },
@@ -79,10 +82,27 @@ export function roomRecord(kind: RoomKind): RoomRecord {
     last: () => last,
     meanPct: (count) => meanOf(days.slice(-count)),
     hours: () => hours,
+    days: () => days,
   }
 }
 
-function meanOf(days: readonly { sum: number; n: number }[]): number | undefined {
-  const n = days.reduce((sum, day) => sum + day.n, 0)
-  return n === 0 ? undefined : days.reduce((sum, day) => sum + day.sum, 0) / n
+interface Means {
+  readonly n: number
+  readonly temperatureC: number
+  readonly humidityPct: number
+  readonly emcPct: number
 }
+
+function withReading(before: Means, c: number, pct: number, emc: number): Means {
+  const n = before.n + 1
+  const mean = (old: number, value: number) => old + (value - old) / n
+  return {
+    n,
+    temperatureC: mean(before.temperatureC, c),
+    humidityPct: mean(before.humidityPct, pct),
+    emcPct: mean(before.emcPct, emc),
+  }
+}
+
+const meanOf = (days: readonly Pick<RoomDay, 'emcPct'>[]): number | undefined =>
+  days.length === 0 ? undefined : days.reduce((sum, { emcPct }) => sum + emcPct, 0) / days.length

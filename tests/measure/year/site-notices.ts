@@ -8,14 +8,14 @@ import type {
   NoticeInputs,
   NoticePerson,
   NoticeSensor,
-  NoticeState,
   RoutedNotice,
-  VerdictHold,
 } from '@/lib/notices/inputs'
 import { freshForMs, silentAfterMs } from '@/lib/notices/policy'
 import type { LastReading } from '@/lib/rooms/air'
 import type { YearCarry } from './maker'
+import { type NoticeMemory, noticeMemory } from './notice-memory'
 import type { ShelfBox } from './shelf'
+import { isSlowLook, SLOW_RULES, surroundingsOf, type Yard } from './surroundings-of'
 
 /** The site's people and hours: the product's defaults. */
 export const YEAR_SITE = {
@@ -55,21 +55,23 @@ export function checkOf(
   return input === undefined ? null : carryCheck(input)
 }
 
-/** What deciding needs to remember from one moment to the next; in the product the database keeps it. */
+/** The product's deciding at one site. */
 export interface SiteNotices {
   readonly decide: (
     now: number,
     material: CarryMaterial,
     carries: readonly YearCarry[],
     sensors: readonly HangingSensor[],
+    yard: Yard,
   ) => RoutedNotice[]
+  readonly answer: NoticeMemory['answer']
   /** The earliest of a carry's early edges as last judged, epoch ms; null where none was told. */
   readonly earlyAt: (carry: YearCarry) => number | null
 }
 
 export function siteNotices(shopId: number): SiteNotices {
-  const told = new Set<string>()
-  let holds = new Map<string, VerdictHold>()
+  const memory = noticeMemory()
+  const surroundings = surroundingsOf(YEAR_SITE.timeZone)
   const checks = new Map<string, { asked: string; check: PieceCheck | null }>()
 
   /** The same reading and the same question give the same answer: worked out once. */
@@ -117,7 +119,8 @@ export function siteNotices(shopId: number): SiteNotices {
       })
       return edges.length === 0 ? null : Math.min(...edges)
     },
-    decide(now, material, carries, sensors) {
+    answer: memory.answer,
+    decide(now, material, carries, sensors, yard) {
       const open = carries.filter(
         ({ state, kind, madeAt, isCalledOff }) =>
           state === 'out' || (state === 'planned' && kind === 'planned' && madeAt <= now && !isCalledOff),
@@ -127,15 +130,10 @@ export function siteNotices(shopId: number): SiteNotices {
         carries: open.map((carry) => noticeCarry(material, carry)),
         sensors: sensors.map((sensor) => noticeSensor(sensor, now, open)),
         people: PEOPLE,
+        surroundings: surroundings(material, yard),
       }
-      const state: NoticeState = { told, holds }
-      const decision = decideNotices(now, state, inputs)
-      for (const notice of decision.notices) told.add(notice.key)
-      holds = new Map(
-        decision.episodes.flatMap(({ subject, key, hold }) =>
-          hold === undefined ? [] : [[`${subject} ${key}`, hold] as const],
-        ),
-      )
+      const decision = decideNotices(now, memory.state(), inputs)
+      memory.keep(now, decision, (rule) => isSlowLook(now) || !SLOW_RULES.has(rule))
       if (open.length === 0) checks.clear()
       return decision.notices
     },
