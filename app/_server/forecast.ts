@@ -3,7 +3,6 @@ import type { Kysely } from 'kysely'
 import { assumedKeepRoom, loadCarryMaterial } from '@/db/queries/carry-inputs'
 import { findForecasts, findLeadScores } from '@/db/queries/forecasts'
 import type { SiteMember } from '@/db/queries/members'
-import { listStandingPieces } from '@/db/queries/pieces'
 import { findRoom, listHangingSensors, listRoomRecords } from '@/db/queries/rooms'
 import type { Database } from '@/db/schema'
 import type { RoomForecastView } from '@/lib/forecast/forecast-view'
@@ -13,7 +12,6 @@ import { hourStrip } from '@/lib/forecast/hour-strip'
 import type { RoomForecast } from '@/lib/forecast/room-forecast'
 import { ok } from '@/lib/result'
 import { settledTo } from '@/lib/rooms/air'
-import { viewerOf } from './piece-view'
 import { notThere, type Outcome } from './problem'
 
 const HOUR_MS = 3_600_000
@@ -31,15 +29,13 @@ export async function getRoomForecast(
   const room = await findRoom(db, siteId, roomCode)
   if (room === undefined) return notThere()
   const since = new Date(now.getTime() - GOODNESS_DAYS * 24 * HOUR_MS)
-  const [rooms, sensors, pieces, forecasts, scores] = await Promise.all([
+  const [rooms, sensors, forecasts, scores] = await Promise.all([
     listRoomRecords(db, siteId),
     listHangingSensors(db, siteId, room.id),
-    listStandingPieces(db, siteId, viewerOf(member)),
     findForecasts(db, siteId, new Set([room.id]), now),
     findLeadScores(db, siteId, since, now),
   ])
-  const pieceIds = pieces.filter((piece) => piece.stage === 'box' && !piece.isHidden).map((piece) => piece.id)
-  const material = await loadCarryMaterial(db, member, pieceIds, [room.id], now)
+  const material = await loadCarryMaterial(db, member, [], [room.id], now)
   const forecast = forecasts.get(room.id)
   const leads = (scores.get(room.id) ?? []).map((score) => ({
     ...score,
@@ -52,17 +48,17 @@ export async function getRoomForecast(
     usesOutdoors: forecast?.usesOutdoors ?? false,
     usesLastYear: forecast?.usesLastYear ?? false,
   }
-  const goodness = { days: GOODNESS_DAYS, leads }
+  const goodness = { days: GOODNESS_DAYS, leads, words: goodnessWords(leads) }
   const readings = sensors.flatMap((sensor) => sensor.last ?? [])
   return ok({
     room: { id: room.code, name: room.name, mark: room.mark },
     madeAt: forecast === undefined ? null : new Date(forecast.madeAt).toISOString(),
     ...told,
     goodness,
-    words: [...forecastWords(told), ...goodnessWords(goodness)],
+    words: forecastWords(told),
     strip: hourStrip(material, {
       roomId: room.id,
-      pieceIds,
+      pieceIds: [],
       keepRoomId: assumedKeepRoom(rooms)?.id ?? null,
       timeZone: member.timeZone,
     }),

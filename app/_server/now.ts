@@ -11,6 +11,7 @@ import type { Database } from '@/db/schema'
 import { type Carry, hasLid } from '@/lib/carry/carry'
 import { type CarryMaterial, woodAt } from '@/lib/carry/material'
 import { isTooFarAhead } from '@/lib/carry/repeat'
+import { hourStrip } from '@/lib/forecast/hour-strip'
 import { undoBringBackMs } from '@/lib/notices/policy'
 import { nowHeadline } from '@/lib/now/headline'
 import { needs, type SensorForNeeds } from '@/lib/now/needs'
@@ -22,6 +23,7 @@ import { sensorClock, sensorState } from '@/lib/sensors/state'
 import { may } from '@/lib/sites/permissions'
 import { isWhatever, pieceIdsOf, roomIdsOf, viewCarries } from './carry-view'
 import { viewerOf } from './piece-view'
+import { isLockUpOpen } from './lock-up'
 import { isOnlooker, type SeenRoom, seenRooms } from './rooms'
 
 /** Everything that the page Now shows. What a role may not see is not loaded for it. */
@@ -40,7 +42,9 @@ export async function getNow(db: Kysely<Database>, member: SiteMember, now: Date
     ? await listWhateverCandidates(db, siteId)
     : []
   const pieceIds = new Set([...pieceIdsOf(records), ...pieces.map((piece) => piece.id), ...candidates])
-  const material = await loadCarryMaterial(db, member, [...pieceIds], roomIdsOf(records), now)
+  const shop = may(member.role, 'rooms:forecast') ? shopOf(rooms) : undefined
+  const toRoomIds = [...roomIdsOf(records), ...(shop === undefined ? [] : [shop.record.id])]
+  const material = await loadCarryMaterial(db, member, [...pieceIds], toRoomIds, now)
   const carries = await viewCarries(db, member, records, now, material)
   const out = byUrgency(carries.filter((carry) => carry.state === 'out'))
   const planned = carries.filter((carry) => carry.state === 'planned')
@@ -59,10 +63,12 @@ export async function getNow(db: Kysely<Database>, member: SiteMember, now: Date
       // Where a piece's wood stands tells which rooms it was in and when: not for onlookers.
       shelf: seesCarries ? ruleShelf(pieces.flatMap((piece) => shelfPiece(piece, material) ?? [])) : [],
     },
+    strip: shop === undefined ? null : stripOf(member, shop, rooms, material, plannedIds(planned, pieces)),
     justBack: (await viewCarries(db, member, back, now, material)).flatMap((carry) =>
       justBack(carry, back, now),
     ),
     needs: needs({ sensors: devices, rooms: rooms.map((room) => room.view) }, clock),
+    isLockUp: seesCarries && (await isLockUpOpen(db, member, now)),
     silent: silent.map((sensor) => ({
       id: sensor.id,
       name: sensor.name,
@@ -78,6 +84,30 @@ export async function getNow(db: Kysely<Database>, member: SiteMember, now: Date
 async function listNearCarries(db: Kysely<Database>, siteId: number, now: Date): Promise<CarryRecord[]> {
   const open = await listOpenCarries(db, siteId)
   return open.filter((carry) => !isTooFarAhead({ ...carry, isRepeated: carry.repeat !== null }, now))
+}
+
+/** The room that work is done in: the first shop that has been read. */
+const shopOf = (rooms: readonly SeenRoom[]): SeenRoom | undefined =>
+  rooms.find(({ record, view }) => record.kind === 'shop' && view.air.kind !== 'never')
+
+/** The boxes that are down to go: they are the ones chosen, so they judge the hours. */
+function plannedIds(planned: readonly Carry[], pieces: readonly PieceRecord[]): number[] {
+  const codes = new Set(planned.flatMap((carry) => carry.pieces.map((piece) => piece.id)))
+  return pieces.filter((piece) => codes.has(piece.code) && !piece.isHidden).map((piece) => piece.id)
+}
+
+function stripOf(
+  { timeZone }: SiteMember,
+  { record, view }: SeenRoom,
+  rooms: readonly SeenRoom[],
+  material: CarryMaterial,
+  pieceIds: readonly number[],
+): NowView['strip'] {
+  const keepRoomId = assumedKeepRoom(rooms.map((room) => room.record))?.id ?? null
+  return {
+    room: { id: view.id, name: view.name },
+    hours: hourStrip(material, { roomId: record.id, pieceIds, keepRoomId, timeZone }),
+  }
 }
 
 const edgeOf = (carry: Carry): number =>
@@ -157,6 +187,7 @@ function justBack(
           roomName: roomOfBack.get(piece.backAt) ?? '',
           at: piece.backAt,
           hasLid: hasLid(piece),
+          isAskSkipped: piece.isAskSkipped,
         }
       : [],
   )

@@ -135,3 +135,14 @@ export function judgedHour(
     emcPct,
   }
 }
+
+/** Of the pieces chosen, the one that would have used most of its allowance by the end; undefined where none has a verdict. */
+export function leastForgiving(
+  material: CarryMaterial,
+  asked: BetterHoursAsked,
+  startsAt: number,
+): { pieceId: number; of: number } | undefined {
+  const judged = judgedHour(material, asked, startsAt, null)
+  const [least] = (judged?.verdicts ?? []).toSorted((one, other) => other.usedAtEnd - one.usedAtEnd)
+  return least && { pieceId: least.pieceId, of: judged?.verdicts.length ?? 1 }
+}

@@ -99,10 +99,9 @@ function comingAirs(
     ? forecastHours({ ...told, forecast })
     : comingHours({ ...told, record: recordOf(room) })
   const lastDay = forecast
-    ? forecast.emcPct.slice(-24).map((emcPct, n) => ({
-        emcPct,
-        temperatureC: forecast.temperatureC.slice(-24)[n] ?? present.temperatureC,
-      }))
+    ? forecast.emcPct
+        .map((emcPct, n) => ({ emcPct, temperatureC: forecast.temperatureC[n] ?? present.temperatureC }))
+        .slice(-24)
     : coming.slice(-24)
   const mean = (of: 'emcPct' | 'temperatureC') =>
     lastDay.reduce((sum, hour) => sum + hour[of], 0) / lastDay.length
@@ -139,7 +138,13 @@ export function airOfHour(
 function airDoubtPct(room: RoomMaterial | undefined, now: number, startsAt: number, stayMs: number): number {
   if (room === undefined || room.air.kind === 'never') return 0
   const forecast = room.forecast ?? null
-  const aheadPct = aheadDoubtPct({ now, startsAt, stayMs, forecast, record: recordOf(room) })
+  const aheadPct = aheadDoubtPct({
+    now,
+    startsAt,
+    stayMs,
+    forecast,
+    record: forecast === null ? recordOf(room) : [],
+  })
   return Math.hypot(room.air.emcDoubtPct, HOUSE_SENSOR_DOUBT_PCT, aheadPct)
 }
 
@@ -218,7 +223,10 @@ function homeRoomId(piece: PieceMaterial, asked: CarryAsked | ToldCarryAsked): n
   return piece.stays.findLast((stay) => stay.roomId !== toRoomId)?.roomId ?? piece.keepRoomId
 }
 
-/** As `carryCheckInput`, with the air of the room that the piece comes home to, from the start of the stay on. */
+/**
+ * As `carryCheckInput`, with the air of the room that the piece comes home to, from the start of the stay on. Its parts
+ * lie side by side there, as a lid that is to be judged should.
+ */
 export function carryThereAndBack(
   material: CarryMaterial,
   asked: CarryAsked | ToldCarryAsked,
@@ -229,11 +237,11 @@ export function carryThereAndBack(
   const room = roomId === null ? undefined : material.rooms.get(roomId)
   if (input === undefined || roomId === null || room === undefined || room.air.kind === 'never') return input
   const now = material.now.getTime()
-  const atHome = [{ roomId, fromAt: asked.startsAt, toAt: null, cover: 'closed' as const }]
+  const atHome = [{ roomId, fromAt: asked.startsAt, toAt: null, cover: 'open' as const }]
   const recorded = airsOf(atHome, (id) => material.rooms.get(id), input.startsAt, now)
   const hours = Math.min(forecastHoursMax, Math.max(72, Math.ceil(asked.stayMinutes / 60) + 48))
   const coming = comingAirs(material, room, room.air, Math.max(input.startsAt, now), hours)
-  return { ...input, home: [...recorded, ...coming.map((hour) => ({ ...hour, cover: 'closed' as const }))] }
+  return { ...input, home: [...recorded, ...coming.map((hour) => ({ ...hour, cover: 'open' as const }))] }
 }
 
 /** The air of a stay: what was recorded since it went, and what is to come, in the cover asked about. */

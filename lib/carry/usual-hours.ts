@@ -1,12 +1,19 @@
 import { TZDate } from '@date-fns/tz'
 import { HOUR_MS, type RoomHours } from '@/lib/follow/record'
 import { FORECAST_HOURS, type RoomForecast } from '@/lib/forecast/room-forecast'
-import { type BetterHour, type BetterHoursAsked, byLeastHarm, judgedHour, withForecast } from './better-hours'
+import {
+  type BetterHour,
+  type BetterHoursAsked,
+  byLeastHarm,
+  judgedHour,
+  leastForgiving,
+  withForecast,
+} from './better-hours'
 import type { CarryMaterial } from './material'
 
 const DAY_MS = 24 * HOUR_MS
-/** Days ahead that are told, beyond the forecast. */
-const DAYS_AHEAD = 7
+/** Hours that are told beyond the forecast: to the end of the week. */
+const HOURS_AHEAD = 5 * 24
 /** Fewer days of the sort make nothing usual. */
 const DAYS_MIN = 2
 /** Hours at which nobody sets out are left out. Status: common practice, no source. */
@@ -52,11 +59,7 @@ function usualAirOf(hours: RoomHours, timeZone: string): (at: number) => UsualAi
 }
 
 /** A stay's air as it usually is, in the shape that carries are judged on. */
-function usualForecast(
-  startsAt: number,
-  usualAt: (at: number) => UsualAir | undefined,
-): RoomForecast | undefined {
-  const airs = Array.from({ length: FORECAST_HOURS }, (_, n) => usualAt(startsAt + n * HOUR_MS))
+function usualForecast(startsAt: number, airs: readonly (UsualAir | undefined)[]): RoomForecast | undefined {
   const known = airs.flatMap((air) => air ?? [])
   if (known.length < FORECAST_HOURS) return undefined
   const emcPct = known.map((air) => air.emcPct)
@@ -88,18 +91,28 @@ export function usualHours(
 ): BetterHour[] {
   const room = material.rooms.get(asked.toRoomId)
   if (room === undefined || room.air.kind !== 'fresh') return []
+  const first = Math.ceil(material.now.getTime() / HOUR_MS) * HOUR_MS + 2 * DAY_MS
+  const least = leastForgiving(material, asked, first)
+  if (least === undefined) return []
   const usualAt = usualAirOf(room.hours, asked.timeZone)
-  const now = Math.ceil(material.now.getTime() / HOUR_MS) * HOUR_MS
+  const airs = Array.from({ length: HOURS_AHEAD + FORECAST_HOURS }, (_, n) => usualAt(first + n * HOUR_MS))
   const byDay = new Map<string, BetterHour>()
-  for (let at = now + 2 * DAY_MS; at < now + DAYS_AHEAD * DAY_MS; at += HOUR_MS) {
-    const { hour } = localOf(at, asked.timeZone)
-    const forecast = hour < EARLIEST_HOUR || hour > LATEST_HOUR ? undefined : usualForecast(at, usualAt)
+  for (let n = 0; n < HOURS_AHEAD; n += 1) {
+    const at = first + n * HOUR_MS
+    const local = new TZDate(at, asked.timeZone)
+    const forecast =
+      local.getHours() < EARLIEST_HOUR || local.getHours() > LATEST_HOUR
+        ? undefined
+        : usualForecast(at, airs.slice(n, n + FORECAST_HOURS))
     if (forecast === undefined) continue
-    const judged = judgedHour(withForecast(material, asked.toRoomId, forecast), asked, at, null)
-    if (judged === undefined) continue
-    const day = new TZDate(at, asked.timeZone).toDateString()
+    const usual = withForecast(material, asked.toRoomId, forecast)
+    const judged = judgedHour(usual, { ...asked, pieceIds: [least.pieceId] }, at, null)
+    const day = local.toDateString()
     const best = byDay.get(day)
-    if (best === undefined || byLeastHarm(judged, best) < 0) byDay.set(day, judged)
+    if (judged !== undefined && (best === undefined || byLeastHarm(judged, best) < 0)) {
+      // The others can only be better off; their verdicts are told with it.
+      byDay.set(day, judgedHour(usual, asked, at, null) ?? judged)
+    }
   }
   return [...byDay.values()].toSorted(byLeastHarm)
 }

@@ -52,8 +52,9 @@ export const roomForecastViewSchema = z.object({
         usedPct: z.number(),
       }),
     ),
+    words: z.array(z.string()),
   }),
-  /** The same in sentences. */
+  /** What is expected, in sentences. */
   words: z.array(z.string()),
   strip: hourStripSchema,
   completeTo: instant.nullable(),

@@ -15,8 +15,8 @@ const points = (value: number): string =>
   value < 0.095 ? `${(Math.round(value * 100) / 100).toFixed(2)} points` : formatPoints(value)
 
 /** How good forecasts of a room have been, beside the two simplest ones. */
-export function goodnessWords(goodness: RoomForecastView['goodness']): string[] {
-  const told = goodness.leads.filter(({ leadH, n }) => TOLD_LEADS.includes(leadH) && n > 0)
+export function goodnessWords(leads: RoomForecastView['goodness']['leads']): string[] {
+  const told = leads.filter(({ leadH, n }) => TOLD_LEADS.includes(leadH) && n > 0)
   if (told.length === 0) return ['Not yet known: a forecast is scored once its hours have come.']
   return told.map(({ leadH, method, recordPct, sameAsNowPct, yesterdayPct }) => {
     const yesterday = yesterdayPct === null ? '' : `, “same as yesterday” by ${points(yesterdayPct)}`

@@ -1,7 +1,6 @@
-import { judgedHours, judgedHour, withForecast } from '@/lib/carry/better-hours'
-import { briefCheck } from '@/lib/carry/brief-check'
+import { judgedHour, judgedHours, leastForgiving, withForecast } from '@/lib/carry/better-hours'
 import type { Verdict } from '@/lib/carry/carry-check'
-import { airOfHour, carryCheckInput, type CarryMaterial } from '@/lib/carry/material'
+import { airOfHour, type CarryMaterial } from '@/lib/carry/material'
 import { HOUR_MS } from '@/lib/follow/record'
 import { formatCount } from '@/lib/format/figures'
 import { FORECAST_HOURS, litForecast } from './room-forecast'
@@ -68,10 +67,9 @@ interface Judge {
   words: string
 }
 
-const stayFrom = (pieceId: number, roomId: number, startsAt: Date) => ({
-  pieceId,
+const stayOf = (pieceIds: readonly number[], roomId: number) => ({
+  pieceIds,
   toRoomId: roomId,
-  startsAt,
   stayMinutes: STAY_MINUTES,
   cover: 'open' as const,
 })
@@ -81,15 +79,10 @@ function judgeOf(
   material: CarryMaterial,
   { roomId, pieceIds, keepRoomId }: HourStripAsked,
 ): Judge | undefined {
-  const used = pieceIds.flatMap((pieceId) => {
-    const input = carryCheckInput(material, stayFrom(pieceId, roomId, material.now))
-    const brief = input && briefCheck(input)
-    return brief === undefined ? [] : { pieceId, usedAtEnd: brief.usedAtEnd }
-  })
-  const [least] = used.toSorted((one, other) => other.usedAtEnd - one.usedAtEnd)
+  const least = leastForgiving(material, stayOf(pieceIds, roomId), material.now.getTime())
   if (least !== undefined) {
     const number = material.pieces.get(least.pieceId)?.facts.number ?? ''
-    const of = used.length === 1 ? '' : `, the least forgiving of ${String(used.length)} boxes`
+    const of = least.of === 1 ? '' : `, the least forgiving of ${String(least.of)} boxes`
     return {
       material,
       pieceId: least.pieceId,
@@ -136,7 +129,7 @@ function forecastCells({ material, pieceId }: Judge, asked: HourStripAsked, lit:
 function repeatedCells({ material, pieceId }: Judge, { roomId }: HourStripAsked): StripCell[] {
   const hourAt = Math.floor(material.now.getTime() / HOUR_MS) * HOUR_MS
   const hours = material.rooms.get(roomId)?.hours
-  const stay = { pieceIds: [pieceId], toRoomId: roomId, stayMinutes: STAY_MINUTES, cover: 'open' as const }
+  const stay = stayOf([pieceId], roomId)
   return Array.from({ length: FORECAST_HOURS }, (_, n) => n).flatMap((n) => {
     const at = hourAt + n * HOUR_MS
     const before = hours?.get(at - FORECAST_HOURS * HOUR_MS)

@@ -72,9 +72,9 @@ export function makeForecast(
     humidityPct: byRecord('humidityPct'),
   }
   const yesterdayPct = ALL_LEADS.map((leadH) => toldByYesterday(record, leadH, 'emcPct'))
-  const method = ALL_LEADS.map((leadH, n): ForecastMethod => {
+  const method = ALL_LEADS.map((leadH): ForecastMethod => {
     const best = bestMethod(scores, leadH)
-    return best === 'yesterday' && yesterdayPct[n] === null ? 'record' : best
+    return best === 'record' || isUnlit(prep, best, leadH) ? best : 'record'
   })
   const used = (measure: Measure) =>
     ALL_LEADS.map((leadH, n) =>
@@ -102,6 +102,13 @@ export function makeForecast(
     usesLastYear: prep.moves !== null,
     warmed: warmedForecast(prep, unlit),
   }
+}
+
+/** Whether the hour that a simple way takes over is on record and was not warmed: what a fire did is no forecast. */
+function isUnlit({ isWarmed, input }: Prepared, way: ForecastMethod, leadH: number): boolean {
+  const last = input.record.length - 1
+  const taken = way === 'same-as-now' ? last : last + leadH - Math.ceil(leadH / DAY_HOURS) * DAY_HOURS
+  return isWarmed[taken] === 0 && !Number.isNaN(input.record.emcPct[taken] ?? NaN)
 }
 
 const NO_ERROR = Float64Array.of(0)

@@ -3,9 +3,9 @@ import { UNLEARNED_PACE } from '@/lib/follow/learned-pace'
 
 /** No piece of a site has this number inside. */
 export const TYPICAL_BOX_ID = -1
-export const TYPICAL_BOX_WORDS = 'a typical box (62 mm of ash, snug)'
+export const TYPICAL_BOX_WORDS = 'a typical box (62 mm of ash, an easy fit)'
 
-/** Stands in where no piece was chosen: a snug ash box of 62 mm, cut and kept in the house. Status: common practice, no source. */
+/** Stands in where no piece was chosen: an ash box of 62 mm with an easy lid, cut and kept in the house. Status: common practice, no source. */
 export const typicalBox = (keepRoomId: number): PieceMaterial => ({
   code: '',
   facts: {
@@ -25,7 +25,7 @@ export const typicalBox = (keepRoomId: number): PieceMaterial => ({
     blankDiameterMm: null,
     endsSealed: false,
     finish: '',
-    fitGrade: 'snug',
+    fitGrade: 'easy',
     clearanceMm: null,
     allowanceMm: null,
   },

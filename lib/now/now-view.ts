@@ -1,5 +1,6 @@
 import { z } from 'zod'
 import { carrySchema } from '@/lib/carry/carry'
+import { hourStripSchema } from '@/lib/forecast/strip-view'
 import { markSchema } from '@/lib/notices/notice'
 import { roomAirSchema, roomKindSchema } from '@/lib/rooms/room'
 
@@ -62,6 +63,10 @@ export const nowViewSchema = z.object({
     brackets: z.array(ruleBracketSchema),
     shelf: z.array(ruleShelfSchema),
   }),
+  /** The shop's next 48 hours; null where there is no shop, or for those who see whole days only. */
+  strip: z
+    .object({ room: z.object({ id: z.string(), name: z.string() }), hours: hourStripSchema })
+    .nullable(),
   /** Pieces just brought back, for the undo line. */
   justBack: z.array(
     z.object({
@@ -72,9 +77,13 @@ export const nowViewSchema = z.object({
       at: instant,
       /** A box, of which it can be told how its lid turned. */
       hasLid: z.boolean(),
+      /** That question was passed over. */
+      isAskSkipped: z.boolean(),
     }),
   ),
   needs: z.array(needSchema),
+  /** It is time to lock up, and the day is not closed yet. */
+  isLockUp: z.boolean(),
   silent: z.array(
     z.object({
       id: z.string(),

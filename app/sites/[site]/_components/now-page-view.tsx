@@ -2,18 +2,23 @@
 
 import { Fragment, useState } from 'react'
 import { describeError } from '@/app/_components/api'
+import { HourStripChart } from '@/app/_components/charts/hour-strip'
 import { MoistureRule, apartWords } from '@/app/_components/charts/moisture-rule'
 import { useSiteQuery } from '@/app/_components/live/use-site-query'
 import { ButtonLink } from '@/app/_components/ui/button-link'
 import { Callout } from '@/app/_components/ui/callout'
 import { PageSentence } from '@/app/_components/ui/page-sentence'
 import { Button } from '@/app/_components/ui/button'
+import { Sheet } from '@/app/_components/ui/sheet'
 import { UndoLine } from '@/app/_components/ui/undo-line'
 import { useNow } from '@/app/_components/ui/use-now'
 import { formatClock } from '@/lib/format/times'
+import type { AsksView } from '@/lib/notices/delivery'
 import type { NowView } from '@/lib/now/now-view'
 import { may } from '@/lib/sites/permissions'
 import type { Reader } from '@/lib/sites/reader'
+import { LockUpLink } from './lock-up-link'
+import { AsksSheet, AtWork } from './asks-sheet'
 import { NeedsSheet } from './needs-sheet'
 import { NoReadings } from './no-readings'
 import { furthestApart, nowRule } from './now-rule'
@@ -26,7 +31,9 @@ import { useCarryActions } from './use-carry-actions'
 const TWO_HOURS_MS = 2 * 3_600_000
 
 /** Now: what is out and until when, what is down to go, what the air would do, and what needs a hand. */
-export function NowPageView({ reader, initial }: { reader: Reader; initial: NowView }) {
+type NowPageViewProps = { reader: Reader; initial: NowView; asks: AsksView | null }
+
+export function NowPageView({ reader, initial, asks }: NowPageViewProps) {
   const query = useSiteQuery<NowView>({ site: reader.site, area: 'now', path: '/now', initial })
   const view = query.data ?? initial
   const now = useNow(view.at)
@@ -51,7 +58,9 @@ export function NowPageView({ reader, initial }: { reader: Reader; initial: NowV
   return (
     <>
       <PageSentence parts={view.headline} />
+      {asks === null ? null : <AsksSheet reader={reader} initial={asks} />}
       <OutAnnouncer pieces={out} now={now} />
+      {view.isLockUp && mayDo ? <LockUpLink base={base} isOut={out.length > 0} /> : null}
       {out.length === 0 && mayDo && isRead ? (
         <div className="flex flex-wrap gap-3 px-4 sm:px-0">
           <ButtonLink href={`${base}/carry?mode=now`} variant="filled" className="max-sm:grow">
@@ -130,6 +139,7 @@ export function NowPageView({ reader, initial }: { reader: Reader; initial: NowV
                     pieceId={back.pieceId}
                     number={back.number}
                     carryId={back.carryId}
+                    isAskSkipped={back.isAskSkipped}
                     className="border-l-[6px] border-l-good bg-board p-4"
                   />
                 ) : null}
@@ -141,7 +151,20 @@ export function NowPageView({ reader, initial }: { reader: Reader; initial: NowV
       {later.map((carry) => (
         <PlannedSheet key={carry.id} carry={carry} reader={reader} now={now} />
       ))}
+      {view.strip ? (
+        <Sheet ticks>
+          <HourStripChart
+            strip={view.strip.hours}
+            title={`${view.strip.room.name}, next 48 hours`}
+            roomName={view.strip.room.name}
+            timeZone={reader.timeZone}
+            units={reader.units}
+            now={now}
+          />
+        </Sheet>
+      ) : null}
       {view.needs.length > 0 ? <NeedsSheet needs={view.needs} base={base} /> : null}
+      {asks === null ? null : <AtWork reader={reader} initial={asks} />}
       {query.isError && !isRead ? (
         <div className="max-sm:px-4">
           <Button

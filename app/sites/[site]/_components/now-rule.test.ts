@@ -43,6 +43,7 @@ function view(more: Partial<NowView['rule']>, carries: Partial<NowView> = {}): N
     out: [],
     planned: [],
     rule: { rooms: [], brackets: [], shelf: [], ...more },
+    strip: null,
     justBack: [],
     needs: [],
     silent: [],

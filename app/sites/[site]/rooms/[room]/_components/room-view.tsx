@@ -12,6 +12,7 @@ import { Sheet } from '@/app/_components/ui/sheet'
 import { StaleState } from '@/app/_components/ui/states'
 import { TextLink } from '@/app/_components/ui/text-link'
 import { useNow } from '@/app/_components/ui/use-now'
+import type { RoomForecastView } from '@/lib/forecast/forecast-view'
 import {
   formatCount,
   formatEmc,
@@ -27,6 +28,7 @@ import type { FindableWood } from '@/lib/wood/find-woods'
 import { EditRoom } from './edit-room'
 import { feltMarks } from './felt-marks'
 import { FeltSheet } from './felt-sheet'
+import { ForecastSheet } from './forecast-sheet'
 import { RoomChart } from './room-chart'
 import { roomRule } from './room-rule'
 import type { Span } from './span'
@@ -40,10 +42,13 @@ type RoomViewProps = {
   initialFelt: InitialFelt | undefined
   /** The woods that its felt EMC can be reckoned for. */
   woods: readonly FindableWood[]
+  /** Null for those who see whole days only. */
+  initialForecast: RoomForecastView | null
 }
 
 /** What this room does to wood: now, today, this month, in numbers and in plain words. */
-export function RoomView({ reader, initial, initialSeries, initialFelt, woods }: RoomViewProps) {
+export function RoomView(props: RoomViewProps) {
+  const { reader, initial, initialSeries, initialFelt, woods, initialForecast } = props
   const { data: room = initial } = useSiteQuery<RoomDetail>({
     site: reader.site,
     area: 'rooms',
@@ -89,6 +94,9 @@ export function RoomView({ reader, initial, initialSeries, initialFelt, woods }:
           <Cautions cautions={room.cautions} />
         </div>
       ) : null}
+      {initialForecast === null ? null : (
+        <ForecastSheet reader={reader} initial={initialForecast} now={now} />
+      )}
       <RoomChart reader={reader} roomId={room.id} initial={initialSeries} now={now} />
       <FeltSheet reader={reader} felt={felt} woods={woods} now={now} />
       <div className="grid gap-7 lg:grid-cols-2 lg:items-start">
