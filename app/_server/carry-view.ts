@@ -152,6 +152,8 @@ function viewCarry(
     return piece === undefined ? [] : [viewPiece(carry, part, piece, check, now)]
   })
   const clock = { timeZone: member.timeZone, now }
+  const told =
+    whatever && whateverWords({ ...whatever, pieces: parts, stayMinutes: carry.stayMinutes }, clock)
   const { toRoom } = carry
   const lastBackAt = Math.max(0, ...carry.pieces.map((piece) => piece.backAt?.getTime() ?? 0))
   const plannedAt = carry.plannedAt.toISOString()
@@ -169,6 +171,7 @@ function viewCarry(
     by: carry.createdByName,
     pieces: parts,
     takesWhatever: carry.takesWhatever && carry.state === 'planned',
+    whatever: told ?? null,
     repeat: carry.repeat === null ? null : { id: carry.repeat.code, words: repeatWords(carry.repeat) },
     putOffFrom: carry.putOffFrom?.toISOString() ?? null,
     canPutBack:
@@ -182,10 +185,7 @@ function viewCarry(
         plannedAt,
         stayMinutes: carry.stayMinutes,
         pieces: parts.map((part) => ({ ...part, isOut: part.outAt !== null && part.backAt === null })),
-        whatever:
-          whatever === undefined
-            ? undefined
-            : whateverWords({ ...whatever, pieces: parts, stayMinutes: carry.stayMinutes }, clock),
+        whatever: told,
       },
       clock,
     ),

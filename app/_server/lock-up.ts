@@ -45,6 +45,12 @@ export async function getLockUp(db: Kysely<Database>, member: SiteMember, now: D
   }
 }
 
+/** Whether it is evening and the day is not closed yet. */
+export async function isLockUpOpen(db: Kysely<Database>, member: SiteMember, now: Date): Promise<boolean> {
+  const { isEvening, dayOn } = eveningFor(member, now)
+  return isEvening && (await findLockUp(db, member.siteId, dayOn)).closed === null
+}
+
 /** "Anything out that isn't logged?" "No, nothing", or that answer taken back. */
 export async function answerNothingElse(
   db: Kysely<Database>,

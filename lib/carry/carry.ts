@@ -104,6 +104,8 @@ export const carrySchema = z.object({
   pieces: z.array(carryPieceSchema),
   /** A plan without named pieces, until it goes. */
   takesWhatever: z.boolean(),
+  /** What is said of such a plan, once it is near enough to be judged. */
+  whatever: z.string().nullable(),
   /** The plan that comes again which it is one of: "every Tuesday at 09:00". */
   repeat: z.object({ id: z.string(), words: z.string() }).nullable(),
   /** The hour that it was put off from; it can be put back for 10 minutes. */

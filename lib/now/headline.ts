@@ -113,6 +113,8 @@ function planned(input: HeadlineInput): Part[] | undefined {
     next.find((one) => one.worst === 'leave') ?? next.find((one) => bad.includes(one.worst)) ?? next[0]
   if (carry === undefined) return undefined
   const when = strong(formatMoment(carry.plannedAt, input.timeZone, input.now))
+  if (carry.takesWhatever)
+    return [plain(`Planned for ${carry.toRoom.name} at `), when, plain(`. ${carry.whatever ?? ''}`.trimEnd())]
   const pressing = carry.pieces.filter((piece) => piece.check !== null && gradeIs(piece.check, carry.worst))
   const names = strong(namesOf(pressing.length > 0 ? pressing : carry.pieces))
   const room = carry.toRoom.name

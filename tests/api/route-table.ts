@@ -230,6 +230,10 @@ export const routeTable: Record<string, Row> = {
     prepare: planFor,
   },
   'POST /api/v1/sites/[site]/carries/[carry]/put-back': { action: 'carries:do' },
+  'POST /api/v1/sites/[site]/carries/[carry]/skip-ask': {
+    action: 'pieces:record',
+    body: ({ piece }) => ({ pieceId: piece }),
+  },
   'GET /api/v1/sites/[site]/carries/how-good': { action: 'carries:see' },
   'GET /api/v1/sites/[site]/carries/[carry]/forgotten': { action: 'carries:see' },
 
@@ -353,6 +357,35 @@ export const routeTable: Record<string, Row> = {
   'PATCH /api/v1/sites/[site]/notices/[notice]': {
     action: 'notices:acknowledge',
     body: () => ({ isSeen: true, isAcknowledged: true }),
+  },
+  'GET /api/v1/sites/[site]/rules': { action: 'rules:see' },
+  'PATCH /api/v1/sites/[site]/rules': {
+    action: 'rules:change',
+    body: ({ room }) => ({ rule: 'too-dry', isOn: true, settings: { rh: 32, rooms: [room] } }),
+    ifMatch: true,
+  },
+  'POST /api/v1/sites/[site]/rules/preview': {
+    action: 'rules:see',
+    body: () => ({ rule: 'too-dry', settings: { rh: 32 } }),
+  },
+  'POST /api/v1/sites/[site]/rules/undo': {
+    action: 'rules:change',
+    body: () => ({ rule: 'too-dry' }),
+    ifMatch: true,
+    // A change to undo that left the rule at the version that is sent.
+    prepare: async ({ db, site: { siteId } }) => {
+      await db.insertInto('rule').values({ site_id: siteId, rule: 'too-dry', is_on: false }).execute()
+      await db
+        .insertInto('change')
+        .values({
+          site_id: siteId,
+          subject_kind: 'rule',
+          subject_code: 'too-dry',
+          action: 'change',
+          before: JSON.stringify({ isOn: true, settings: {} }),
+        })
+        .execute()
+    },
   },
   'POST /api/v1/sites/[site]/notices/seen': { action: 'notices:acknowledge', status: 204 },
   'GET /api/v1/sites/[site]/live': { action: 'site:see' },

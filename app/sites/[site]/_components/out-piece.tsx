@@ -5,7 +5,7 @@ import { Button } from '@/app/_components/ui/button'
 import { Mark } from '@/app/_components/ui/mark'
 import { PieceOutline } from '@/app/_components/ui/piece-outline'
 import { TextLink } from '@/app/_components/ui/text-link'
-import type { Carry, CarryPiece } from '@/lib/carry/carry'
+import { type Carry, type CarryPiece, hasLid } from '@/lib/carry/carry'
 import { formatDuration, formatMoment } from '@/lib/format/times'
 import { coverWords } from '@/lib/pieces/piece'
 import { may } from '@/lib/sites/permissions'
@@ -49,6 +49,17 @@ export function OutPiece({ carry, piece, reader, now, isFirst = false }: OutPiec
             {piece.title}, {coverWords[piece.cover]}
           </p>
           <p className="text-label text-ink-soft">{leftWords(piece, reader, now)}</p>
+          {piece.isOverdue && hasLid(piece) ? (
+            <p>
+              <TextLink
+                href={`/sites/${reader.site}/carry/${carry.id}#forgotten`}
+                aria-label={`I forgot it: ${piece.number}`}
+                className="inline-flex min-h-11 items-center"
+              >
+                I forgot it: how bad, and what now?
+              </TextLink>
+            </p>
+          ) : null}
           {piece.isOverdue ? (
             <p className="text-label text-ink-soft">
               Never force a tight lid, lever it or warm it. Line up the grain, keep both parts side by side,

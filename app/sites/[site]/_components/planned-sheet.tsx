@@ -14,7 +14,9 @@ import { may } from '@/lib/sites/permissions'
 import type { Reader } from '@/lib/sites/reader'
 import { ChangePlan } from './change-plan'
 import { PieceVerdict } from './piece-verdict'
+import { PutOff, PutOffLine } from './put-off'
 import { StartCarry } from './start-carry'
+import { TakeWhatever } from './take-whatever'
 import { useCarryActions } from './use-carry-actions'
 
 type PlannedSheetProps = {
@@ -36,6 +38,7 @@ export function PlannedSheet({ carry, reader, now, isOwnPage = false }: PlannedS
       : minutes <= 0
         ? 'its time has come, '
         : ''
+  const isShort = carry.worst === 'leave' || carry.worst === 'keep-short'
   const mayDo = may(reader.role, 'carries:do')
   return (
     <Sheet
@@ -43,6 +46,7 @@ export function PlannedSheet({ carry, reader, now, isOwnPage = false }: PlannedS
       title={`${whoGoes(carry)} down to go to ${carry.toRoom.name}, ${formatMoment(carry.plannedAt, reader.timeZone, now)}`}
       aside={`${when}for ${formatDuration(carry.stayMinutes)}, ${coverWords[carry.cover]}`}
     >
+      {carry.whatever ? <p className="mb-2 max-w-words">{carry.whatever}</p> : null}
       <ul className="grid gap-x-8 sm:grid-cols-2">
         {carry.pieces.map((piece) => (
           <li key={piece.id} className="flex gap-4 border-b border-line py-3 last:border-b-0 sm:border-b-0">
@@ -64,10 +68,16 @@ export function PlannedSheet({ carry, reader, now, isOwnPage = false }: PlannedS
       <div className="mt-4 flex flex-wrap items-center gap-3">
         {mayDo ? (
           <>
-            <StartCarry carry={carry} start={actions.start} />
-            {carry.worst === 'leave' && carry.cover !== 'bagged' ? (
+            {carry.takesWhatever ? (
+              <TakeWhatever carry={carry} reader={reader} start={actions.start} />
+            ) : (
+              <StartCarry carry={carry} start={actions.start} />
+            )}
+            {isShort && !carry.canPutBack ? (
+              <PutOff carry={carry} actions={actions} isBest={carry.worst === 'leave'} />
+            ) : null}
+            {carry.worst === 'leave' && carry.cover !== 'bagged' && !carry.takesWhatever ? (
               <Button
-                variant="filled"
                 pending={actions.change.pending}
                 onClick={() => {
                   actions.change.act({
@@ -100,6 +110,13 @@ export function PlannedSheet({ carry, reader, now, isOwnPage = false }: PlannedS
           </TextLink>
         )}
       </div>
+      <PutOffLine carry={carry} actions={actions} timeZone={reader.timeZone} now={now} />
+      {carry.repeat ? (
+        <p className="mt-3 text-label text-ink-soft">
+          One of those that go {carry.repeat.words}.{' '}
+          <TextLink href={`/sites/${reader.site}/carry#plans`}>Change the plan that comes again</TextLink>
+        </p>
+      ) : null}
       <ConfirmDialog
         open={asking}
         onOpenChange={setAsking}
@@ -119,6 +136,7 @@ export function PlannedSheet({ carry, reader, now, isOwnPage = false }: PlannedS
 }
 
 function whoGoes(carry: Carry): string {
+  if (carry.takesWhatever) return 'Whatever you take is'
   const [first] = carry.pieces
   if (carry.pieces.length === 1 && first) return `${first.number} is`
   return `${formatCount(carry.pieces.length, 'piece')} are`

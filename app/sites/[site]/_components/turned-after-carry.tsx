@@ -1,31 +1,41 @@
 'use client'
 
-import { useState } from 'react'
 import { useSiteQuery } from '@/app/_components/live/use-site-query'
 import { learnedWords } from '@/lib/pieces/learned-words'
 import type { PieceOutcomes } from '@/lib/pieces/outcome'
 import type { Reader } from '@/lib/sites/reader'
 import { TurnedAsk } from './turned-ask'
+import { useCarryActions } from './use-carry-actions'
 
 type TurnedAfterCarryProps = {
   reader: Reader
   pieceId: string
   number: string
   carryId: string
+  /** It was passed over on some screen. */
+  isAskSkipped: boolean
   className?: string
 }
 
 /** Asked once for each box that came back, unless it has been told or is passed over. */
-export function TurnedAfterCarry({ reader, pieceId, number, carryId, className }: TurnedAfterCarryProps) {
-  const [isSkipped, setIsSkipped] = useState(false)
+export function TurnedAfterCarry({
+  reader,
+  pieceId,
+  number,
+  carryId,
+  isAskSkipped,
+  className,
+}: TurnedAfterCarryProps) {
+  const { skipAsk } = useCarryActions(reader.site)
   const { data } = useSiteQuery<PieceOutcomes>({
     site: reader.site,
     area: 'pieces',
     key: ['outcomes', pieceId],
     path: `/pieces/${pieceId}/outcomes`,
   })
-  if (isSkipped || data === undefined) return null
+  if (data === undefined) return null
   const told = data.items.find((outcome) => outcome.carryId === carryId && !outcome.isUndone)
+  if (told === undefined && (isAskSkipped || skipAsk.done)) return null
   return (
     <div className={className}>
       <TurnedAsk
@@ -35,7 +45,7 @@ export function TurnedAfterCarry({ reader, pieceId, number, carryId, className }
         question={`How did the lid of ${number} turn?`}
         told={told}
         onSkip={() => {
-          setIsSkipped(true)
+          skipAsk.act({ carryId, pieceId })
         }}
       />
       {told && data.learned ? (

@@ -23,8 +23,8 @@ export function useCarryActions(site: string) {
 
   return {
     start: useAction({
-      run: ({ carryId, againstAdvice }: { carryId: string; againstAdvice: boolean }) =>
-        post(carryId, 'start', { againstAdvice }),
+      run: ({ carryId, againstAdvice, pieceIds }: PiecesOf & { againstAdvice: boolean }) =>
+        post(carryId, 'start', { againstAdvice, pieceIds }),
       invalidates,
       errors: 'inline',
     }),
@@ -47,6 +47,21 @@ export function useCarryActions(site: string) {
         }),
       invalidates,
       done: 'The plan is changed',
+    }),
+    /** From the hour that stands on the screen, so that a second press puts off once. */
+    putOff: useAction({
+      run: ({ carryId, from, to }: { carryId: string; from: string; to?: string }) =>
+        post(carryId, 'put-off', { from, to }),
+      invalidates,
+    }),
+    putBack: useAction({
+      run: ({ carryId }: { carryId: string }) => post(carryId, 'put-back'),
+      invalidates,
+    }),
+    skipAsk: useAction({
+      run: ({ carryId, pieceId }: { carryId: string; pieceId: string }) =>
+        post(carryId, 'skip-ask', { pieceId }),
+      invalidates,
     }),
     callOff: useAction({
       run: ({ carryId }: { carryId: string }) => post(carryId, 'call-off'),

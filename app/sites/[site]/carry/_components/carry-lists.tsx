@@ -6,12 +6,14 @@ import { Mark } from '@/app/_components/ui/mark'
 import { Sheet } from '@/app/_components/ui/sheet'
 import { TextLink } from '@/app/_components/ui/text-link'
 import type { Carry } from '@/lib/carry/carry'
+import { isTooFarAhead } from '@/lib/carry/repeat'
 import { formatDuration, formatMoment } from '@/lib/format/times'
 import { coverWords } from '@/lib/pieces/piece'
 import type { Reader } from '@/lib/sites/reader'
 import { OutSheet, piecesOut } from '../../_components/out-sheet'
 import { PlannedSheet } from '../../_components/planned-sheet'
 import type { Page } from './carry-page-view'
+import { PlansSheet } from './plans-sheet'
 
 type CarryListsProps = { reader: Reader; now: Date; open: Page<Carry>; ended: Page<Carry> }
 
@@ -32,15 +34,29 @@ export function CarryLists({ reader, now, open: initialOpen, ended: initialEnded
     initial: initialEnded,
   })
   const out = piecesOut(open.items)
-  const planned = open.items.filter((carry) => carry.state === 'planned')
+  const planned = open.items.filter(
+    (carry) =>
+      carry.state === 'planned' &&
+      !isTooFarAhead(
+        { ...carry, plannedAt: new Date(carry.plannedAt), isRepeated: carry.repeat !== null },
+        now,
+      ),
+  )
   return (
     <>
       {out.length > 0 ? <OutSheet title="Out now" pieces={out} reader={reader} now={now} /> : null}
       {planned.map((carry) => (
         <PlannedSheet key={carry.id} carry={carry} reader={reader} now={now} />
       ))}
+      <PlansSheet reader={reader} now={now} />
       {ended.items.length > 0 ? (
-        <Sheet id="ended" title="Lately">
+        <Sheet
+          id="ended"
+          title="Lately"
+          action={
+            <TextLink href={`/sites/${reader.site}/carry/how-good`}>How good the verdicts were</TextLink>
+          }
+        >
           <DataTable
             caption="Carries that ended lately"
             rows={ended.items}
@@ -52,7 +68,7 @@ export function CarryLists({ reader, now, open: initialOpen, ended: initialEnded
                 phone: 'title',
                 cell: (carry) => (
                   <TextLink href={`/sites/${reader.site}/carry/${carry.id}`}>
-                    {carry.pieces.map((piece) => piece.number).join(', ')}
+                    {carry.pieces.map((piece) => piece.number).join(', ') || 'whatever was taken'}
                   </TextLink>
                 ),
               },

@@ -36,6 +36,7 @@ export function EndedSheet({ carry, reader, now }: { carry: Carry; reader: Reade
                   pieceId={piece.id}
                   number={piece.number}
                   carryId={carry.id}
+                  isAskSkipped={piece.isAskSkipped}
                   className="mt-2"
                 />
               ) : null}

@@ -8,10 +8,11 @@ import { Cautions } from '@/app/_components/ui/caution'
 import { PageSentence } from '@/app/_components/ui/page-sentence'
 import { useNow } from '@/app/_components/ui/use-now'
 import { carryCautions } from '@/lib/carry/cautions'
-import type { Carry } from '@/lib/carry/carry'
+import { type Carry, hasLid } from '@/lib/carry/carry'
 import { formatMoment } from '@/lib/format/times'
 import { may } from '@/lib/sites/permissions'
 import type { Reader } from '@/lib/sites/reader'
+import { ForgottenPanel } from '../../_components/forgotten-panel'
 import { OutSheet, piecesOut } from '../../_components/out-sheet'
 import { PlannedSheet } from '../../_components/planned-sheet'
 import { useCarryActions } from '../../_components/use-carry-actions'
@@ -51,6 +52,9 @@ export function OneCarryView({ reader, initial }: { reader: Reader; initial: Car
           isUrgent={out.some(({ piece }) => piece.isOverdue)}
         />
       ) : null}
+      {mayHaveBeenForgotten(carry, now) ? (
+        <ForgottenPanel reader={reader} carryId={carry.id} isOpenAtFirst={isAskedFor(carry)} />
+      ) : null}
       {carry.pieces.some((piece) => piece.backAt !== null) || !isOpen ? (
         <EndedSheet carry={carry} reader={reader} now={now} />
       ) : null}
@@ -88,3 +92,21 @@ export function OneCarryView({ reader, initial }: { reader: Reader; initial: Car
     </>
   )
 }
+
+/** Some days on, how it was no longer helps. */
+const FORGOTTEN_TOLD_MS = 5 * 86_400_000
+
+/** A box that is overdue, or came in later than was planned, or went against the advice. */
+function mayHaveBeenForgotten(carry: Carry, now: Date): boolean {
+  return carry.pieces.some((piece) => {
+    if (piece.outAt === null || !hasLid(piece)) return false
+    if (piece.backAt === null) return piece.isOverdue
+    const backAt = new Date(piece.backAt).getTime()
+    const stayedMs = backAt - new Date(piece.outAt).getTime()
+    const isLate = carry.againstAdvice || stayedMs > carry.stayMinutes * 60_000
+    return isLate && now.getTime() - backAt < FORGOTTEN_TOLD_MS
+  })
+}
+
+/** An overdue piece has no time for another press. */
+const isAskedFor = (carry: Carry): boolean => carry.pieces.some((piece) => piece.isOverdue)
