@@ -4,7 +4,7 @@ import { type AirFrom, type AirStep, copyState, stepWood, type WoodState } from 
 import type { BackHome } from './carry-answer'
 import { lossMm } from './joint-loss'
 import { airsOfInput, type Reckoned } from './reckon'
-import { momentsOf, stepsBetween } from './stay-run'
+import { stepsBetween } from './stay-run'
 
 const HOUR_MS = 3_600_000
 
@@ -14,6 +14,11 @@ export const HOME_TOLERANCE_MM = 0.02
 export const HOME_TOLERANCE_OF_ALLOWANCE = 0.1
 /** A longer wait is not told. Status: guess. */
 export const HOME_TOLD_WITHIN_HOURS = 10 * 24
+/** Most are settled within a day: what comes later is looked at only where it has to be. */
+const LOOKED_AT_HOURS = [
+  [0, 24],
+  [24, HOME_TOLD_WITHIN_HOURS],
+] as const
 /** So long it has to stay within the tolerance, for a house has its own days. */
 const STEADY_HOURS = 12
 /** A peak after coming in is worth a word when it is this much higher than when it came in. */
@@ -23,10 +28,10 @@ const TOLD_PEAK_MM = 0.005
  * How long a piece waits at home before its lid tells anything, after a carry.
  * @returns undefined where nothing is known of the air that it comes home to
  *
- * The rule: until the clearance at a quarter turn is within 0.02 mm, or a tenth of the allowance where that is more, of
- * what it would be had the piece never gone, and stays so for half a day; nine in ten pieces are there by then (slow
- * wood, which takes up less and holds it longer). Meanwhile the lid may tighten more than it did out there, for its two
- * parts come back at their own pace: `greatest` is the most that the middle loses, out or home.
+ * The rule: its parts kept side by side, until the clearance at a quarter turn is within 0.02 mm, or a tenth of the
+ * allowance where that is more, of what it would be had the piece never gone, and stays so
+ * for half a day. Reckoned for slow wood: quick wood took up more and gives it off sooner, which comes to about the same (tested). Meanwhile it may lose more than it did out there, for
+ * its two parts come back each at its own pace.
  * Status: rule guess, run derived.
  */
 export function backHome(one: Reckoned): BackHome | undefined {
@@ -36,18 +41,14 @@ export function backHome(one: Reckoned): BackHome | undefined {
   const out = airsOfInput(input, there)
   const toleranceMm = Math.max(HOME_TOLERANCE_MM, HOME_TOLERANCE_OF_ALLOWANCE * joint.allowance.allowanceMm)
   const slowly = input.pace.factor * Math.exp(-EDGE_OF_EIGHT_IN_TEN * one.paceLogSpread)
-  const middle = homecoming(one, out, home, input.pace.factor, toleranceMm)
   const slow = homecoming(one, out, home, slowly, toleranceMm)
-  const waitHours =
-    middle.waitHours === undefined || slow.waitHours === undefined
-      ? undefined
-      : Math.max(middle.waitHours, slow.waitHours)
   const stayHours = input.stayMinutes / 60
-  const isAfter = middle.greatestHours > stayHours && middle.greatestMm - middle.cameInMm >= TOLD_PEAK_MM
-  const greatestHours = isAfter ? middle.greatestHours : Math.min(middle.greatestHours, stayHours)
+  const isAfter = slow.greatestHours > stayHours && slow.greatestMm - slow.greatestOutMm >= TOLD_PEAK_MM
+  const outPeak = greatestOut(one, stayHours)
+  const greatestHours = isAfter ? slow.greatestHours : outPeak.hours
   const told = {
-    waitMinutes: waitHours === undefined ? null : roundedUp(waitHours * 60),
-    greatestMm: Math.max(0, isAfter ? middle.greatestMm : middle.greatestOutMm),
+    waitMinutes: slow.waitHours === undefined ? null : roundedUp(slow.waitHours * 60),
+    greatestMm: Math.max(0, outPeak.mm, isAfter ? slow.greatestMm : 0),
     isGreatestAfter: isAfter,
   }
   return {
@@ -55,6 +56,29 @@ export function backHome(one: Reckoned): BackHome | undefined {
     greatestAt: new Date(input.startsAt + Math.round(greatestHours * HOUR_MS)).toISOString(),
     words: backHomeWords({ ...told, greatestAfterMinutes: (greatestHours - stayHours) * 60 }),
   }
+}
+
+/** The most that the middle loses while it is out. */
+function greatestOut({ run, usedAfter, joint }: Reckoned, stayHours: number): { hours: number; mm: number } {
+  let best = { hours: stayHours, used: usedAfter(stayHours) }
+  for (const hours of run.hours) {
+    if (hours >= stayHours) break
+    const used = usedAfter(hours)
+    if (used > best.used) best = { hours, used }
+  }
+  return { hours: best.hours, mm: best.used * joint.allowance.allowanceMm }
+}
+
+/** The moments looked at, some hours from and to: closer together at first. */
+function momentsBetween(from: number, to: number): Float64Array {
+  const moments = [from]
+  let hour = from
+  while (hour < to) {
+    const step = hour < 3 ? 0.25 : hour < 12 ? 0.5 : hour < 48 ? 2 : 6
+    hour = Math.min(to, hour + step)
+    moments.push(hour)
+  }
+  return Float64Array.from(moments)
 }
 
 /** Never told more exactly than it is known: to ten minutes, half hours, and whole hours from half a day on. */
@@ -68,8 +92,6 @@ interface Homecoming {
   greatestHours: number
   greatestMm: number
   greatestOutMm: number
-  /** Clearance lost as it comes in, mm. */
-  cameInMm: number
 }
 
 /** The piece that went and the same piece had it stayed, side by side. */
@@ -90,7 +112,7 @@ function homecoming(
   }
   const lossOf = (state: WoodState) => lossMm(joint.loss, state.ringPct - cut.ring, state.lidPct - cut.lid)
 
-  const stayMoments = momentsOf(stayHours)
+  const stayMoments = momentsBetween(0, stayHours)
   const outSteps = stepsBetween(out, input.startsAt, stayMoments)
   for (const steps of stepsBetween(home, input.startsAt, stayMoments)) bring(stayed, steps)
   let greatestMm = lossOf(went)
@@ -105,23 +127,25 @@ function homecoming(
     bring(went, steps)
     lookAt(stayMoments[n + 1] ?? stayHours)
   })
-  const cameInMm = lossOf(went)
   const greatestOutMm = greatestMm
 
-  const moments = momentsOf(HOME_TOLD_WITHIN_HOURS)
-  let within: number | undefined = Math.abs(cameInMm - lossOf(stayed)) <= toleranceMm ? 0 : undefined
-  const homeSteps = stepsBetween(home, endsAt, moments)
-  for (let n = 0; n < homeSteps.length; n += 1) {
-    const hours = moments[n + 1] ?? 0
-    const steps = homeSteps[n] ?? []
-    bring(went, steps)
-    bring(stayed, steps)
-    lookAt(stayHours + hours)
-    if (Math.abs(lossOf(went) - lossOf(stayed)) > toleranceMm) within = undefined
-    else within ??= hours
-    if (within !== undefined && hours - within >= STEADY_HOURS) break
+  let within: number | undefined = Math.abs(lossOf(went) - lossOf(stayed)) <= toleranceMm ? 0 : undefined
+  for (const [from, to] of LOOKED_AT_HOURS) {
+    const moments = momentsBetween(from, to)
+    const homeSteps = stepsBetween(home, endsAt, moments)
+    for (let n = 0; n < homeSteps.length; n += 1) {
+      const hours = moments[n + 1] ?? to
+      const steps = homeSteps[n] ?? []
+      bring(went, steps)
+      bring(stayed, steps)
+      lookAt(stayHours + hours)
+      if (Math.abs(lossOf(went) - lossOf(stayed)) > toleranceMm) within = undefined
+      else within ??= hours
+      if (within !== undefined && hours - within >= STEADY_HOURS)
+        return { waitHours: within, greatestHours, greatestMm, greatestOutMm }
+    }
   }
-  return { waitHours: within, greatestHours, greatestMm, greatestOutMm, cameInMm }
+  return { waitHours: within, greatestHours, greatestMm, greatestOutMm }
 }
 
 type WordsOf = Omit<BackHome, 'words' | 'greatestAt'> & { greatestAfterMinutes: number }
@@ -133,7 +157,7 @@ function backHomeWords({ waitMinutes, greatestMm, isGreatestAfter, greatestAfter
       ? 'Its lid tells nothing for more than ten days at home.'
       : waitMinutes === 0
         ? 'Its lid can be judged as soon as it is home.'
-        : `Wait about ${formatDuration(waitMinutes)} at home before you judge the lid.`
+        : `Wait about ${formatDuration(waitMinutes)} at home, its parts side by side, before you judge the lid.`
   if (!isGreatestAfter || greatestMm === null) return wait
   return `${wait} It is tightest about ${formatDuration(Math.max(10, greatestAfterMinutes))} after it comes in, not out there.`
 }

@@ -10,6 +10,8 @@ const HOUR_MS = 3_600_000
 
 const RANK: Readonly<Record<Verdict, number>> = { fine: 0, 'keep-short': 1, leave: 2 }
 /** The least trouble first: among covers that come to the same, this is the order of choice. */
+/** How far past the stay other covers are looked at: the half hour that "fine" asks for and a little. */
+const BEYOND_STAY_HOURS = 0.6
 const COVERS: readonly Cover[] = ['open', 'lid-on', 'bagged', 'tub']
 
 /** The verdict and the early edge of a carry that has been run through. */
@@ -39,7 +41,8 @@ function coveredAirs(input: CarryCheckInput, airs: readonly AirFrom[], cover: Co
 }
 
 /**
- * How long the fit would keep in each cover that closes it better than the one asked about, the least trouble first.
+ * How long the fit would keep in each cover that closes it better than the one asked about, the least trouble first;
+ * looked at no further than the stay, so that what is fine has no edge.
  * @param one the carry as asked, run through
  * @returns empty for a carry that is fine as asked, or a piece that is past its allowance: there is nothing to better
  *
@@ -51,7 +54,8 @@ export function otherCovers(one: Reckoned): CoverEdge[] {
   if (asked.verdict === 'fine' || edgeOf(one).usedAtStart >= 1) return []
   return COVERS.slice(COVERS.indexOf(input.cover) + 1).map((cover) => {
     const airs = coveredAirs(input, input.airs, cover)
-    return coverEdge(reckoned({ ...input, airs, cover }, joint, start, there))
+    const withinHours = input.stayMinutes / 60 + BEYOND_STAY_HOURS
+    return coverEdge(reckoned({ ...input, airs, cover }, joint, start, there, withinHours))
   })
 }
 

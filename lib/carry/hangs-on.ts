@@ -4,7 +4,7 @@ import type { Reckoned } from './reckon'
 import { type UsedQuestion, usedSpread } from './used-doubt'
 
 /** Beyond so many times the early edge a run is not looked at, unless two causes both move it further than that. */
-const LOOKED_AT = 8
+const LOOKED_AT = 4
 /** A cause that moves the edge by less than this share of it is not worth asking for. Status: guess. */
 const WORTH_ASKING = 0.05
 

@@ -36,11 +36,13 @@ export function judgeInput(input: CarryCheckInput): JudgedPiece {
   const one = prepared(input)
   if (!isReckoned(one)) return { check: one, covers: [], bestCover: null, hangsOn: null, backHome: null }
   const covers = otherCovers(one)
+  const check = verdictCheck(one)
   return {
-    check: verdictCheck(one),
+    check,
     covers,
     bestCover: bestCover(coverEdge(one), covers, input.tub?.name),
-    hangsOn: hangsOn(one),
+    // Where it is fine there is time to spare: nothing hangs on it.
+    hangsOn: check.verdict === 'fine' ? null : hangsOn(one),
     backHome: backHome(one) ?? null,
   }
 }

@@ -7,6 +7,7 @@ import { getPiece } from '@/app/_server/pieces'
 import type { SiteMember } from '@/db/queries/members'
 import { listPlaces } from '@/db/queries/places'
 import { newCarrySchema, type NewCarry } from '@/lib/carry/carry'
+import { carryCheckAnswerSchema, carryCheckRequestSchema } from '@/lib/carry/carry-answer'
 import { createTestDatabase, type TestDatabase } from '../support/database'
 import { hoursAfter, hoursBefore, makeYard, valueOf, type Yard } from '../support/yard'
 
@@ -90,6 +91,57 @@ describe('the check before a carry', () => {
     expect(answer.worst).toBe('unknown')
     expect(answer.headline).toBe('No verdict: no reading from Shop since 10:00.')
     expect(answer.room.emcPct).toBeNull()
+  })
+
+  it('judges air as told like a room of that air, and never as a fresh reading', async () => {
+    const box = await newBox()
+    const common = { pieceIds: [box.code], cover: 'open' as const, stayMinutes: 24 * 60 }
+    const shop = valueOf(await checkCarry(database.db, maker, { ...common, toRoomId: yard.shop.code }, now))
+    const toAir = { name: 'the show', temperatureC: 18, humidityPct: 85 }
+    const told = valueOf(await checkCarry(database.db, maker, { ...common, toAir }, now))
+    expect(carryCheckAnswerSchema.parse(told)).toEqual(told)
+    expect(told.room).toMatchObject({ id: null, name: 'the show', isTold: true })
+    expect(told.room.emcPct).toBeGreaterThan(16)
+    expect(told.forecastNote).toContain('as you typed it')
+    expect(told.worst).not.toBe('fine')
+    expect(shop.room).toMatchObject({ id: yard.shop.code, isTold: false })
+    // The shop has gone quiet; what was typed does not depend on it.
+    const later = valueOf(await checkCarry(database.db, maker, { ...common, toAir }, hoursAfter(now, 3)))
+    expect(later.pieces[0]?.check.kind).toBe('verdict')
+  })
+
+  it('takes either a room or air as told, never both or neither, and no piece that is not there', async () => {
+    const toAir = { name: 'the show', temperatureC: 18, humidityPct: 60 }
+    const common = { pieceIds: ['2222222222'], cover: 'open', stayMinutes: 30 }
+    expect(carryCheckRequestSchema.safeParse(common).success).toBe(false)
+    expect(carryCheckRequestSchema.safeParse({ ...common, toAir, toRoomId: 'x' }).success).toBe(false)
+    const asked = carryCheckRequestSchema.parse({ ...common, toAir })
+    expect(await checkCarry(database.db, maker, asked, now)).toMatchObject({
+      ok: false,
+      error: { code: 'not-found' },
+    })
+  })
+
+  it('tells how long to wait at home, what the time hangs on, the best cover and the order of a session', async () => {
+    const tight = await newBox({ allowanceMm: 0.12 })
+    const easy = await newBox({ allowanceMm: 0.2 })
+    const answer = valueOf(
+      await checkCarry(
+        database.db,
+        maker,
+        { pieceIds: [easy.code, tight.code], toRoomId: yard.shop.code, cover: 'open', stayMinutes: 480 },
+        now,
+      ),
+    )
+    expect(carryCheckAnswerSchema.parse(answer)).toEqual(answer)
+    for (const piece of answer.pieces) {
+      expect(piece.check).toMatchObject({ kind: 'verdict', verdict: 'keep-short' })
+      expect(piece.backHome?.words).toMatch(/^Wait about/)
+      expect(piece.hangsOn?.ask).toMatch(/hangs on most/)
+      expect(piece.bestCover?.verdict).toBe('fine')
+    }
+    expect(answer.session?.order.map((piece) => piece.id)).toEqual([tight.code, easy.code])
+    expect(answer.session?.words).toContain('the least forgiving')
   })
 
   it('refuses the whole for one piece that is not there', async () => {

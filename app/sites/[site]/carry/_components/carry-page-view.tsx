@@ -23,6 +23,7 @@ import { bestWay, waysOf } from './carry-ways'
 import { CheckPieces } from './check-pieces'
 import { CoverChoice } from './cover-choice'
 import { KeepAsRoom } from './keep-as-room'
+import { KeepsSheet } from './keeps-sheet'
 import { SessionSheet } from './session-sheet'
 import { useCarryCheck } from './use-carry-check'
 import { WaysSheet } from './ways-sheet'
@@ -186,6 +187,7 @@ export function CarryPageView({
         </div>
       ) : null}
       {answer?.session ? <SessionSheet session={answer.session} reader={reader} now={now} /> : null}
+      {answer ? <KeepsSheet answer={answer} reader={reader} now={now} /> : null}
       {answer ? (
         <div className="flex flex-col gap-3 max-sm:px-4">
           {answer.forecastNote ? (
