@@ -1,17 +1,19 @@
 import 'server-only'
 import type { Kysely } from 'kysely'
 import { listOpenCarries } from '@/db/queries/carries'
-import { assumedKeepRoom } from '@/db/queries/carry-inputs'
+import { assumedKeepRoom, loadCarryMaterial } from '@/db/queries/carry-inputs'
 import { doorTokenHash, findOpenDoor, type OpenDoor, touchDoor } from '@/db/queries/door-links'
 import type { SiteMember } from '@/db/queries/members'
 import { listHangingSensors, listRoomRecords } from '@/db/queries/rooms'
+import { listWhateverCandidates } from '@/db/queries/whatever'
 import type { Database } from '@/db/schema'
 import type { DoorView } from '@/lib/door/door'
 import { doorPieces, nextPlanSentence } from '@/lib/door/door-pieces'
 import { gapWords } from '@/lib/door/gap-words'
+import { hourStrip } from '@/lib/forecast/hour-strip'
 import { ok } from '@/lib/result'
 import { roomAir, settledTo } from '@/lib/rooms/air'
-import { viewCarries } from './carry-view'
+import { pieceIdsOf, roomIdsOf, viewCarries } from './carry-view'
 import { notThere, type Outcome } from './problem'
 
 /** A screen sees what a helper sees of carries, and nothing that is private to somebody. */
@@ -36,13 +38,17 @@ export async function getDoorView(
   if (open === undefined) return notThere()
   const { siteId, door } = open
   const screen = screenOf(open)
-  const [records, sensors, rooms] = await Promise.all([
+  const [records, sensors, rooms, boxes] = await Promise.all([
     listOpenCarries(db, siteId),
     listHangingSensors(db, siteId),
     listRoomRecords(db, siteId),
+    listWhateverCandidates(db, siteId),
     touchDoor(db, siteId, door.id, now),
   ])
-  const carries = await viewCarries(db, screen, records, now)
+  const pieceIds = [...new Set([...pieceIdsOf(records), ...boxes])]
+  const roomIds = [...roomIdsOf(records), door.room.roomId]
+  const material = await loadCarryMaterial(db, screen, pieceIds, roomIds, now)
+  const carries = await viewCarries(db, screen, records, now, material)
   const kindOf = (roomId: number) => rooms.find((room) => room.id === roomId)?.kind ?? 'store'
   const readingsIn = (roomId: number) =>
     sensors.filter((sensor) => sensor.roomId === roomId).flatMap((sensor) => sensor.last ?? [])
@@ -57,6 +63,12 @@ export async function getDoorView(
     room: { name: door.room.name, mark: door.room.mark },
     heard: air.kind === 'never' ? null : { at: air.at, isFresh: air.kind === 'fresh' },
     out: doorPieces(carries, clock),
+    strip: hourStrip(material, {
+      roomId: door.room.roomId,
+      pieceIds: boxes,
+      keepRoomId: keep?.id ?? null,
+      timeZone: screen.timeZone,
+    }),
     gap:
       keep === undefined || keep.id === door.room.roomId || keepAir?.kind !== 'fresh' || air.kind !== 'fresh'
         ? ''

@@ -1,4 +1,5 @@
 import { z } from 'zod'
+import { hourStripSchema } from '@/lib/forecast/strip-view'
 
 const instant = z.iso.datetime()
 
@@ -47,6 +48,7 @@ export const doorViewSchema = z.object({
   /** When the room was last read, and whether that still counts as its air now. */
   heard: z.object({ at: instant, isFresh: z.boolean() }).nullable(),
   out: z.array(doorPieceSchema),
+  strip: hourStripSchema,
   /** "Landing cupboard 8.5, Shop 13.6 % MC: 5.1 points apart"; empty where one of them is not known. */
   gap: z.string(),
   /** The next thing that is planned; empty when nothing is. */

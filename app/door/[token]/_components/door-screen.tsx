@@ -2,7 +2,9 @@
 
 import { useQuery } from '@tanstack/react-query'
 import { ApiProblem, apiFetch } from '@/app/_components/api'
+import { HourStripFigure } from '@/app/_components/charts/hour-strip-figure'
 import { Logo } from '@/app/_components/ui/icons'
+import { RichText } from '@/app/_components/ui/rich-text'
 import { useNow } from '@/app/_components/ui/use-now'
 import type { DoorView } from '@/lib/door/door'
 import { formatAge, formatClock, formatWeekday } from '@/lib/format/times'
@@ -60,6 +62,17 @@ export function DoorScreen({ token, initial }: { token: string; initial: DoorVie
           ) : null}
         </ul>
       )}
+      <section aria-label={`The coming hours of ${room.name}`} className="pt-4">
+        <p className="text-[32px] leading-[40px]">
+          <RichText parts={data.strip.words} />
+        </p>
+        {data.strip.cells.length > 0 ? (
+          <>
+            <HourStripFigure strip={data.strip} timeZone={timeZone} size="door" />
+            <p className="sr-only">{data.strip.note}</p>
+          </>
+        ) : null}
+      </section>
       <div className="grow" />
       <footer className="mt-4 flex flex-wrap justify-between gap-x-8 gap-y-1 border-t-2 border-edge pt-3">
         <p>{data.gap}</p>
