@@ -1,6 +1,7 @@
 import { createHash, createHmac, hkdfSync, timingSafeEqual } from 'node:crypto'
 import { z } from 'zod'
-import { answerSchema, laterSchema } from '@/lib/notices/answers'
+import { answerSchema } from '@/lib/notices/answer'
+import { laterSchema } from '@/lib/notices/answers'
 import { ruleSchema } from '@/lib/notices/notice'
 
 /** What a link in a mail stands for. Whoever holds the link may do this one thing in that person's name. */

@@ -11,8 +11,10 @@ import {
   listNoticeRecords,
   type NoticeRecord,
 } from '@/db/queries/notices'
+import { type AnswerRecord, listAnswers } from '@/db/queries/notice-answers'
 import { inTransaction } from '@/db/queries/transaction'
 import type { Database } from '@/db/schema'
+import { answerLinkMs, answersTo } from '@/lib/notices/answers'
 import { deliveryWords } from '@/lib/notices/delivery-words'
 import { type Notice, type noticeChangeSchema, noticeListQuerySchema } from '@/lib/notices/notice'
 import { ok } from '@/lib/result'
@@ -28,16 +30,52 @@ export type NoticesQuery = z.output<typeof noticesQuerySchema>
 
 const cursorSchema = z.strictObject({ at: z.iso.datetime(), id: z.int() })
 
-function noticeView(record: NoticeRecord, member: SiteMember, now: Date): Notice {
-  const { code, id: _id, deliveries, ...shown } = record
+export function noticeView(
+  record: NoticeRecord,
+  answers: readonly AnswerRecord[],
+  member: SiteMember,
+  now: Date,
+): Notice {
+  const own = answers.filter(({ noticeId }) => noticeId === record.id)
+  const isSettled =
+    record.isOver ||
+    record.acknowledgedAt !== null ||
+    now.getTime() - record.at.getTime() > answerLinkMs ||
+    own.some(({ answer }) => answer === 'in' || answer === 'nothing')
   return {
-    id: code,
-    ...shown,
+    id: record.code,
     at: record.at.toISOString(),
+    rule: record.rule,
+    urgency: record.urgency,
+    mark: record.mark,
+    title: record.title,
+    body: record.body,
+    link: record.link,
+    isSeen: record.isSeen,
     acknowledgedAt: record.acknowledgedAt?.toISOString() ?? null,
-    delivery: deliveryWords(deliveries, { timeZone: member.timeZone, now }),
+    acknowledgedBy: record.acknowledgedBy,
+    delivery: deliveryWords(record.deliveries, { timeZone: member.timeZone, now }),
+    isLost: record.deliveries.some(({ state }) => state === 'given-up'),
+    asks: isSettled ? [] : answersTo(record),
+    answered: own.map(({ userName, answer, at, until }) => ({
+      by: userName,
+      answer,
+      at: at.toISOString(),
+      until: until?.toISOString() ?? null,
+    })),
   }
 }
+
+export const answersOfRecords = (
+  db: Kysely<Database>,
+  member: SiteMember,
+  records: readonly NoticeRecord[],
+): Promise<AnswerRecord[]> =>
+  listAnswers(
+    db,
+    member.siteId,
+    records.map(({ id }) => id),
+  )
 
 export async function listNotices(
   db: Kysely<Database>,
@@ -56,10 +94,22 @@ export async function listNotices(
     after,
   })
   const page = pageOf(records, query.limit, (record) => ({ at: record.at.toISOString(), id: record.id }))
+  const answers = await answersOfRecords(db, member, page.items)
   return ok({
-    items: page.items.map((record) => noticeView(record, member, now)),
+    items: page.items.map((record) => noticeView(record, answers, member, now)),
     nextCursor: page.nextCursor,
   })
+}
+
+export async function getNotice(
+  db: Kysely<Database>,
+  member: SiteMember,
+  noticeCode: string,
+  now: Date,
+): Promise<Outcome<Notice>> {
+  const record = await findNotice(db, member.siteId, noticeCode, member.userId)
+  if (record === undefined) return notThere()
+  return ok(noticeView(record, await answersOfRecords(db, member, [record]), member, now))
 }
 
 /** Seen is each person's own; acknowledged holds for everybody, and says by whom. Both once and for good. */
@@ -79,8 +129,7 @@ export async function changeNotice(
       await acknowledgeNotice(trx, member.siteId, notice.id, member.userId, now)
       await notifySite(trx, member.siteId, 'notice', notice.code)
     }
-    const changed = await findNotice(trx, member.siteId, noticeCode, member.userId)
-    return changed === undefined ? notThere() : ok(noticeView(changed, member, now))
+    return getNotice(trx, member, noticeCode, now)
   })
 }
 

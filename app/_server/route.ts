@@ -69,6 +69,21 @@ export function publicRoute<
   })
 }
 
+/**
+ * A route for everybody that other servers press too: neither origin nor body is looked at, so what it may do has to
+ * stand in its address alone.
+ */
+export function openRoute<P extends Shape | undefined>(
+  spec: Pick<Spec<P, undefined, undefined>, 'params'>,
+  handle: (asked: { request: Request; params: ParamsOf<P>; now: Date }) => Promise<Reply> | Reply,
+): RouteHandler {
+  return guarded(async (request, params) => {
+    const address = readParams(params, z.object(spec.params ?? {}))
+    if (!address.ok) return address
+    return handle({ request, params: address.value as ParamsOf<P>, now: new Date() })
+  })
+}
+
 /** A route for anybody who is signed in, whatever the site. */
 export function signedInRoute<
   P extends Shape | undefined,

@@ -1,7 +1,7 @@
 import { type Kysely, sql } from 'kysely'
 import { z } from 'zod'
 import type { Channel } from '@/lib/notices/inputs'
-import { ruleSchema, type Rule } from '@/lib/notices/notice'
+import { type Mark, markSchema, ruleSchema, type Rule } from '@/lib/notices/notice'
 import { queueDelivery } from '../jobs'
 import type { Database } from '../schema'
 
@@ -20,6 +20,7 @@ export interface DueDelivery {
   ownTimeZone: string | null
   sessionUntil: Date | null
   rule: Rule
+  mark: Mark
   urgency: 'now' | 'soon' | 'whenever'
   noticeCode: string
   title: string
@@ -82,6 +83,7 @@ export async function listDue(
       'setting.time_zone as own_time_zone',
       'setting.session_until',
       'notice.rule',
+      'notice.mark',
       'notice.urgency',
       'notice.code',
       'notice.title',
@@ -119,6 +121,7 @@ export async function listDue(
     ownTimeZone: row.own_time_zone,
     sessionUntil: row.session_until,
     rule: ruleSchema.parse(row.rule),
+    mark: markSchema.parse(row.mark),
     urgency: urgencySchema.parse(row.urgency),
     noticeCode: row.code,
     title: row.title,

@@ -5,6 +5,7 @@ import type { Database } from '../schema'
 /** One try to tell one person of one notice by one channel. */
 export interface TryRecord {
   noticeId: number
+  userId: string
   userName: string
   channel: 'mail' | 'push'
   at: Date
@@ -27,12 +28,21 @@ export async function listTries(
     .innerJoin('user', 'user.id', 'try.user_id')
     .where('try.site_id', '=', siteId)
     .where('try.notice_id', 'in', noticeIds)
-    .select(['try.notice_id', 'user.name', 'try.channel', 'try.at', 'try.outcome', 'try.detail'])
+    .select([
+      'try.notice_id',
+      'try.user_id',
+      'user.name',
+      'try.channel',
+      'try.at',
+      'try.outcome',
+      'try.detail',
+    ])
     .orderBy('try.at')
     .orderBy('try.id')
     .execute()
   return rows.map((row) => ({
     noticeId: row.notice_id,
+    userId: row.user_id,
     userName: row.name,
     channel: channelSchema.parse(row.channel),
     at: row.at,

@@ -1,5 +1,6 @@
 import type { Kysely } from 'kysely'
-import { answerSchema, type Answer, type AnswerVia } from '@/lib/notices/answers'
+import { answerSchema, type Answer } from '@/lib/notices/answer'
+import type { AnswerVia } from '@/lib/notices/answers'
 import type { Database } from '../schema'
 
 export interface AnswerRecord {

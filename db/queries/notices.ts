@@ -1,4 +1,6 @@
 import { type Kysely, sql } from 'kysely'
+import { z } from 'zod'
+import { questionRules } from '@/lib/notices/answers'
 import { type DeliveryFact } from '@/lib/notices/delivery-words'
 import { type Mark, markSchema, type Rule, ruleSchema } from '@/lib/notices/notice'
 import type { Database } from '../schema'
@@ -16,12 +18,23 @@ export interface NoticeRecord {
   isSeen: boolean
   acknowledgedAt: Date | null
   acknowledgedBy: string | null
-  deliveries: DeliveryFact[]
+  /** Of its episode, which may have ended since; null where it has none. */
+  episodeId: number | null
+  isOver: boolean
+  carryId: number | null
+  pieceId: number | null
+  deliveries: (DeliveryFact & { userId: string; state: DeliveryState })[]
 }
+
+const deliveryStateSchema = z.enum(['held', 'waiting', 'sent', 'given-up', 'let-go'])
+export type DeliveryState = z.infer<typeof deliveryStateSchema>
 
 export interface NoticeListQuery {
   isUnseen?: boolean
   rule?: Rule
+  /** Only of rules that ask something. */
+  isQuestion?: boolean
+  since?: Date
   isDescending: boolean
   limit: number
   after?: { at: string; id: number }
@@ -40,6 +53,9 @@ const noticeQuery = (db: Kysely<Database>, siteId: number, userId: string) =>
         .on('seen.user_id', '=', userId),
     )
     .leftJoin('user', 'user.id', 'notice.acknowledged_by')
+    .leftJoin('episode', (join) =>
+      join.onRef('episode.site_id', '=', 'notice.site_id').onRef('episode.id', '=', 'notice.episode_id'),
+    )
     .where('notice.site_id', '=', siteId)
     // A test is for whoever asked for it.
     .where((eb) => eb.or([eb('notice.rule', '<>', 'test'), eb('notice.key', 'like', `${testKey(userId)}%`)]))
@@ -56,6 +72,10 @@ const noticeQuery = (db: Kysely<Database>, siteId: number, userId: string) =>
       'notice.acknowledged_at',
       'seen.seen_at',
       'user.name as acknowledged_by_name',
+      'notice.episode_id',
+      'notice.carry_id',
+      'notice.piece_id',
+      'episode.state as episode_state',
     ])
 
 type Row = Awaited<ReturnType<ReturnType<typeof noticeQuery>['executeTakeFirstOrThrow']>>
@@ -77,6 +97,7 @@ async function withDeliveries(
     )
     .select([
       'delivery.notice_id',
+      'delivery.user_id',
       'user.name',
       'delivery.channel',
       'delivery.state',
@@ -86,6 +107,7 @@ async function withDeliveries(
       'delivery.sent_at',
     ])
     .orderBy('user.name')
+    .orderBy('delivery.channel')
     .execute()
   return rows.map((row) => ({
     id: row.id,
@@ -100,12 +122,17 @@ async function withDeliveries(
     isSeen: row.seen_at !== null,
     acknowledgedAt: row.acknowledged_at,
     acknowledgedBy: row.acknowledged_by_name,
+    episodeId: row.episode_id,
+    isOver: row.episode_state === 'over',
+    carryId: row.carry_id,
+    pieceId: row.piece_id,
     deliveries: deliveries
       .filter((one) => one.notice_id === row.id)
       .map((one) => ({
         to: one.name,
+        userId: one.user_id,
+        state: deliveryStateSchema.parse(one.state),
         channel: one.channel === 'push' ? 'push' : 'mail',
-        state: one.state,
         why: one.last_error,
         holdUntil: one.hold_until,
         tries: one.tries,
@@ -126,6 +153,8 @@ export async function listNoticeRecords(
   const rows = await noticeQuery(db, siteId, userId)
     .$if(asked.isUnseen === true, (query) => query.where('seen.seen_at', 'is', null))
     .$if(asked.isUnseen === false, (query) => query.where('seen.seen_at', 'is not', null))
+    .$if(asked.isQuestion === true, (query) => query.where('notice.rule', 'in', [...questionRules]))
+    .$if(asked.since !== undefined, (query) => query.where('notice.at', '>=', asked.since ?? null))
     .$if(rule !== undefined, (query) => query.where('notice.rule', '=', rule ?? ''))
     .$if(after !== undefined, (query) =>
       query.where(
@@ -203,4 +232,41 @@ export async function acknowledgeNotice(
     .where('id', '=', row.episode_id)
     .where('state', 'in', ['pending', 'telling'])
     .execute()
+}
+
+/** The notice of a link, by its number within the site. */
+export async function findNoticeCode(
+  db: Kysely<Database>,
+  siteId: number,
+  noticeId: number,
+): Promise<string | undefined> {
+  const row = await db
+    .selectFrom('notice')
+    .where('site_id', '=', siteId)
+    .where('id', '=', noticeId)
+    .select('code')
+    .executeTakeFirst()
+  return row?.code
+}
+
+/** How many notices of late could not be sent to somebody. */
+export async function countLost(db: Kysely<Database>, siteId: number, since: Date): Promise<number> {
+  const row = await db
+    .selectFrom('notice')
+    .where('notice.site_id', '=', siteId)
+    .where('notice.at', '>=', since)
+    .where('notice.rule', '<>', 'test')
+    .where((eb) =>
+      eb.exists(
+        eb
+          .selectFrom('delivery')
+          .whereRef('delivery.site_id', '=', 'notice.site_id')
+          .whereRef('delivery.notice_id', '=', 'notice.id')
+          .where('delivery.state', '=', 'given-up')
+          .select('delivery.notice_id'),
+      ),
+    )
+    .select((eb) => eb.fn.countAll<number>().as('n'))
+    .executeTakeFirstOrThrow()
+  return row.n
 }

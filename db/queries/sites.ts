@@ -197,6 +197,12 @@ export async function deleteUsersWithoutSite(db: Kysely<Database>, emails: reado
     .execute()
 }
 
+/** The code of a site by its number, for links that were signed here. */
+export async function findSiteCode(db: Kysely<Database>, siteId: number): Promise<string | undefined> {
+  const row = await db.selectFrom('site').where('id', '=', siteId).select('code').executeTakeFirst()
+  return row?.code
+}
+
 /** Whether there is a demo to try. */
 export async function findDemoSiteCode(db: Kysely<Database>): Promise<string | undefined> {
   const row = await db

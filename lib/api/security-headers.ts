@@ -16,6 +16,8 @@ export function pagePolicy(nonce: string, { isDevelopment, isHttps }: PolicyOpti
     "img-src 'self' data: blob:",
     "font-src 'self'",
     "connect-src 'self'",
+    // The service worker that shows notices on a phone.
+    "worker-src 'self'",
     "object-src 'none'",
     "base-uri 'self'",
     "form-action 'self'",

@@ -1,10 +1,8 @@
 import { z } from 'zod'
 import { dayOfInstant, daysAfter } from '@/lib/climate/days'
 import { instantOfLocalTime } from '@/lib/sites/local-time'
-import type { Rule } from './notice'
-
-export const answerSchema = z.enum(['in', 'going', 'cant', 'later', 'nothing'])
-export type Answer = z.infer<typeof answerSchema>
+import { type Answer, answerSchema } from './answer'
+import type { Mark, Rule } from './notice'
 
 /** When to be asked again: in a quarter of an hour, in an hour, tomorrow morning. */
 export const laterSchema = z.enum(['quarter', 'hour', 'morning'])
@@ -21,16 +19,20 @@ export type NewAnswer = z.infer<typeof newAnswerSchema>
 export const answerViaSchema = z.enum(['page', 'mail', 'push'])
 export type AnswerVia = z.infer<typeof answerViaSchema>
 
-const asks: ReadonlySet<Rule> = new Set(['time-nearly-out', 'time-out', 'lock-up', 'last-call', 'tub-out'])
+/** Rules whose notices are questions that can be answered. */
+export const questionRules: ReadonlySet<Rule> = new Set([
+  'time-nearly-out',
+  'time-out',
+  'lock-up',
+  'last-call',
+  'tub-out',
+])
 
-/** Whether a notice of this rule is a question that can be answered. */
-export const isQuestion = (rule: Rule): boolean => asks.has(rule)
-
-/** What can be answered to a notice; nothing where it asks nothing. */
-export function answersTo(rule: Rule): Answer[] {
-  if (!isQuestion(rule)) return []
-  const isEvening = rule === 'lock-up' || rule === 'last-call'
-  return ['in', 'going', 'cant', ...(isEvening ? (['nothing'] as const) : []), 'later']
+/** What can be answered to a notice; nothing where it asks nothing. `mark` "unknown": nothing is logged out. */
+export function answersTo({ rule, mark }: { rule: Rule; mark: Mark }): Answer[] {
+  if (!questionRules.has(rule)) return []
+  if (rule === 'tub-out') return ['in', 'going', 'later']
+  return mark === 'unknown' ? ['nothing', 'going', 'later'] : ['in', 'going', 'cant', 'later']
 }
 
 /** On a button. */

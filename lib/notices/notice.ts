@@ -1,4 +1,5 @@
 import { z } from 'zod'
+import { answerSchema } from './answer'
 
 const instant = z.iso.datetime()
 
@@ -45,6 +46,14 @@ export const noticeSchema = z.object({
   acknowledgedBy: z.string().nullable(),
   /** How it went out: "E-mail to the maker and the house", "held until 07:00", "on this page only", "delayed". */
   delivery: z.string(),
+  /** Somebody could not be reached by some channel: it can be tried again. */
+  isLost: z.boolean(),
+  /** What can be answered to it now; nothing once it is over, answered or old. */
+  asks: z.array(answerSchema),
+  /** Each person's newest answer, the newest last. */
+  answered: z.array(
+    z.object({ by: z.string(), answer: answerSchema, at: instant, until: instant.nullable() }),
+  ),
 })
 export type Notice = z.infer<typeof noticeSchema>
 

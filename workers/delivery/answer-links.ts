@@ -1,6 +1,7 @@
 import { signLink } from '@/db/signed-link'
 import type { DueDelivery } from '@/db/queries/deliveries'
-import { type Answer, answerLinkMs, answersTo, answerWords } from '@/lib/notices/answers'
+import type { Answer } from '@/lib/notices/answer'
+import { answerLinkMs, answersTo, answerWords } from '@/lib/notices/answers'
 
 /** What signs the links of mails and pushes. */
 export interface LinkSource {
@@ -23,7 +24,7 @@ export function signedAnswers(
   // Counted from the notice, so that a repeat holds the very same links.
   const expiresAt = Math.max(due.noticeAt.getTime(), due.dueAt.getTime()) + answerLinkMs
   const { siteId, noticeId, userId } = due
-  return answersTo(due.rule).map((answer) => {
+  return answersTo(due).map((answer) => {
     const later = answer === 'later' ? ('hour' as const) : undefined
     return {
       answer,

@@ -8,11 +8,14 @@ import { classNames } from '@/app/_components/ui/class-names'
 import { Mark } from '@/app/_components/ui/mark'
 import { RichText } from '@/app/_components/ui/rich-text'
 import { useAction } from '@/app/_components/use-action'
+import { AnswerButtons } from '@/app/sites/[site]/_components/answer-buttons'
 import { formatFullMoment, formatMoment } from '@/lib/format/times'
 import type { Notice, Rule } from '@/lib/notices/notice'
+import { answeredWords } from '@/lib/notices/answers'
 import { isFresh } from '@/lib/notices/rule-sentences'
 import { may } from '@/lib/sites/permissions'
 import type { Reader } from '@/lib/sites/reader'
+import { DeliveryFold } from './delivery-fold'
 
 /** Where a notice leads, in words. */
 const linkWords: Readonly<Record<Rule, string>> = {
@@ -72,7 +75,18 @@ export function NoticeLine({ reader, notice }: { reader: Reader; notice: Notice 
             <RichText parts={notice.body} />
           </p>
         ) : null}
-        <p className="text-label text-ink-soft">
+        {notice.answered.map(({ by, answer, at, until }) => (
+          <p key={by} className="text-label">
+            {by} {answeredWords[answer]}
+            {until === null ? '' : ` ${moment(until)}`}, {moment(at)}.
+          </p>
+        ))}
+        {mayAcknowledge && notice.asks.length > 0 ? (
+          <div className="my-2">
+            <AnswerButtons site={reader.site} notice={notice} />
+          </div>
+        ) : null}
+        <p className={classNames('text-label', notice.isLost ? 'text-warn' : 'text-ink-soft')}>
           {notice.delivery}.{' '}
           {notice.acknowledgedAt
             ? `Acknowledged${notice.acknowledgedBy ? ` by ${notice.acknowledgedBy}` : ''}, ${moment(notice.acknowledgedAt)}.`
@@ -80,12 +94,16 @@ export function NoticeLine({ reader, notice }: { reader: Reader; notice: Notice 
               ? 'Seen.'
               : 'Not seen yet.'}
         </p>
+        <DeliveryFold reader={reader} notice={notice} />
       </div>
       <div className="flex flex-wrap items-start gap-2 max-sm:col-start-2 max-sm:mt-2 sm:justify-end">
         {notice.link ? (
           <ButtonLink href={`/sites/${reader.site}${notice.link}`}>{linkWords[notice.rule]}</ButtonLink>
         ) : null}
-        {mayAcknowledge && notice.acknowledgedAt === null && notice.urgency !== 'whenever' ? (
+        {mayAcknowledge &&
+        notice.acknowledgedAt === null &&
+        notice.asks.length === 0 &&
+        notice.urgency !== 'whenever' ? (
           <Button
             pending={change.pending}
             onClick={() => {

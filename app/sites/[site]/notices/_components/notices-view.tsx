@@ -13,19 +13,28 @@ import { EmptyState, StaleState } from '@/app/_components/ui/states'
 import { useAction } from '@/app/_components/use-action'
 import type { Notice } from '@/lib/notices/notice'
 import { isFresh, noticesHeadline } from '@/lib/notices/rule-sentences'
+import type { Hearing } from '@/lib/notices/own-settings'
 import type { Reader } from '@/lib/sites/reader'
 import type { Site } from '@/lib/sites/site'
+import { HearingSheet } from './hearing-sheet'
 import { NoticeLine } from './notice-line'
 import { QuietHours } from './quiet-hours'
 import { WhatIsTold } from './what-is-told'
 
 type NoticePage = { items: Notice[]; nextCursor: string | null }
-type NoticesViewProps = { reader: Reader; site: Site; initial: NoticePage; initialShow: 'all' | 'unseen' }
+type NoticesViewProps = {
+  reader: Reader
+  site: Site
+  initial: NoticePage
+  initialShow: 'all' | 'unseen'
+  hearing: Hearing
+  timeZones: readonly string[]
+}
 
 const shows = ['all', 'unseen'] as const
 const perPage = 30
 
-export function NoticesView({ reader, site, initial, initialShow }: NoticesViewProps) {
+export function NoticesView({ reader, site, initial, initialShow, hearing, timeZones }: NoticesViewProps) {
   const [show, setShow] = useQueryState('show', parseAsStringLiteral(shows).withDefault('all'))
   const notices = useInfiniteQuery({
     queryKey: siteKey(reader.site, 'notices', 'list', show),
@@ -108,7 +117,8 @@ export function NoticesView({ reader, site, initial, initialShow }: NoticesViewP
           )}
         </SegmentedTabs>
       </Sheet>
-      <WhatIsTold site={site} />
+      <WhatIsTold reader={reader} />
+      <HearingSheet reader={reader} initial={hearing} timeZones={timeZones} />
       <QuietHours key={site.version} reader={reader} site={site} />
     </>
   )

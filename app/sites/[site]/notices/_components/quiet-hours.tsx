@@ -40,7 +40,7 @@ export function QuietHours({ reader, site }: { reader: Reader; site: Site }) {
     (save.error ? (save.problem?.detail ?? 'No answer came. Nothing was changed; press again.') : undefined)
 
   return (
-    <Sheet title="When to be left alone" id="quiet">
+    <Sheet title="When the place is left alone" id="quiet">
       {may(reader.role, 'site:change') ? (
         <form
           noValidate
@@ -85,8 +85,9 @@ export function QuietHours({ reader, site }: { reader: Reader; site: Site }) {
         </p>
       )}
       <p className="mt-3 text-label text-ink-soft">
-        Held notices come together when quiet hours end, the most pressing first. E-mail and the house list:{' '}
-        <TextLink href={`/sites/${reader.site}/place?part=place`}>yours alone</TextLink>.
+        These hold for everybody here who has not chosen hours of their own. What was held comes together when
+        they end, the most pressing first. Who is on the house list:{' '}
+        <TextLink href={`/sites/${reader.site}/place?part=place`}>People and place</TextLink>.
       </p>
     </Sheet>
   )
