@@ -22,16 +22,16 @@ export const CLASS_MOVEMENT_FACTOR = 1.5
 /** An allowance that the maker gave or measured, ±30 %, the longer side (1 / 0.7) either way. Status: guess. */
 export const TOLD_ALLOWANCE_FACTOR = 1.4
 
-/**
- * A wall at the spigot that nobody measured, 1.8 to 3.5 mm where 2.5 is taken; as a factor on diffusion, for a time goes
- * with the wall to the power of about 1.5. Status: guess.
- */
-export const ASSUMED_WALL_FACTOR = 1.6
-/** A spigot that nobody measured: the rim is a smaller way in than the wall. Status: guess. */
-export const ASSUMED_SPIGOT_FACTOR = 1.2
-
 /** Spread of the pace of the wood, as the standard deviation of a logarithm. */
 export const PACE_LOG_SPREAD = together(
   logSpreadNineInTen(DIFFUSION_FACTOR),
   logSpreadNineInTen(END_GRAIN_FACTOR),
 )
+
+/**
+ * A wall at the spigot that nobody measured, 1.8 to 3.5 mm where 2.5 is taken; as a factor on diffusion, as a time goes
+ * with the wall to the power of about 1.5. Status: guess.
+ */
+export const ASSUMED_WALL_FACTOR = 1.6
+/** A spigot that nobody measured: the rim is a smaller way in than the wall. Status: guess. */
+export const ASSUMED_SPIGOT_FACTOR = 1.2
