@@ -49,6 +49,7 @@ const piece = (number: string, check: PieceCheck | null, more: Partial<CarryPiec
   backAt: null,
   check,
   isOverdue: false,
+  isAskSkipped: false,
   ...more,
 })
 
@@ -74,6 +75,11 @@ const carry = (
   worst,
   version: 1,
   canUndo: false,
+  takesWhatever: false,
+  whatever: null,
+  repeat: null,
+  putOffFrom: null,
+  canPutBack: false,
 })
 const plan = (worst: Carry['worst'], check: PieceCheck, plannedAt?: string) =>
   carry('planned', worst, [piece('219', check, { outAt: null })], plannedAt)
@@ -130,6 +136,17 @@ describe('the sentence at the top of Now', () => {
       ]),
     ]
     expect(sentence({ out })).toBe('Bring 207 in from the shop by 13:35; 1 more is out.')
+  })
+
+  it('tells of a plan for whatever is taken in its own words, and names no piece as if it were to go', () => {
+    const whatever = {
+      ...plan('leave', verdict('leave', at('14:10'))),
+      takesWhatever: true,
+      whatever: 'Whatever you take: at most until 15:30, judged by 214; leave 219.',
+    }
+    expect(sentence({ planned: [whatever] })).toBe(
+      'Planned for the shop at 14:00. Whatever you take: at most until 15:30, judged by 214; leave 219.',
+    )
   })
 
   it('says that nobody knows the air round what is out, rather than that all is well', () => {
