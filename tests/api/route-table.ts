@@ -21,6 +21,8 @@ export interface Row {
   ifMatch?: true
   /** What a member who may do it gets; 200 unless it says otherwise. */
   status?: number
+  /** Other servers press it too, from anywhere and with any body: what it may do stands in its address alone. */
+  isPressedByServers?: true
   /** What has to be there beside the things of every fresh site. */
   prepare?: (arranging: Arranging) => Promise<unknown>
 }
@@ -56,6 +58,24 @@ export const routeTable: Record<string, Row> = {
   'POST /api/v1/demo/sign-in': { action: 'anyone' },
 
   'GET /api/v1/door/[doorToken]': { action: 'anyone' },
+
+  'POST /api/v1/push/subscriptions': {
+    action: 'signed-in',
+    body: () => ({
+      endpoint: 'https://push.example.org/walk',
+      keys: { p256dh: 'B'.repeat(87), auth: 'a'.repeat(22) },
+    }),
+    status: 204,
+  },
+  'DELETE /api/v1/push/subscriptions': {
+    action: 'signed-in',
+    body: () => ({ endpoint: 'https://push.example.org/walk' }),
+    status: 204,
+  },
+  // What a link may do stands in it alone; one that was not signed here leads nowhere.
+  'POST /api/v1/answers/[link]': { action: 'anyone', status: 404 },
+  'GET /api/v1/unsubscribe/[link]': { action: 'anyone', status: 303 },
+  'POST /api/v1/unsubscribe/[link]': { action: 'anyone', status: 404, isPressedByServers: true },
 
   'GET /api/v1/sites': { action: 'signed-in' },
   'POST /api/v1/sites': {
@@ -100,8 +120,10 @@ export const routeTable: Record<string, Row> = {
   'GET /api/v1/sites/[site]/members/me': { action: 'settings:own' },
   'PATCH /api/v1/sites/[site]/members/me': {
     action: 'settings:own',
-    body: () => ({ unitSystem: 'imperial', onHouseList: true }),
+    body: () => ({ unitSystem: 'imperial', onHouseList: true, digest: 'daily' }),
+    ifMatch: true,
   },
+  'GET /api/v1/sites/[site]/members/me/hearing': { action: 'settings:own' },
   'DELETE /api/v1/sites/[site]/members/me': {
     action: 'settings:own',
     status: 204,
@@ -386,6 +408,20 @@ export const routeTable: Record<string, Row> = {
         })
         .execute()
     },
+  },
+  'GET /api/v1/sites/[site]/notices/asks': { action: 'notices:see' },
+  'POST /api/v1/sites/[site]/notices/test': { action: 'notices:acknowledge', status: 201 },
+  'GET /api/v1/sites/[site]/notices/[notice]/deliveries': { action: 'notices:see' },
+  'POST /api/v1/sites/[site]/notices/[notice]/retry': { action: 'notices:acknowledge' },
+  'POST /api/v1/sites/[site]/notices/[notice]/answers': {
+    action: 'notices:acknowledge',
+    body: () => ({ answer: 'going' }),
+    prepare: ({ db, site: { siteId } }) =>
+      db
+        .updateTable('notice')
+        .set({ rule: 'time-out', urgency: 'now' })
+        .where('site_id', '=', siteId)
+        .execute(),
   },
   'POST /api/v1/sites/[site]/notices/seen': { action: 'notices:acknowledge', status: 204 },
   'GET /api/v1/sites/[site]/live': { action: 'site:see' },

@@ -19,7 +19,7 @@ const rows = routes.flatMap((route) => {
   return row === undefined ? [] : [{ route, row, name: nameOf(route) }]
 })
 const ofSites = rows.filter(({ row }) => !isOpen(row))
-const changes = rows.filter(({ route }) => route.method !== 'GET')
+const changes = rows.filter(({ route, row }) => route.method !== 'GET' && row.isPressedByServers !== true)
 const roles = roleSchema.options
 
 type Entry = (typeof rows)[number]

@@ -32,6 +32,8 @@ export interface Things {
   /** A wood of the site's own. */
   wood: string
   notice: string
+  /** A link of a mail that nobody signed. */
+  link: string
   /** A note about the piece, by the hand. */
   event: string
   /** How the piece's lid turned, at rest. */
@@ -137,6 +139,7 @@ export async function makeSite(db: Kysely<Database>, team: Team): Promise<WorldS
         doorToken,
         wood,
         notice,
+        link: 'made-up.link',
         event,
         outcome,
         member: others[0]?.id ?? '',
@@ -309,7 +312,17 @@ const makeOutcome = (db: Kysely<Database>, siteId: number, pieceId: number): Pro
 // What requests may change of a site. That somebody was here is noted by reading, so it does not count.
 const tables = [
   ...['room', 'sensor', 'placement', 'piece', 'piece_place', 'carry', 'carry_piece', 'notice', 'notice_seen'],
-  ...['episode', 'delivery', 'change', 'site_wood', 'reading', 'room_hour', 'room_day', 'refused'],
+  ...[
+    'episode',
+    'delivery',
+    'notice_answer',
+    'change',
+    'site_wood',
+    'reading',
+    'room_hour',
+    'room_day',
+    'refused',
+  ],
   ...['piece_event', 'outcome', 'carry_repeat', 'carry_repeat_piece', 'lock_up'],
 ]
 
