@@ -60,6 +60,8 @@ const pages: { as?: DemoRole; addresses: string[] }[] = [
       '@/pieces/{pieces?q=214}/edit',
       '@/carry',
       '@/carry/{carries}',
+      '@/carry/how-good',
+      '@/lock-up',
       '@/notices',
       '@/place',
       '@/place?part=place',

@@ -20,6 +20,8 @@ type LockUpPieceProps = {
   reader: Reader
   now: Date
   actions: LockUpActions
+  /** The most pressing one has the filled button. */
+  isFirst: boolean
   /** It was said that it stays out. */
   isStaying: boolean
   onStay: (stays: boolean) => void
@@ -33,6 +35,7 @@ export function LockUpPiece({
   reader,
   now,
   actions,
+  isFirst,
   isStaying,
   onStay,
 }: LockUpPieceProps) {
@@ -58,7 +61,7 @@ export function LockUpPiece({
       {may(reader.role, 'carries:do') ? (
         <div className="mt-3 grid grid-cols-2 gap-3 sm:flex">
           <Button
-            variant={isStaying ? 'second' : 'filled'}
+            variant={isFirst && !isStaying ? 'filled' : 'second'}
             aria-label={`It’s in, ${piece.number}`}
             pending={bringBack.pending}
             onClick={() => {

@@ -44,7 +44,7 @@ export function LockUpView({ reader, initial }: { reader: Reader; initial: LockU
       {out.length > 0 ? (
         <Sheet id="still-out" edge={out.some(({ piece }) => piece.isOverdue) ? 'warn' : 'ink'}>
           <ul>
-            {out.map(({ carry, piece }) => (
+            {out.map(({ carry, piece }, index) => (
               <LockUpPiece
                 key={`${carry.id} ${piece.id}`}
                 carry={carry}
@@ -53,6 +53,7 @@ export function LockUpView({ reader, initial }: { reader: Reader; initial: LockU
                 reader={reader}
                 now={now}
                 actions={actions}
+                isFirst={index === 0}
                 isStaying={staying.has(piece.id)}
                 onStay={(stays) => {
                   const rest = [...staying].filter((id) => id !== piece.id)
