@@ -41,7 +41,7 @@ export function evening(now: number, state: NoticeState, inputs: NoticeInputs): 
     mark: 'keep-short',
     title: `${isLastCall ? 'Last call' : 'Lock-up'}: still out: ${listed(stillOut)}.`,
     body: `One night out there can undo a year of waiting. Bring ${isOne ? 'it' : 'them'} in, or say that ${isOne ? 'it is' : 'they are'} in already.${overNight} ${latheCaution}`,
-    link: '/carry',
+    link: '/lock-up',
     episode,
     to: recipients(
       isLastCall ? [...makers(inputs.people), ...houseList(inputs.people)] : eveningFirst(inputs),
@@ -83,7 +83,7 @@ function askedLater(
     mark: 'keep-short',
     title: `Still out: ${listed(stillOut)}.`,
     body: `You asked to be asked again. Bring ${isOne ? 'it' : 'them'} in, or say that ${isOne ? 'it is' : 'they are'} in already. ${latheCaution}`,
-    link: '/carry',
+    link: '/lock-up',
     episode,
     to: recipients(to),
   }
@@ -113,7 +113,7 @@ function anythingOut(now: number, state: NoticeState, inputs: NoticeInputs, hour
     mark: 'unknown',
     title: 'Lock-up: anything still out? Nothing is logged out.',
     body: `${why}One night out there can undo a year of waiting. Look round the bench, the lathe and the van, or say that nothing is. ${latheCaution}`,
-    link: '/carry',
+    link: '/lock-up',
     episode,
     to: recipients(eveningFirst(inputs)),
   }
