@@ -1,5 +1,6 @@
 import { carryCheck } from '@/lib/carry/check'
 import { woodOfPiece } from '@/lib/carry/joint-defaults'
+import { judgeInput } from '@/lib/carry/judge'
 import { copyState, evenState, stateOfStored, stepWood, storedOf } from '@/lib/follow/wood-state'
 import { emcPct } from '@/lib/wood/emc'
 import { SPECIES } from '@/lib/wood/species'
@@ -145,4 +146,34 @@ function checkLine(): Line {
   }
 }
 
-export const woodLines = (): Line[] => [emcLine(), yearLine(), hourLine(), checkLine()]
+/** The whole answer before a carry: the better covers, what the time hangs on, the way home. */
+function thereAndBackLine(): Line {
+  const hours = Array.from({ length: 72 }, (_, n) => NOW + n * HOUR_MS)
+  const forecast = hours.map((at, n) => ({ at, emcPct: 13.6 + Math.sin(n / 4), temperatureC: 8 }))
+  const home = hours.map((at, n) => ({
+    at,
+    emcPct: 8.5 + 0.2 * Math.sin(n / 4),
+    temperatureC: 19,
+    cover: 'open' as const,
+    isKnown: true,
+  }))
+  const inputs = Array.from({ length: CHECKED }, (_, n) => ({
+    ...carry(
+      { there: airAt(13.6), forecast, airDoubtPct: 1 },
+      { jointDiameterMm: 30 + 2 * n, lidForm: 'plug' },
+    ),
+    home,
+  }))
+  const alone = quickest(9, () => inputs.reduce((sum, input) => sum + verdictsOf(carryCheck(input)), 0))
+  const own = quickest(9, () => inputs.reduce((sum, input) => sum + verdictsOf(judgeInput(input).check), 0))
+  return {
+    what: 'the same 30 pieces there and back, with the better covers and what each hangs on',
+    figure: `${figures(own.ms)} ms`,
+    ratio: `${figures(own.ms / alone.ms)} × the check alone`,
+    aim: '< 30 ms',
+  }
+}
+
+const verdictsOf = ({ kind }: { kind: string }): number => (kind === 'verdict' ? 1 : 0)
+
+export const woodLines = (): Line[] => [emcLine(), yearLine(), hourLine(), checkLine(), thereAndBackLine()]
