@@ -44,7 +44,8 @@ export function HourStripFigure({
     <div ref={ref} className="min-w-0" aria-hidden="true">
       <svg
         viewBox={`0 0 ${String(width)} ${String(bottom + foot)}`}
-        className="block w-full"
+        width={width}
+        className="block max-w-full"
         fontSize={font}
         onPointerDown={(event) => {
           const box = event.currentTarget.getBoundingClientRect()

@@ -1,7 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import type { StripCell } from '@/lib/forecast/strip-view'
 import { cellWords, litState, stripDays, stripKinds, stripTicks } from './hour-strip-model'
-import { keepsBars } from './keeps-by-hour-model'
 
 const cell = (hour: number, more: Partial<StripCell> = {}): StripCell => ({
   at: new Date(Date.UTC(2026, 2, 28, hour)).toISOString(),
@@ -48,29 +47,5 @@ describe('the strip of hours as drawn', () => {
     expect(words.replaceAll('\u00a0', ' ')).toBe(
       '09:00: unfit, 13.1 % MC, 8.0 °C; if you light it at 08:00 fit, 9.0 % MC',
     )
-  })
-})
-
-describe('how long a piece keeps, hour by hour', () => {
-  const at = (hour: number) => new Date(Date.UTC(2026, 2, 28, hour)).toISOString()
-  const hour = (n: number, keepsMinutes: number | null, isLit = false) => ({
-    at: at(n),
-    ifLitAt: isLit ? at(8) : null,
-    keepsMinutes,
-    verdict: 'keep-short' as const,
-  })
-
-  it('sets a lit bar behind the unlit one where it is longer, and points at the longest', () => {
-    const { bars, topHours, best } = keepsBars(
-      [hour(9, 30), hour(10, 40), hour(10, null, true), hour(11, 60), hour(11, 50, true)],
-      180,
-    )
-    expect(bars.map((bar) => bar.ifLitMinutes)).toEqual([undefined, null, undefined])
-    expect(best).toBe(1)
-    expect(topHours).toBe(4)
-  })
-
-  it('points at none where all hours are alike', () => {
-    expect(keepsBars([hour(9, 30), hour(10, 40)], 60).best).toBeNull()
   })
 })
