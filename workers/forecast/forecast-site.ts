@@ -19,7 +19,7 @@ import type { RoomKind } from '@/lib/rooms/room'
 const HOUR_MS = 3_600_000
 const DAY_MS = 24 * HOUR_MS
 /** Readings of the hour just past may still be on their way. */
-const WAIT_MS = 2 * 60_000
+export const WAIT_MS = 2 * 60_000
 /** A forecast looks at so much of the record. */
 const RECORD_DAYS = 56
 /** Days that are hindcast when a room is forecast for the first time. */

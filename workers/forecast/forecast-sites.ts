@@ -1,7 +1,7 @@
 import type { Kysely } from 'kysely'
 import { listNoticeSites } from '@/db/queries/notice-state'
 import type { Database } from '@/db/schema'
-import { forecastSite } from './forecast-site'
+import { forecastSite, WAIT_MS } from './forecast-site'
 
 const HOUR_MS = 3_600_000
 /** A site whose rooms have no forecast yet is looked at this often: its record may just have come in. */
@@ -21,13 +21,14 @@ export function forecastTurn(db: Kysely<Database>): ForecastTurn {
   return {
     async run(now, onError) {
       const total = { made: 0, scored: 0 }
+      if (now.getTime() % HOUR_MS < WAIT_MS) return total
       for (const site of await listNoticeSites(db)) {
         if ((doneUntil.get(site.siteId) ?? 0) > now.getTime()) continue
         try {
           const { made, scored } = await forecastSite(db, site, now)
           total.made += made
           total.scored += scored
-          const next = (Math.floor(now.getTime() / HOUR_MS) + 1) * HOUR_MS
+          const next = (Math.floor(now.getTime() / HOUR_MS) + 1) * HOUR_MS + WAIT_MS
           doneUntil.set(site.siteId, made > 0 ? next : Math.min(next, now.getTime() + AGAIN_MS))
         } catch (error) {
           onError(site.siteCode, error)
