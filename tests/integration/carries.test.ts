@@ -122,6 +122,28 @@ describe('the check before a carry', () => {
     })
   })
 
+  it('tells others of a private piece how long it may stay, and no figure of its wood and sizes', async () => {
+    const box = await newBox()
+    const hand = await yard.member('hand')
+    await database.db
+      .updateTable('piece')
+      .set({ is_private: true, owner_user_id: maker.userId })
+      .where('site_id', '=', yard.siteId)
+      .where('code', '=', box.code)
+      .execute()
+    const asked = { pieceIds: [box.code], toRoomId: yard.shop.code, cover: 'open' as const, stayMinutes: 480 }
+    const seen = valueOf(await checkCarry(database.db, hand, asked, now)).pieces[0]
+    const own = valueOf(await checkCarry(database.db, maker, asked, now)).pieces[0]
+    if (seen?.check.kind !== 'verdict' || own?.check.kind !== 'verdict') throw new Error('no verdict')
+    expect(seen.check).toMatchObject({ verdict: own.check.verdict, earlyAt: own.check.earlyAt })
+    const { ringMcPct, cutMcPct, changePct, allowedMcPct, lossMm, allowanceMm, curve } = seen.check
+    expect([ringMcPct, cutMcPct, changePct, allowedMcPct, lossMm, allowanceMm, curve]).toEqual(
+      Array.from({ length: 7 }, () => null),
+    )
+    expect(seen).toMatchObject({ hangsOn: null, backHome: null })
+    expect(own.check.curve?.at.length ?? 0).toBeGreaterThan(10)
+  })
+
   it('tells how long to wait at home, what the time hangs on, the best cover and the order of a session', async () => {
     const tight = await newBox({ allowanceMm: 0.12 })
     const easy = await newBox({ allowanceMm: 0.2 })

@@ -107,6 +107,8 @@ describe('Now', () => {
     const view = await getNow(database.db, hand, minutesAfter(1))
     const piece = view.out.flatMap((one) => one.pieces).find((one) => one.number === '604')
     expect(piece).toMatchObject({ title: 'Private piece', check: { reason: '', assumed: [] } })
+    expect(piece?.check).toMatchObject({ ringMcPct: null, cutMcPct: null, lossMm: null, curve: null })
+    expect(view.rule.brackets.map(({ number }) => number)).not.toContain('604')
     expect(JSON.stringify(view)).not.toMatch(/yew|taxus/i)
   })
 

@@ -31,7 +31,7 @@ export function KeepsByHour({ number, hours, stayMinutes, betterAt, timeZone, no
     asItIs: hours.find((hour) => hour.at === at && hour.ifLitAt === null),
     lit: hours.find((hour) => hour.at === at && hour.ifLitAt !== null),
   }))
-  const most = stayMinutes + FINE_MARGIN_MINUTES
+  const most = scaleMinutes(hours, stayMinutes)
   const step = (width - PLOT.left) / Math.max(1, cells.length)
   const x = (index: number) => PLOT.left + index * step
   const kept = (hour: KeepsHour) => Math.min(most, hour.keepsMinutes ?? most)
@@ -91,12 +91,14 @@ export function KeepsByHour({ number, hours, stayMinutes, betterAt, timeZone, no
                 {asItIs ? <rect {...bar(asItIs, index)} fill="var(--ink-soft)" /> : null}
               </g>
             ))}
-            <path
-              d={`M${String(PLOT.left)} ${String(y(stayMinutes))}H${String(width)}`}
-              stroke="var(--ink)"
-              strokeWidth="1.5"
-              strokeDasharray="5 4"
-            />
+            {stayMinutes <= most ? (
+              <path
+                d={`M${String(PLOT.left)} ${String(y(stayMinutes))}H${String(width)}`}
+                stroke="var(--ink)"
+                strokeWidth="1.5"
+                strokeDasharray="5 4"
+              />
+            ) : null}
             <text
               className="halo"
               x={PLOT.left + 4}
@@ -131,6 +133,14 @@ export function KeepsByHour({ number, hours, stayMinutes, betterAt, timeZone, no
       </div>
     </FigureFrame>
   )
+}
+
+/** To past the planned stay; where no hour comes near it, to a little past the longest. */
+function scaleMinutes(hours: readonly KeepsHour[], stayMinutes: number): number {
+  const longest = Math.max(0, ...hours.map((hour) => hour.keepsMinutes ?? Infinity))
+  return longest < stayMinutes / 3
+    ? Math.ceil(Math.max(20, 1.3 * longest) / 10) * 10
+    : stayMinutes + FINE_MARGIN_MINUTES
 }
 
 function keepsWords(hour: KeepsHour | undefined): string {
