@@ -13,7 +13,6 @@ import type { Carry, CarryPutOff } from '@/lib/carry/carry'
 import { hourToPutOffTo } from '@/lib/carry/put-off'
 import { isCandidate, whateverJudged } from '@/lib/carry/whatever'
 import { undoPutOffMs } from '@/lib/notices/policy'
-import { ok } from '@/lib/result'
 import { getCarry } from './carries'
 import { fail, failField, notThere, type Outcome } from './problem'
 

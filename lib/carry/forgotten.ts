@@ -130,7 +130,7 @@ export function howBadWords(
   figures: ForgottenFigures | undefined,
   clock: { timeZone: string; now: Date },
 ): string {
-  if (figures?.usedNow == null || figures.usedMost === null)
+  if (figures === undefined || figures.usedNow === null || figures.usedMost === null)
     return 'How much of its fit is gone can’t be worked out. Go by the lid, once it has rested.'
   const { usedNow, usedMost } = figures
   const doubt =
@@ -162,7 +162,7 @@ export function tryWords(
   clock: { timeZone: string; now: Date },
 ): string {
   const usual = `Leave it for about two days. ${HOW_TO_TRY} It usually comes back, not always.`
-  if (figures?.usedNow == null || figures.usedMost === null) return usual
+  if (figures === undefined || figures.usedNow === null || figures.usedMost === null) return usual
   const moment = (at: string) => formatMoment(at, clock.timeZone, clock.now)
   const { tryAt, tryAtLate } = figures
   if (tryAt === null)
