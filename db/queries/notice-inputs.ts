@@ -1,5 +1,5 @@
 import { type Kysely, sql } from 'kysely'
-import { dayOfInstant, daysAfter, startOfDayOf } from '@/lib/climate/days'
+import { dayOfInstant, daysAfter, startOfDayAt, startOfDayOf } from '@/lib/climate/days'
 import { shopWasUsed, type ShopHour } from '@/lib/notices/shop-used'
 import type { EveningFacts, RefusedCount, RoomDay, RoomHour } from '@/lib/notices/surroundings'
 import { stageSchema } from '@/lib/pieces/piece'
@@ -12,7 +12,7 @@ type Site = { siteId: number; timeZone: string }
 /** Whole days of every room from a day on, without today, oldest first. */
 export async function listRoomDays(
   db: Kysely<Database>,
-  siteId: number,
+  { siteId, timeZone }: Site,
   fromOn: string,
   beforeOn: string,
 ): Promise<Map<number, RoomDay[]>> {
@@ -25,8 +25,17 @@ export async function listRoomDays(
     where site_id = ${siteId} and day_on >= ${fromOn} and day_on < ${beforeOn}
     group by room_id, day_on
     order by room_id, day_on`.execute(db)
+  // Each day's bounds once, whatever the number of rooms.
+  const starts = new Map<string, number>()
+  const startOf = (dayOn: string): number => {
+    const start = starts.get(dayOn) ?? startOfDayAt(dayOn, timeZone).getTime()
+    starts.set(dayOn, start)
+    return start
+  }
   return byRoom(rows, (row) => ({
     dayOn: row.day_on,
+    at: startOf(row.day_on),
+    endsAt: startOf(daysAfter(row.day_on, 1)),
     temperatureC: row.t,
     humidityPct: row.rh,
     emcPct: row.emc,
@@ -153,6 +162,48 @@ export async function findEveningFacts(
     shopUse: shopWasUsed([...shops.values()], carries.rows[0]?.n ?? 0).why,
     isAnswered: (lockUp?.nothing_else_at ?? lockUp?.closed_at ?? null) !== null,
   }
+}
+
+/** By what each day since a moment tells that a shop was used; days on which nothing does are left out. */
+export async function listShopUse(
+  db: Kysely<Database>,
+  { siteId, timeZone }: Site,
+  since: Date,
+  now: Date,
+): Promise<Map<string, EveningFacts['shopUse']>> {
+  const [hours, carries] = await Promise.all([
+    sql<{ room_id: number; hour_at: Date; t: number; low: number; high: number }>`
+      select hour.room_id, hour.hour_at, avg(temperature_milli_sum::float8 / n / 1000) as t,
+        min(emc_pct_min) as low, max(emc_pct_max) as high
+      from room_hour as hour
+      join room on room.site_id = hour.site_id and room.id = hour.room_id
+      where hour.site_id = ${siteId} and room.kind = 'shop' and room.archived_at is null
+        and hour.hour_at >= ${since} and hour.hour_at <= ${now}
+      group by hour.room_id, hour.hour_at
+      order by hour.room_id, hour.hour_at`.execute(db),
+    sql<{ day_on: string; n: number }>`
+      select (part.out_at at time zone ${timeZone})::date::text as day_on, count(*)::int as n
+      from carry_piece as part
+      join carry on carry.site_id = part.site_id and carry.id = part.carry_id
+      join room on room.site_id = carry.site_id and room.id = carry.to_room_id
+      where part.site_id = ${siteId} and room.kind = 'shop' and part.out_at between ${since} and ${now}
+      group by 1`.execute(db),
+  ])
+  const carriesOn = new Map(carries.rows.map((row) => [row.day_on, row.n]))
+  const days = new Map<string, Map<number, ShopHour[]>>()
+  for (const row of hours.rows) {
+    const dayOn = dayOfInstant(row.hour_at, timeZone)
+    const day = days.get(dayOn) ?? new Map<number, ShopHour[]>()
+    const hour = { at: row.hour_at.getTime(), temperatureC: row.t, emcPctMin: row.low, emcPctMax: row.high }
+    day.set(row.room_id, [...(day.get(row.room_id) ?? []), hour])
+    days.set(dayOn, day)
+  }
+  const uses = new Map<string, EveningFacts['shopUse']>()
+  for (const dayOn of new Set([...days.keys(), ...carriesOn.keys()])) {
+    const { why } = shopWasUsed([...(days.get(dayOn)?.values() ?? [])], carriesOn.get(dayOn) ?? 0)
+    if (why !== null) uses.set(dayOn, why)
+  }
+  return uses
 }
 
 /** Readings of the sensors that hang in some rooms now, since a moment, oldest first. */

@@ -168,7 +168,7 @@ export async function storeEpisodes(
     .where('state', '<>', 'over')
     .select(['id', 'rule', 'subject', 'key'])
     .execute()
-  // What began and ended unseen only opens in the history.
+  // What has ended by its record ended then, not now; what began and ended unseen only opens in the history.
   const lasting = episodes.filter(({ state }) => state !== 'over')
   const holding = new Set(lasting.map(episodeName))
   const over = open.filter((one) => !holding.has(episodeName(one))).map(({ id }) => id)
@@ -216,6 +216,7 @@ async function goOnWithEpisode(
     .execute()
 }
 
+/** An episode whose end is known by its record: a new one for the history, or one that is over since. */
 async function storeHistory(trx: Transaction<Database>, siteId: number, episode: Episode): Promise<void> {
   await trx
     .insertInto('episode')
@@ -231,7 +232,12 @@ async function storeHistory(trx: Transaction<Database>, siteId: number, episode:
       ended_at: new Date(episode.endedAt ?? episode.beganAt),
       data: dataOf(episode),
     })
-    .onConflict((clash) => clash.columns(['site_id', 'rule', 'subject', 'key']).doNothing())
+    .onConflict((clash) =>
+      clash
+        .columns(['site_id', 'rule', 'subject', 'key'])
+        .doUpdateSet((eb) => ({ ended_at: eb.ref('excluded.ended_at') }))
+        .where('episode.state', '=', 'over'),
+    )
     .execute()
 }
 

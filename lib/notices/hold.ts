@@ -21,6 +21,8 @@ export interface Span {
   endedAt: number | null
   /** The end of the last sample that counted towards it. */
   seenUntil: number
+  /** It began with the record, or before it. */
+  isCut: boolean
 }
 
 /**
@@ -44,7 +46,15 @@ export function heldSpans(samples: readonly Sample[], hold: Hold): Span[] {
     before = sample
     if (open === undefined || (open.heldAt === null && over === 1)) {
       open =
-        over > 0 ? { beganAt: sample.at, heldAt: null, endedAt: null, seenUntil: sample.endsAt } : undefined
+        over > 0
+          ? {
+              beganAt: sample.at,
+              heldAt: null,
+              endedAt: null,
+              seenUntil: sample.endsAt,
+              isCut: sample === samples[0],
+            }
+          : undefined
     }
     if (open === undefined) continue
     open.seenUntil = sample.endsAt

@@ -108,7 +108,7 @@ export interface Episode {
   rule: Rule
   subject: string
   key: string
-  /** `over`: it began and ended before anybody looked, and opens in the history without being told. */
+  /** `over`: it has ended by its record; one that nobody saw begin opens in the history without being told. */
   state: 'pending' | 'telling' | 'over'
   beganAt: number
   /** With `over` only. */

@@ -70,8 +70,7 @@ function replayed(
   settings: Readonly<Record<string, unknown>>,
   history: PreviewHistory,
 ): PreviewMoment[] {
-  const { rooms, site } = history
-  const { timeZone } = site
+  const { rooms } = history
   const lookBack = previewDays + 1
   switch (rule) {
     case 'keep-room-band': {
@@ -79,7 +78,7 @@ function replayed(
       return ofRooms(
         rooms,
         (room) => isInScope(values.rooms, room.code, room.isKeepRoom),
-        (room) => bandSpans(room, timeZone, values, lookBack),
+        (room) => bandSpans(room, values, lookBack),
       )
     }
     case 'damper-than-normal': {
@@ -87,7 +86,7 @@ function replayed(
       return ofRooms(
         rooms,
         (room) => isInScope(values.rooms, room.code, isUsual(room)),
-        (room) => damperSpans(room, timeZone, values, lookBack),
+        (room) => damperSpans(room, values, lookBack),
       )
     }
     case 'too-dry': {
@@ -95,13 +94,13 @@ function replayed(
       return ofRooms(
         rooms,
         (room) => isInScope(values.rooms, room.code, room.hasRestingWood),
-        (room) => drySpans(room, timeZone, values, lookBack),
+        (room) => drySpans(room, values, lookBack),
       )
     }
     case 'mould-risk': {
       const values = valuesOf(rule, settings)
       const isWatched = (room: NoticeRoom) => isInScope(values.rooms, room.code, room.keepsDryWork)
-      const spansOf = (room: NoticeRoom) => mouldSpans(room, timeZone, values, lookBack, rooms)
+      const spansOf = (room: NoticeRoom) => mouldSpans(room, values, lookBack, rooms)
       const indoors = (room: NoticeRoom) => room.kind !== 'outdoor'
       return [
         ...ofRooms(rooms, (room) => indoors(room) && isWatched(room), spansOf),

@@ -1,27 +1,8 @@
 import { describe, expect, it } from 'vitest'
 import { plainText } from '@/lib/format/sentence'
-import { noticesHeadline as headlineParts, ruleSentences } from './rule-sentences'
+import { noticesHeadline as headlineParts } from './rule-sentences'
 
 const noticesHeadline = (...of: Parameters<typeof headlineParts>) => plainText(headlineParts(...of))
-const times = { quietFrom: '22:00', quietTo: '07:00', lockUpAt: '18:30' }
-const wordsOf = (key: string, given = times) =>
-  plainText(ruleSentences(given).find((rule) => rule.key === key)?.words ?? [])
-
-describe('what the product tells, in sentences', () => {
-  it('tells the site’s own times', () => {
-    expect(wordsOf('lock-up')).toContain('18:30')
-    expect(wordsOf('quiet')).toContain('From 22:00 to 07:00')
-  })
-  it('tells the policy’s values', () => {
-    expect(wordsOf('planned-carry')).toContain('60 min before and at 19:00 the evening before')
-    expect(wordsOf('last-call')).toContain('30 min before quiet hours')
-  })
-  it('says that there are no quiet hours where they begin as they end', () => {
-    const none = { ...times, quietTo: '22:00' }
-    expect(wordsOf('quiet', none)).toContain('no quiet hours')
-    expect(wordsOf('last-call', none)).toContain('no last call')
-  })
-})
 
 describe('the sentence over the notices', () => {
   const notice = (title: string, urgency: 'now' | 'soon' | 'whenever', isSeen = false) => ({

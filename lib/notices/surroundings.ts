@@ -15,6 +15,9 @@ export interface Surroundings {
 /** A room's day: means over the whole of it, each sensor counted once. */
 export interface RoomDay {
   dayOn: string
+  /** When it began and ended by the clocks of the site, epoch ms: 23 to 25 h apart. */
+  at: number
+  endsAt: number
   temperatureC: number
   humidityPct: number
   emcPct: number

@@ -27,7 +27,17 @@ const newsForMs = 48 * 3_600_000
 export function tellSpans(now: number, state: NoticeState, asked: SpanRule): RulePart {
   const known = (state.known ?? []).filter((one) => one.rule === asked.rule && one.subject === asked.subject)
   const lastToldAt = Math.max(-Infinity, ...known.map((one) => one.toldAt ?? -Infinity))
-  const parts = asked.spans.map((span) => tellSpan(now, state, asked, span, known, lastToldAt))
+  // Each episode on record is one span at most, the earliest that it overlaps.
+  const claimed = new Set<KnownEpisode>()
+  const parts = asked.spans.map((span) => {
+    const match = matchOf(
+      span,
+      known.filter((one) => !claimed.has(one)),
+      now,
+    )
+    if (match !== undefined) claimed.add(match)
+    return tellSpan(now, state, asked, span, match, lastToldAt)
+  })
   return { episodes: parts.flatMap((part) => part.episodes), notices: parts.flatMap((part) => part.notices) }
 }
 
@@ -36,11 +46,10 @@ function tellSpan(
   state: NoticeState,
   asked: SpanRule,
   span: Span,
-  known: readonly KnownEpisode[],
+  match: KnownEpisode | undefined,
   lastToldAt: number,
 ): RulePart {
   const { rule, subject, atMostEveryMs = 0 } = asked
-  const match = matchOf(span, known, now)
   const episode: Episode = {
     rule,
     subject,
@@ -52,12 +61,15 @@ function tellSpan(
   const noticeKey = `${rule}/${subject}/${key}`
   const wasTold = state.told.has(noticeKey) || (match !== undefined && match.toldAt !== null)
   if (span.endedAt !== null) {
-    if (match === undefined)
-      return { episodes: [{ ...episode, state: 'over', endedAt: span.endedAt }], notices: [] }
-    if (!match.isOpen || !wasTold || asked.over === undefined) return { episodes: [], notices: [] }
+    // One that the record no longer shows from its beginning was seen before, under its true name.
+    if (match === undefined && span.isCut) return { episodes: [], notices: [] }
+    const ended: Episode = { ...episode, state: 'over', endedAt: span.endedAt }
+    if (match === undefined) return { episodes: [ended], notices: [] }
+    if (!match.isOpen) return { episodes: [], notices: [] }
+    if (!wasTold || asked.over === undefined) return { episodes: [ended], notices: [] }
     const over = asked.over(span)
     return {
-      episodes: [],
+      episodes: [ended],
       notices: [{ ...over, key: `${noticeKey}/over`, rule, episode: { rule, subject, key } }],
     }
   }
@@ -71,17 +83,17 @@ function tellSpan(
   }
 }
 
-/**
- * An episode ends on record when somebody looked, which may be a little after the next span began: so much of its end
- * does not count.
- */
+/** An episode that was switched off ended when somebody did so, which may be after the next span began. */
 const endSlackMs = 26 * 3_600_000
 
 /** The episode on record that a span is: one that overlaps it, the open one before others. */
 function matchOf(span: Span, known: readonly KnownEpisode[], now: number): KnownEpisode | undefined {
   const until = span.endedAt ?? now
-  const isSame = ({ beganAt, isOpen, endedAt }: KnownEpisode): boolean =>
-    beganAt <= until && (isOpen || beganAt >= span.beganAt || (endedAt ?? now) - endSlackMs > span.beganAt)
+  const isSame = ({ beganAt, isOpen, endedAt, toldAt }: KnownEpisode): boolean =>
+    // One that began as this span ended is the next one.
+    beganAt < until &&
+    (isOpen || beganAt >= span.beganAt || (toldAt !== null && (endedAt ?? now) - endSlackMs > span.beganAt))
   const same = known.filter(isSame)
-  return same.find(({ isOpen }) => isOpen) ?? same.at(-1)
+  const exact = same.find(({ beganAt }) => beganAt === span.beganAt)
+  return exact ?? same.find(({ isOpen }) => isOpen) ?? same.at(-1)
 }

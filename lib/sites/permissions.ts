@@ -42,6 +42,8 @@ export const whoMay = {
   'carries:do': ['owner', 'maker', 'hand'],
   'notices:see': ['owner', 'maker', 'hand'],
   'notices:acknowledge': ['owner', 'maker', 'hand'],
+  'rules:see': ['owner', 'maker', 'hand'],
+  'rules:change': ['owner', 'maker'],
 } as const satisfies Record<string, readonly Role[]>
 
 export type Action = keyof typeof whoMay

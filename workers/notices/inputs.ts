@@ -80,7 +80,7 @@ export async function loadNoticeInputs(
         batteryPct: batteries.get(sensor.sensorId) ?? null,
       }
     })
-  const surroundings = await loadSurroundings(db, site, now, { rooms, carries, material }, costly)
+  const surroundings = await loadSurroundings(db, site, now, { rooms, carries, material, rules }, costly)
   return { site, carries: open.map(({ carry }) => carry), sensors, people, rules, surroundings }
 }
 

@@ -1,21 +1,29 @@
-import type { Kysely } from 'kysely'
-import { findForecasts } from '@/db/queries/forecasts'
-import type { NoticeSite } from '@/db/queries/notice-state'
+import { assumedKeepRoom } from '@/db/queries/carry-inputs'
+import type { RestingPiece } from '@/db/queries/notice-inputs'
 import type { RoomRecord } from '@/db/queries/rooms'
-import type { Database } from '@/db/schema'
-import type { NoticeStrip } from '@/lib/notices/surroundings'
+import type { CarryMaterial } from '@/lib/carry/material'
+import { hourStrip } from '@/lib/forecast/hour-strip'
+import type { StripCell } from '@/lib/forecast/strip-view'
+import type { NoticeStrip, StripKind } from '@/lib/notices/surroundings'
 
-/** The coming hours of each shop, by its newest forecast. */
-export async function loadStrips(
-  db: Kysely<Database>,
-  site: NoticeSite,
+/** The coming hours of each shop by its forecast, judged as on its page; a shop without a forecast is left out. */
+export function stripsOf(
+  material: CarryMaterial,
   rooms: readonly RoomRecord[],
-  now: Date,
-): Promise<NoticeStrip[]> {
-  const shops = rooms.filter(({ kind }) => kind === 'shop')
-  const forecasts = await findForecasts(db, site.siteId, new Set(shops.map(({ id }) => id)), now)
-  return shops.flatMap((room): NoticeStrip[] => {
-    const forecast = forecasts.get(room.id)
-    return forecast === undefined ? [] : []
-  })
+  pieces: readonly RestingPiece[],
+  timeZone: string,
+): NoticeStrip[] {
+  const keepRoomId = assumedKeepRoom(rooms)?.id ?? null
+  const pieceIds = pieces.filter(({ stage, isOut }) => stage === 'box' && !isOut).map(({ id }) => id)
+  return rooms
+    .filter(({ kind }) => kind === 'shop')
+    .flatMap((room): NoticeStrip[] => {
+      const strip = hourStrip(material, { roomId: room.id, pieceIds, keepRoomId, timeZone })
+      if (strip.kind !== 'forecast') return []
+      const cells = strip.cells.map((cell) => ({ at: new Date(cell.at).getTime(), kind: kindOf(cell) }))
+      return [{ roomCode: room.code, roomName: room.name, cells }]
+    })
 }
+
+const kindOf = ({ state, ifLit }: StripCell): StripKind =>
+  state !== 'fit' && ifLit?.state === 'fit' ? 'fit-if-lit' : state

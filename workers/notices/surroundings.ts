@@ -22,7 +22,8 @@ import { dayOfInstant, daysAfter, startOfDayAt } from '@/lib/climate/days'
 import { mcDoubtPct } from '@/lib/follow/doubt'
 import type { NoticeBlank, NoticeRoom, NoticeTub, RestingBox, Surroundings } from '@/lib/notices/surroundings'
 import { restOf } from '@/lib/seasoning/rest'
-import { loadStrips } from './strips'
+import { isRuleOn, type RuleBook } from '@/lib/notices/rule-settings'
+import { stripsOf } from './strips'
 
 const hourMs = 3_600_000
 /** A year and a season before it, so that a day can be held against the same weeks of the year before. */
@@ -30,7 +31,7 @@ const daysBack = 460
 /** Cold iron is over after a clear day; a few more, for what began while nobody looked. */
 const hoursBack = 7 * 24
 
-type Costly = Pick<Surroundings, 'rooms' | 'boxes' | 'blanks'>
+type Costly = Pick<Surroundings, 'rooms' | 'boxes' | 'blanks' | 'strips'>
 
 /** What is worked out once an hour for a site, or when its pieces or rooms change. One for a process. */
 export type CostlyFacts = Map<number, { key: string; facts: Costly }>
@@ -40,22 +41,28 @@ export async function loadSurroundings(
   db: Kysely<Database>,
   site: NoticeSite,
   now: Date,
-  yard: { rooms: readonly RoomRecord[]; carries: readonly CarryRecord[]; material: CarryMaterial },
+  yard: {
+    rooms: readonly RoomRecord[]
+    carries: readonly CarryRecord[]
+    material: CarryMaterial
+    rules: RuleBook
+  },
   costly: CostlyFacts,
 ): Promise<Surroundings> {
   const { siteId } = site
-  const [key, refused, evening, strips, tubs] = await Promise.all([
+  const [key, refused, evening, tubs] = await Promise.all([
     findYardKey(db, siteId),
     listRefusedCounts(db, site, now),
     findEveningFacts(db, site, now),
-    loadStrips(db, site, yard.rooms, now),
     loadTubs(db, site, now, yard),
   ])
-  const hourKey = `${String(Math.floor(now.getTime() / hourMs))} ${dayOfInstant(now, site.timeZone)} ${key}`
+  const wantsStrips = isRuleOn(yard.rules, 'shop-unfit') || isRuleOn(yard.rules, 'good-hours')
+  const hourKey = `${String(wantsStrips)} ${String(Math.floor(now.getTime() / hourMs))} ${dayOfInstant(now, site.timeZone)} ${key}`
   const known = costly.get(siteId)
-  const facts = known?.key === hourKey ? known.facts : await loadCostly(db, site, now, yard.rooms)
+  const facts =
+    known?.key === hourKey ? known.facts : await loadCostly(db, site, now, yard.rooms, wantsStrips)
   costly.set(siteId, { key: hourKey, facts })
-  return { ...facts, refused, evening, strips, tubs }
+  return { ...facts, refused, evening, tubs }
 }
 
 async function loadCostly(
@@ -63,20 +70,21 @@ async function loadCostly(
   site: NoticeSite,
   now: Date,
   rooms: readonly RoomRecord[],
+  wantsStrips: boolean,
 ): Promise<Costly> {
   const { siteId, timeZone } = site
   const today = dayOfInstant(now, timeZone)
   const thisHour = new Date(Math.floor(now.getTime() / hourMs) * hourMs)
   const [pieces, days, hours] = await Promise.all([
     listRestingPieces(db, siteId),
-    listRoomDays(db, siteId, daysAfter(today, -daysBack), today),
+    listRoomDays(db, site, daysAfter(today, -daysBack), today),
     listRoomHourAirs(db, siteId, new Date(thisHour.getTime() - hoursBack * hourMs), thisHour),
   ])
   const material = await loadCarryMaterial(
     db,
     site,
     pieces.map(({ id }) => id),
-    [],
+    wantsStrips ? rooms.filter(({ kind }) => kind === 'shop').map(({ id }) => id) : [],
     now,
   )
   const keepRooms = new Set([
@@ -97,6 +105,7 @@ async function loadCostly(
     })),
     boxes: pieces.flatMap((piece) => restingBox(piece, material, rooms) ?? []),
     blanks: await loadBlanks(db, site, now, pieces, material, rooms),
+    strips: wantsStrips ? stripsOf(material, rooms, pieces, timeZone) : [],
   }
 }
 

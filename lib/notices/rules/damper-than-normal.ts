@@ -1,12 +1,12 @@
-import { daysFrom } from '@/lib/climate/days'
 import { formatEmc, formatPoints } from '@/lib/format/figures'
 import { heldSpans, type Span } from '../hold'
 import type { NoticeInputs, NoticeState, RulePart } from '../inputs'
 import { normalQuantile, roomHysteresisPct, sameWeeksDays, sameWeeksDaysMin } from '../policy'
 import { choiceOf, isInScope, type ValuesOf } from '../rule-settings'
-import type { NoticeRoom } from '../surroundings'
+import type { NoticeRoom, RoomDay } from '../surroundings'
 import {
   backToNormal,
+  daysBetween,
   type DaySample,
   daySamples,
   eachRoom,
@@ -32,7 +32,7 @@ export function damperThanNormal(
     // A keep room out of its band says the same thing already.
     (room) => isInScope(values.rooms, room.code, isUsual(room)) && !alreadyTold.has(room.code),
     (room) => {
-      const samples = damperSamples(room, inputs.site.timeZone, values, lookBackDays)
+      const samples = damperSamples(room, values, lookBackDays)
       return roomPart(now, state, inputs, {
         rule: 'damper-than-normal',
         room,
@@ -48,13 +48,13 @@ export const isUsual = (room: NoticeRoom): boolean => room.isKeepRoom || room.ha
 
 const damperHold = (values: Values) => ({ over: Math.ceil(values.days), clear: 2 })
 
-export const damperSpans = (room: NoticeRoom, timeZone: string, values: Values, lookBack: number): Span[] =>
-  heldSpans(damperSamples(room, timeZone, values, lookBack), damperHold(values))
+export const damperSpans = (room: NoticeRoom, values: Values, lookBack: number): Span[] =>
+  heldSpans(damperSamples(room, values, lookBack), damperHold(values))
 
-function damperSamples(room: NoticeRoom, timeZone: string, values: Values, lookBack: number): DaySample[] {
-  return daySamples(room, timeZone, lookBack, (index) => {
+function damperSamples(room: NoticeRoom, values: Values, lookBack: number): DaySample[] {
+  return daySamples(room, lookBack, (index) => {
     const day = room.days[index]
-    const normal = day && normalOf(room, day.dayOn)
+    const normal = day && normalOf(room, day)
     if (day === undefined || normal === undefined) return undefined
     return {
       level: levelAbove(day.emcPct, normal + values.points, roomHysteresisPct),
@@ -64,9 +64,9 @@ function damperSamples(room: NoticeRoom, timeZone: string, values: Values, lookB
 }
 
 /** Nine in ten days of the same weeks of earlier years, by the record alone: no season has a name here. */
-function normalOf(room: NoticeRoom, dayOn: string): number | undefined {
+function normalOf(room: NoticeRoom, today: RoomDay): number | undefined {
   const same = room.days.filter((day) => {
-    const back = daysFrom(day.dayOn, dayOn)
+    const back = daysBetween(day, today)
     const years = Math.round(back / 365.25)
     return years >= 1 && Math.abs(back - years * 365.25) <= sameWeeksDays
   })

@@ -1,4 +1,3 @@
-import { daysFrom } from '@/lib/climate/days'
 import { formatEmc, formatEmcFigure, formatPoints } from '@/lib/format/figures'
 import { heldSpans, type Span } from '../hold'
 import type { NoticeInputs, NoticeState, RulePart } from '../inputs'
@@ -7,6 +6,7 @@ import { choiceOf, isInScope, type ValuesOf } from '../rule-settings'
 import type { NoticeRoom } from '../surroundings'
 import {
   backToNormal,
+  daysBetween,
   type DaySample,
   daySamples,
   eachRoom,
@@ -27,7 +27,7 @@ export function keepRoomBand(now: number, state: NoticeState, inputs: NoticeInpu
     'keep-room-band',
     (room) => isInScope(values.rooms, room.code, room.isKeepRoom),
     (room) => {
-      const samples = bandSamples(room, inputs.site.timeZone, values, lookBackDays)
+      const samples = bandSamples(room, values, lookBackDays)
       return roomPart(now, state, inputs, {
         rule: 'keep-room-band',
         room,
@@ -42,13 +42,13 @@ export function keepRoomBand(now: number, state: NoticeState, inputs: NoticeInpu
 type Values = ValuesOf<'keep-room-band'>
 const bandHold = (values: Values) => ({ over: Math.ceil(values.days), clear: 1 })
 
-export const bandSpans = (room: NoticeRoom, timeZone: string, values: Values, lookBack: number): Span[] =>
-  heldSpans(bandSamples(room, timeZone, values, lookBack), bandHold(values))
+export const bandSpans = (room: NoticeRoom, values: Values, lookBack: number): Span[] =>
+  heldSpans(bandSamples(room, values, lookBack), bandHold(values))
 
 /** Each day against the band of the twelve months before it, or the common band where those hold too few days. */
-function bandSamples(room: NoticeRoom, timeZone: string, values: Values, lookBack: number): DaySample[] {
+function bandSamples(room: NoticeRoom, values: Values, lookBack: number): DaySample[] {
   const { days } = room
-  return daySamples(room, timeZone, lookBack, (index) => {
+  return daySamples(room, lookBack, (index) => {
     const day = days[index]
     if (day === undefined) return undefined
     const band = bandOf(room, index, values)
@@ -61,8 +61,10 @@ function bandSamples(room: NoticeRoom, timeZone: string, values: Values, lookBac
 }
 
 function bandOf(room: NoticeRoom, index: number, values: Values): { low: number; high: number } {
-  const today = room.days[index]?.dayOn ?? ''
-  const year = room.days.slice(0, index).filter(({ dayOn }) => daysFrom(dayOn, today) <= yearDays)
+  const today = room.days[index]
+  const year = room.days
+    .slice(0, index)
+    .filter((day) => today !== undefined && daysBetween(day, today) <= yearDays)
   if (year.length < ownMiddleDaysMin) return { low: values.lowPct, high: values.highPct }
   const middle = quantileOf(
     year.map(({ emcPct }) => emcPct),

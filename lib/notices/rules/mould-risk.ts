@@ -1,5 +1,4 @@
 import { humidityAfterTemperatureChangePct } from '@/lib/air/humidity'
-import { daysAfter } from '@/lib/climate/days'
 import { formatHumidity } from '@/lib/format/figures'
 import { heldSpans, type Sample, type Span } from '../hold'
 import type { NoticeInputs, NoticeState, RulePart } from '../inputs'
@@ -14,6 +13,7 @@ import { choiceOf, isInScope, type ValuesOf } from '../rule-settings'
 import type { NoticeRoom, RoomDay } from '../surroundings'
 import {
   backToNormal,
+  daysBetween,
   type DaySample,
   daySamples,
   eachRoom,
@@ -38,7 +38,7 @@ export function mouldRisk(now: number, state: NoticeState, inputs: NoticeInputs)
     'mould-risk',
     (room) => room.kind !== 'outdoor',
     (room) => {
-      const samples = mouldSamples(room, inputs.site.timeZone, values, lookBackDays, outdoors)
+      const samples = mouldSamples(room, values, lookBackDays, outdoors)
       const isWatched = isInScope(values.rooms, room.code, room.keepsDryWork)
       return roomPart(now, state, inputs, {
         rule: 'mould-risk',
@@ -57,11 +57,10 @@ const mouldHold = { over: 1, clear: 1 }
 
 export const mouldSpans = (
   room: NoticeRoom,
-  timeZone: string,
   values: Values,
   lookBack: number,
   rooms: readonly NoticeRoom[],
-): Span[] => heldSpans(mouldSamples(room, timeZone, values, lookBack, outdoorDays(rooms)), mouldHold)
+): Span[] => heldSpans(mouldSamples(room, values, lookBack, outdoorDays(rooms)), mouldHold)
 
 const outdoorDays = (rooms: readonly NoticeRoom[]): ReadonlyMap<string, RoomDay> =>
   new Map((rooms.find(({ kind }) => kind === 'outdoor')?.days ?? []).map((day) => [day.dayOn, day]))
@@ -70,13 +69,12 @@ type MouldSample = DaySample & { isWarning: boolean }
 
 function mouldSamples(
   room: NoticeRoom,
-  timeZone: string,
   values: Values,
   lookBack: number,
   outdoors: ReadonlyMap<string, RoomDay>,
 ): MouldSample[] {
   const warnings = new Set<string>()
-  const samples = daySamples(room, timeZone, lookBack, (index) => {
+  const samples = daySamples(room, lookBack, (index) => {
     const day = room.days[index]
     if (day === undefined) return undefined
     const week = daysBack(room, index, mouldTellDays)
@@ -100,11 +98,10 @@ function mouldSamples(
 
 /** The last days up to one of them, where nearly all are there. */
 function daysBack(room: NoticeRoom, index: number, count: number): RoomDay[] | undefined {
-  const last = room.days[index]?.dayOn ?? ''
-  const firstOn = daysAfter(last, 1 - count)
+  const last = room.days[index]
   const days = room.days
     .slice(Math.max(0, index - count + 1), index + 1)
-    .filter(({ dayOn }) => dayOn >= firstOn)
+    .filter((day) => last !== undefined && daysBetween(day, last) < count)
   return days.length < count * 0.8 ? undefined : days
 }
 

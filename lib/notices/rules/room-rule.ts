@@ -1,4 +1,3 @@
-import { daysAfter, startOfDayAt } from '@/lib/climate/days'
 import type { Sample } from '../hold'
 import type { NoticeInputs, NoticeState, RulePart } from '../inputs'
 import type { Rule } from '../notice'
@@ -23,7 +22,6 @@ export interface DaySample extends Sample {
  */
 export function daySamples(
   room: NoticeRoom,
-  timeZone: string,
   lookBack: number,
   judge: (index: number) => { level: Sample['level']; figure: number } | undefined,
 ): DaySample[] {
@@ -31,14 +29,7 @@ export function daySamples(
     if (index < room.days.length - lookBack) return []
     const judged = judge(index)
     if (judged === undefined) return []
-    return [
-      {
-        ...judged,
-        day,
-        at: startOfDayAt(day.dayOn, timeZone).getTime(),
-        endsAt: startOfDayAt(daysAfter(day.dayOn, 1), timeZone).getTime(),
-      },
-    ]
+    return [{ ...judged, day, at: day.at, endsAt: day.endsAt }]
   })
 }
 
@@ -113,3 +104,7 @@ export function quantileOf(values: readonly number[], share: number): number {
   const low = sorted[Math.floor(place)] ?? NaN
   return low + ((sorted[Math.ceil(place)] ?? low) - low) * (place - Math.floor(place))
 }
+
+/** Whole days from one day to another. */
+export const daysBetween = (first: RoomDay, last: RoomDay): number =>
+  Math.round((last.at - first.at) / (24 * 3_600_000))

@@ -19,7 +19,7 @@ export function tooDry(now: number, state: NoticeState, inputs: NoticeInputs): R
       roomPart(now, state, inputs, {
         rule: 'too-dry',
         room,
-        spans: drySpans(room, inputs.site.timeZone, values, lookBackDays),
+        spans: drySpans(room, values, lookBackDays),
         told: () => ({
           mark: 'keep-short',
           title: `${room.name} is very dry: ${formatHumidity(room.days.at(-1)?.humidityPct ?? 0)}.`,
@@ -30,9 +30,9 @@ export function tooDry(now: number, state: NoticeState, inputs: NoticeInputs): R
   )
 }
 
-export const drySpans = (room: NoticeRoom, timeZone: string, values: Values, lookBack: number): Span[] =>
+export const drySpans = (room: NoticeRoom, values: Values, lookBack: number): Span[] =>
   heldSpans(
-    daySamples(room, timeZone, lookBack, (index) => {
+    daySamples(room, lookBack, (index) => {
       const day = room.days[index]
       return (
         day && {

@@ -1,24 +1,51 @@
-import { RichText } from '@/app/_components/ui/rich-text'
-import { Sheet } from '@/app/_components/ui/sheet'
-import { ruleSentences } from '@/lib/notices/rule-sentences'
-import type { Site } from '@/lib/sites/site'
+'use client'
 
-/** The rules as they stand: the same for every member, with the values that they go by. */
-export function WhatIsTold({ site }: { site: Site }) {
+import { useQuery } from '@tanstack/react-query'
+import { apiFetch } from '@/app/_components/api'
+import { siteKey } from '@/app/_components/live/site-keys'
+import { Sheet } from '@/app/_components/ui/sheet'
+import { StaleState } from '@/app/_components/ui/states'
+import type { RuleList } from '@/lib/notices/rule-view'
+import { may } from '@/lib/sites/permissions'
+import type { Reader } from '@/lib/sites/reader'
+import { RuleLine } from './rule-line'
+
+/** The rules as sentences whose underlined words can be changed, by those who may. */
+export function WhatIsTold({ reader }: { reader: Reader }) {
+  const rules = useQuery({
+    queryKey: siteKey(reader.site, 'notices', 'rules'),
+    queryFn: ({ signal }) => apiFetch<RuleList>(`/sites/${reader.site}/rules`, { signal }),
+  })
+  const mayChange = may(reader.role, 'rules:change')
   return (
-    <Sheet title="What you are told" id="rules" aside="The same for everyone here">
-      <ul className="flex flex-col divide-y divide-line">
-        {ruleSentences(site).map((rule) => (
-          <li key={rule.key} className="py-3 text-[18px] leading-7">
-            <p className="max-w-words">
-              <RichText parts={rule.words} />
-            </p>
-          </li>
-        ))}
-      </ul>
+    <Sheet
+      title="What you asked to be told"
+      id="rules"
+      aside={mayChange ? 'Press an underlined word to change it' : 'The makers change this'}
+    >
+      {rules.isError ? (
+        <StaleState>The rules could not be fetched just now. They go on as they are.</StaleState>
+      ) : null}
+      {rules.data === undefined ? (
+        rules.isPending ? (
+          <p className="text-ink-soft">Fetching the rules.</p>
+        ) : null
+      ) : (
+        <ul className="flex flex-col divide-y divide-line">
+          {rules.data.items.map((rule) => (
+            <RuleLine
+              key={`${rule.rule} ${String(rule.version)}`}
+              reader={reader}
+              rule={rule}
+              rooms={rules.data.rooms}
+              mayChange={mayChange}
+            />
+          ))}
+        </ul>
+      )}
       <p className="mt-3 text-label text-ink-soft">
-        Each thing is told once, and again only when it gets worse. Notices go by e-mail to those who want
-        them, and stand here for everyone who may act on them.
+        The same for everyone here. Each thing is told once, and a room once more when it is back to normal.
+        “Points” are points of % MC.
       </p>
     </Sheet>
   )
