@@ -4,7 +4,7 @@ import { movePiece } from '@/db/queries/places'
 import type { Database } from '@/db/schema'
 import { makeSensorSecret } from '@/db/sensor-secret'
 import { signInNameOf, topicOf } from '@/lib/readings/topic'
-import { houseAir, seedPiece, seedRoom } from '../../support/seed-rooms'
+import { houseAir, seedPiece, seedRoom, type SeededRoom } from '../../support/seed-rooms'
 import { seedSite } from '../../support/seed-site'
 
 const HOUR_MS = 3_600_000
@@ -15,6 +15,8 @@ export interface WaitingSite {
   siteId: number
   /** The shop's sensor, which has not said a word yet. */
   sensor: { name: string; secret: string; topic: string }
+  /** A reading of the shop, straight into the database. */
+  readShop: SeededRoom['read']
 }
 
 /** A site with a box out in a shop that nobody has read: the first damp reading there says that its time is over. */
@@ -59,6 +61,7 @@ export async function seedWaitingSite(db: Kysely<Database>, now: Date): Promise<
   })
   return {
     siteId,
+    readShop: shop.read,
     sensor: {
       name: signInNameOf(siteCode, shop.sensorCode),
       secret,
