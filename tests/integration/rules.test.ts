@@ -29,6 +29,8 @@ beforeEach(async () => {
   site = await seedSite(database.db, after(-24 * 40))
   maker = await site.join('maker')
   house = await seedRoom(database.db, site.siteId, 'Cupboard', 'cupboard', after(-24 * 40))
+  // Readings that stop at midnight are not what these are about.
+  await choose('sensor-silent', false)
 })
 
 /** A reading an hour over days before `start`, each day with its own air. */
@@ -176,9 +178,12 @@ describe('a rule’s row', () => {
     expect(await choose('too-dry', false)).toBe(2)
     expect(await choose('too-dry', true, { rh: 30 })).toBeUndefined()
     expect(await choose('too-dry', true, { rh: 30 }, 2)).toBe(3)
-    expect(await listRuleRecords(database.db, site.siteId)).toEqual([
-      { rule: 'too-dry', isOn: true, settings: { rh: 30 }, version: 3 },
-    ])
+    expect(await listRuleRecords(database.db, site.siteId)).toContainEqual({
+      rule: 'too-dry',
+      isOn: true,
+      settings: { rh: 30 },
+      version: 3,
+    })
     expect(await listRuleChanges(database.db, site.siteId)).toEqual([])
   })
 })
