@@ -29,6 +29,7 @@ export interface HourFigures {
 }
 
 const HOUR_MS = 3_600_000
+const DAY_MS = 24 * HOUR_MS
 /** As many hours as a check loads, and some for a piece that is out for long. */
 const KEPT_HOURS = 8 * 24
 const YEAR_DAYS = 365
@@ -51,11 +52,15 @@ export function roomRecord(kind: RoomKind): RoomRecord {
       emcPctMax: Math.max(before.emcPctMax, emc),
     }
   }
-  const addToDay = (at: number, c: number, pct: number, emc: number): void => {
-    const dayOn = new Date(at).toISOString().slice(0, 10)
+  const addToDay = (hourAt: number, c: number, pct: number, emc: number): void => {
+    const at = Math.floor(hourAt / DAY_MS) * DAY_MS
     const before = days.at(-1)
-    if (before?.dayOn !== dayOn) days.push({ dayOn, n: 1, temperatureC: c, humidityPct: pct, emcPct: emc })
-    else days[days.length - 1] = { dayOn, ...withReading(before, c, pct, emc) }
+    if (before?.at === at) {
+      days[days.length - 1] = { ...before, ...withReading(before, c, pct, emc) }
+      return
+    }
+    const dayOn = new Date(at).toISOString().slice(0, 10)
+    days.push({ dayOn, at, endsAt: at + DAY_MS, n: 1, temperatureC: c, humidityPct: pct, emcPct: emc })
   }
   return {
     take(atMs, reading) {
