@@ -295,3 +295,16 @@ export async function insertDemoArrivals(
     })
     .execute()
 }
+
+/** Sets the hours of the demo's day; what is left out stays. */
+export async function updateDemoHours(
+  db: Kysely<Database>,
+  siteId: number,
+  hours: { lockUpAt?: string; quietFrom?: string; quietTo?: string },
+): Promise<void> {
+  await db
+    .updateTable('site')
+    .set({ lock_up_at: hours.lockUpAt, quiet_from: hours.quietFrom, quiet_to: hours.quietTo })
+    .where('id', '=', siteId)
+    .execute()
+}

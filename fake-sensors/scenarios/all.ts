@@ -8,7 +8,6 @@ import type { Scenario } from './scenario'
 const own: Partial<Record<ScenarioName, Scenario>> = {
   'normal-day': normalDay,
   'damp-front': dampFront,
-  'verdict-worse': { ...dampFront, name: 'verdict-worse' },
   'drop-out-catch-up': dropOutCatchUp,
 }
 

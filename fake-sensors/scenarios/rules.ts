@@ -44,6 +44,16 @@ const courses: Readonly<Record<string, Course>> = {
   'cold-iron': becomes(['shop'], -14, { humidityPct: 96 }),
   'shop-unfit': becomes(['shop'], -2 * day, { humidityPct: 92 }),
   'good-hours': shifted(['shop'], 60, -45),
+  'verdict-worse': {
+    // Somebody leaves the door open in the rain.
+    airOf: (room, hours, air) =>
+      room === 'shop' && hours > 0.05
+        ? {
+            ...air,
+            humidityPct: air.humidityPct + (97 - air.humidityPct) * Math.min(1, (hours - 0.05) / 0.15),
+          }
+        : air,
+  },
   'battery-low': { batteryOf: (model) => (model === 'shop-bench' ? 12 : undefined) },
   'refused-messages': {
     spoiled: (model, hours) =>

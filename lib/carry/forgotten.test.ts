@@ -16,7 +16,7 @@ function forgotten(hoursOut: number, over: Parameters<typeof carry>[1] = {}) {
   const home: AirFrom[] = [{ at: outAt, emcPct: 8.5, temperatureC: 20, cover: 'closed', isKnown: true }]
   return forgottenFigures(input, out, home)
 }
-const ms = (at: string | null | undefined): number => (Date.parse(at ?? 'never'))
+const ms = (at: string | null | undefined): number => Date.parse(at ?? 'never')
 
 describe('a box that was forgotten', () => {
   it('is the worse and the longer to wait for, the longer it was out', () => {

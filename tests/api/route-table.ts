@@ -1,38 +1,5 @@
-import type { Kysely } from 'kysely'
-import type { Database } from '@/db/schema'
-import type { Action } from '@/lib/sites/permissions'
-import type { Things, WorldSite } from '../support/api-world'
-import type { Reply } from '../support/session'
-
-/**
- * One row for each method of each address. `walk.test.ts` finds the addresses by the route files, asks each of them as
- * nobody, as each role and as a member of another site, and fails for a route that has no row here.
- *
- * The bracketed parts of an address are filled in by their names from `Things`: `[room]` is a room of the site.
- * `body` and `query` must be such that a member who may do it gets `status` on a fresh site. They take every id from
- * `things`, so that the walk can put ids of another site in their place.
- */
-export interface Row {
-  /** `anyone`: no session needed. `signed-in`: any session, no site. */
-  action: Action | 'anyone' | 'signed-in'
-  body?: (things: Things, site: WorldSite) => Record<string, unknown>
-  query?: (things: Things) => Record<string, string>
-  /** Sends version 1 as If-Match. */
-  ifMatch?: true
-  /** What a member who may do it gets; 200 unless it says otherwise. */
-  status?: number
-  /** Other servers press it too, from anywhere and with any body: what it may do stands in its address alone. */
-  isPressedByServers?: true
-  /** What has to be there beside the things of every fresh site. */
-  prepare?: (arranging: Arranging) => Promise<unknown>
-}
-
-export interface Arranging {
-  db: Kysely<Database>
-  site: WorldSite
-  /** Sends a request to an address below the site as its owner, and fails unless it is done. */
-  asOwner: (method: string, path: string, body?: unknown) => Promise<Reply>
-}
+import type { Arranging, Row } from './route-row'
+import { benchRows } from './bench-rows'
 
 /** One moment for the whole walk: two bodies of the same things must be the same to the letter. */
 const tomorrow = new Date(Date.now() + 86_400_000).toISOString()
@@ -426,50 +393,5 @@ export const routeTable: Record<string, Row> = {
   'POST /api/v1/sites/[site]/notices/seen': { action: 'notices:acknowledge', status: 204 },
   'GET /api/v1/sites/[site]/live': { action: 'site:see' },
 
-  'GET /api/v1/bench/air': bench({ temperatureC: '20', humidityPct: '50' }),
-  'GET /api/v1/bench/diffusion': bench({ temperatureC: '20', mcPct: '9', densityKgM3: '680' }),
-  'GET /api/v1/bench/emc': bench({ temperatureC: '20', humidityPct: '50' }),
-  'GET /api/v1/bench/fit': bench({
-    diameterMm: '60',
-    clearanceMm: '0.1',
-    angleDeg: '90',
-    mcChangePct: '2',
-    species: 'fraxinus-excelsior',
-  }),
-  'GET /api/v1/bench/follow': bench({ shape: 'slab', biot: 'inf', fourier: '0.2' }),
-  'GET /api/v1/bench/humidity': bench({ temperatureC: '20', emcPct: '9' }),
-  'GET /api/v1/bench/joint': bench({
-    densityKgM3: '680',
-    temperatureC: '15',
-    mcPct: '9',
-    wallMm: '2.5',
-    faces: '2',
-    spigotMm: '6',
-    lidMm: '8',
-    hours: '2',
-  }),
-  'GET /api/v1/bench/salts': bench({ temperatureC: '20' }),
-  'GET /api/v1/bench/shop': bench({
-    volumeM3: '40',
-    temperatureC: '8',
-    humidityPct: '85',
-    targetEmcPct: '9',
-  }),
-  'GET /api/v1/bench/time-out': bench({
-    species: 'fraxinus-excelsior',
-    diameterMm: '60',
-    wallMm: '2.5',
-    spigotMm: '6',
-    cover: 'open',
-    allowanceMm: '0.08',
-    fromMcPct: '8',
-    toEmcPct: '16',
-    temperatureC: '12',
-  }),
-  'GET /api/v1/bench/weighing': bench({ grams: '182.0,167.9,160.0', everyDays: '7' }),
-  'GET /api/v1/bench/warming': bench({ fromC: '5', fromHumidityPct: '85', toC: '15' }),
-}
-
-function bench(query: Record<string, string>): Row {
-  return { action: 'anyone', query: () => query }
+  ...benchRows,
 }

@@ -11,7 +11,8 @@ import {
   type Person,
   type Reply,
 } from '../support/session'
-import { routeTable, type Row } from './route-table'
+import type { Row } from './route-row'
+import { routeTable } from './route-table'
 
 const routes = await findRoutes()
 const rows = routes.flatMap((route) => {

@@ -30,7 +30,10 @@ export default defineConfig({
         test: {
           ...shared,
           name: 'unit',
-          include: ['{lib,app,db,workers,fake-sensors}/**/*.test.{ts,tsx}', 'tests/{support,measure}/**/*.test.ts'],
+          include: [
+            '{lib,app,db,workers,fake-sensors}/**/*.test.{ts,tsx}',
+            'tests/{support,measure}/**/*.test.ts',
+          ],
           // Properties draw hundreds of cases; a test that hangs is told all the same.
           testTimeout: 60_000,
           maxWorkers: 2,

@@ -13,6 +13,7 @@ import { makeWeighings } from './make-weighings'
 import { makePlace, type MadePlace, type MadeSensor } from './make-place'
 import { historyDays, placeSeed, placeSensors, placeTimeZone, type PlaceSensor } from './place'
 import { settleJoints } from './settle-joints'
+import { setStage } from './stage'
 
 export interface DemoOptions {
   now: Date
@@ -52,13 +53,14 @@ export async function makeDemo(
     const made = await makePieces(trx, place, now)
     const site = { siteId: place.siteId, timeZone: placeTimeZone }
     await followPieces(trx, site, null, now)
-    const unsettled = await settleJoints(trx, place, made, now)
+    const unsettled = await settleJoints(trx, place, made, now, scenario)
     if (unsettled.length > 0) say(`In this season no joint tells the whole story of ${unsettled.join(', ')}.`)
     await makeWeighings(trx, place, made, now)
     // Settling changed the joints of some: and weights tell more of others: their wood is followed anew.
     await followPieces(trx, site, null, now)
     await makeNotices(trx, place, made, now)
     await makeArrivals(trx, place, now)
+    if (scenario !== undefined) await setStage(trx, place, scenario, now)
     await keepRoster(rosterOf(place, now))
     await markDemoComplete(trx, place.siteId, place.siteCode, now)
   })

@@ -44,6 +44,7 @@ function view(more: Partial<NowView['rule']>, carries: Partial<NowView> = {}): N
     planned: [],
     rule: { rooms: [], brackets: [], shelf: [], ...more },
     strip: null,
+    isLockUp: false,
     justBack: [],
     needs: [],
     silent: [],
