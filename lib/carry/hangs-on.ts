@@ -65,6 +65,7 @@ function cutShort(question: UsedQuestion, hours: number): UsedQuestion {
       middle: first(run.middle),
       fast: first(run.fast),
       perPoint: first(run.perPoint),
+      leak: run.leak === null ? null : { tight: first(run.leak.tight), leaky: first(run.leak.leaky) },
     },
   }
 }

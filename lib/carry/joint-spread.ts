@@ -17,7 +17,7 @@ export function allowanceLogSpread({ basis, lowMm, highMm }: Allowance): number 
 
 /** What is known of a piece's moisture, ± % MC, 8 in 10. */
 export type MoistureDoubt = {
-  /** Of the moisture content at the cut. */
+  /** Of the moisture content at the cut, against what was followed since. */
   readonly cutPct: number
   /** Of the wood as followed so far, for what it did not hear of. */
   readonly startPct: number

@@ -1,7 +1,7 @@
 import { assertFinite, assertInRange } from '@/lib/assert'
 import { ASSUMED_SPIGOT_FACTOR, ASSUMED_WALL_FACTOR } from '@/lib/doubt/causes'
 import { logSpreadNineInTen, together } from '@/lib/doubt/spread'
-import { startDoubtPct } from '@/lib/follow/doubt'
+import { sinceCutDoubtPct, startDoubtPct } from '@/lib/follow/doubt'
 import type { AirFrom } from '@/lib/follow/wood-state'
 import type { AirThere, CarryCheckInput, PieceFacts } from './carry-check'
 import type { ResolvedJoint } from './joint-defaults'
@@ -94,7 +94,7 @@ export function reckoned(
       : { ring: input.cut.ringMcPct, lid: input.cut.lidMcPct }
   const doubt = {
     // A joint that counts from what it is now has lost nothing yet, whatever that is.
-    cutPct: input.cut?.doubtPct ?? 0,
+    cutPct: sinceCutDoubtPct(input.cut?.doubtPct ?? 0),
     startPct: input.cut === null ? 0 : startDoubtPct(start),
     airPct: input.airDoubtPct,
   }

@@ -1,7 +1,10 @@
+import { COVER_LEAK_FACTOR } from '@/lib/doubt/causes'
+import { logSpreadNineInTen } from '@/lib/doubt/spread'
 import {
   type AirFrom,
   type AirStep,
   copyState,
+  isEnclosed,
   type PieceFilter,
   stepWood,
   type WoodState,
@@ -23,6 +26,8 @@ export type StayRun = {
   readonly fast: MoistureRun
   /** The middle, had the air been one point damper throughout, less the middle. */
   readonly perPoint: MoistureRun
+  /** The middle in a cover that leaks less and more, less the middle; null where nothing closes the piece in. */
+  readonly leak: { readonly tight: MoistureRun; readonly leaky: MoistureRun } | null
 }
 
 const MS_PER_HOUR = 3_600_000
@@ -95,6 +100,7 @@ function run(
   steps: readonly (readonly AirStep[])[],
   diffusionFactor: number,
   damperPct: number,
+  leakFactor = 1,
 ): MoistureRun {
   const state = copyState(start)
   const ring = new Float64Array(steps.length + 1)
@@ -108,6 +114,7 @@ function run(
         state,
         damperPct === 0 ? part : { ...part, emcPct: part.emcPct + damperPct },
         diffusionFactor,
+        leakFactor,
       )
     }
     ring[n + 1] = state.ringPct
@@ -116,8 +123,15 @@ function run(
   return { ring, lid }
 }
 
+/** As far out as the pace's, so that the same parabola goes through them. */
+const LEAK_NODE = Math.exp(PACE_NODE * logSpreadNineInTen(COVER_LEAK_FACTOR))
+
 const less = (one: Float64Array, other: Float64Array): Float64Array =>
   one.map((value, n) => value - (other[n] ?? 0))
+const runLess = (one: MoistureRun, other: MoistureRun): MoistureRun => ({
+  ring: less(one.ring, other.ring),
+  lid: less(one.lid, other.lid),
+})
 
 /**
  * A piece's wood through a stay, for wood of a middling pace and for quicker and slower.
@@ -138,11 +152,16 @@ export function stayRun(
   const node = Math.exp(PACE_NODE * pace.logSpread)
   const middle = run(filter, start, steps, pace.factor, 0)
   const damper = run(filter, start, steps, pace.factor, 1)
+  const leaking = (factor: number): MoistureRun =>
+    runLess(run(filter, start, steps, pace.factor, 0, factor), middle)
   return {
     hours,
     middle,
     slow: run(filter, start, steps, pace.factor / node, 0),
     fast: run(filter, start, steps, pace.factor * node, 0),
-    perPoint: { ring: less(damper.ring, middle.ring), lid: less(damper.lid, middle.lid) },
+    perPoint: runLess(damper, middle),
+    leak: airs.some(({ cover }) => isEnclosed(cover))
+      ? { tight: leaking(1 / LEAK_NODE), leaky: leaking(LEAK_NODE) }
+      : null,
   }
 }

@@ -2,6 +2,7 @@ import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { evenState } from '@/lib/follow/wood-state'
 import { PACE_LOG_SPREAD } from '@/lib/doubt/causes'
+import type { PlaceCover } from '@/lib/pieces/piece'
 import { type JointFacts, jointOfPiece, UNTOLD_JOINT } from './joint-defaults'
 import { spreadsOfJoint } from './joint-spread'
 import { stayRun } from './stay-run'
@@ -10,11 +11,12 @@ import { firstReachedHours, usedInTheMiddle, type UsedQuestion, usedSpread } fro
 /** House at 8.5 % MC to a shop at 13.6 and 8 °C, unless told otherwise. */
 function question(
   facts: Partial<JointFacts>,
-  over: { airPct?: number; cutPct?: number; toEmcPct?: number } = {},
+  over: { airPct?: number; cutPct?: number; toEmcPct?: number; cover?: PlaceCover } = {},
 ) {
   const joint = jointOfPiece({ ...UNTOLD_JOINT, ...facts })
   if (joint === undefined) throw new Error('it has a joint')
-  const air = { at: 0, emcPct: over.toEmcPct ?? 13.6, temperatureC: 8, cover: 'open', isKnown: true } as const
+  const cover = over.cover ?? 'open'
+  const air = { at: 0, emcPct: over.toEmcPct ?? 13.6, temperatureC: 8, cover, isKnown: true }
   const pace = { factor: 1, logSpread: PACE_LOG_SPREAD }
   const run = stayRun(joint.filter, evenState(joint.filter, 8.5, 'open', 0), [air], 0, 30 * 24, pace)
   return {
@@ -174,6 +176,14 @@ describe('doubt, properties', () => {
     expect(early(question({ ...ash, fitGrade: 'easy' }))).toBeLessThan(early(question(known)))
     const wide = { ...question(known), spreads: { ...question(known).spreads, movementLog: 0.3 } }
     expect(early(wide)).toBeLessThan(early(question(known)))
+  })
+
+  it('nobody knows how fast a bag leaks: its early edge is sooner, its late one later than of a known one', () => {
+    const bagged = question({ ...ash, allowanceMm: 0.1 }, { cover: 'bagged' })
+    const known = { ...bagged, run: { ...bagged.run, leak: null } }
+    expect(edges(bagged).early ?? NaN).toBeLessThan(0.95 * (edges(known).early ?? NaN))
+    expect(usedSpread(bagged).at(240).low).toBeLessThan(usedSpread(known).at(240).low)
+    expect(question(ash).run.leak).toBeNull()
   })
 
   it('is the same each time it is asked, and by less than half changed by any other draws', () => {

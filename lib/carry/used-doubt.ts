@@ -31,6 +31,9 @@ export function usedInTheMiddle({ run, loss, allowanceMm, cut }: UsedQuestion): 
   )
 }
 
+const NONE = new Float64Array()
+const NO_LEAK = { tight: { ring: NONE, lid: NONE }, leaky: { ring: NONE, lid: NONE } }
+
 /**
  * Allowance used at each of the run's moments, row by row, in as many ways as there are draws in which everything could
  * be, each of equal chance.
@@ -40,6 +43,7 @@ function usedInAllWays(question: UsedQuestion, draws: Draws): Float64Array {
   const moments = run.hours.length
   const table = new Float64Array(DRAWS * moments)
   const sign = loss.isRingInside ? 1 : -1
+  const { tight: tightRun, leaky: leakyRun } = run.leak ?? NO_LEAK
   for (let way = 0; way < DRAWS; way += 1) {
     // The three runs lie at -√3, 0 and √3 deviations: a parabola through them, held at its ends.
     const node = Math.min(1, Math.max(-1, (paceShare * (draws.diffusion[way] ?? 0)) / PACE_NODE))
@@ -54,6 +58,9 @@ function usedInAllWays(question: UsedQuestion, draws: Draws): Float64Array {
       ) / allowanceMm
     const swell = sign * loss.swellMmPerPct * perMm
     const skew = loss.skewMmPerPct * perMm
+    const leak = run.leak === null ? 0 : Math.min(1, Math.max(-1, (draws.leak[way] ?? 0) / PACE_NODE))
+    const tight = (leak * (leak - 1)) / 2
+    const leaky = (leak * (leak + 1)) / 2
     const ringZero = start - cut.ring
     const lidZero = start - cut.lid
     for (let n = 0; n < moments; n += 1) {
@@ -62,12 +69,16 @@ function usedInAllWays(question: UsedQuestion, draws: Draws): Float64Array {
         middle * (run.middle.ring[n] ?? 0) +
         fast * (run.fast.ring[n] ?? 0) +
         damper * (run.perPoint.ring[n] ?? 0) +
+        tight * (tightRun.ring[n] ?? 0) +
+        leaky * (leakyRun.ring[n] ?? 0) +
         ringZero
       const lid =
         slow * (run.slow.lid[n] ?? 0) +
         middle * (run.middle.lid[n] ?? 0) +
         fast * (run.fast.lid[n] ?? 0) +
         damper * (run.perPoint.lid[n] ?? 0) +
+        tight * (tightRun.lid[n] ?? 0) +
+        leaky * (leakyRun.lid[n] ?? 0) +
         lidZero
       // `lossMm`, written out: this line is met a hundred thousand times for a shelf of boxes.
       table[way * moments + n] = swell * (ring - lid) + skew * (Math.abs(ring) + Math.abs(lid))

@@ -33,5 +33,10 @@ export const PACE_LOG_SPREAD = together(
  * with the wall to the power of about 1.5. Status: guess.
  */
 export const ASSUMED_WALL_FACTOR = 1.6
+/**
+ * How fast a bag or a tub leaks: its film, its seal and how often it is opened all differ. Status: guess, as are the figures
+ * in `lib/follow/cover-leak.ts` that it goes with.
+ */
+export const COVER_LEAK_FACTOR = 3
 /** A spigot that nobody measured: the rim is a smaller way in than the wall. Status: guess. */
 export const ASSUMED_SPIGOT_FACTOR = 1.2

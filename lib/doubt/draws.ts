@@ -10,7 +10,7 @@ export const DRAWS = 128
 export const DOUBT_SEED = 20261201
 
 /** The things that a stated time hangs on, each drawn by itself. */
-export const CAUSES = ['diffusion', 'movement', 'allowance', 'airThere', 'start'] as const
+export const CAUSES = ['diffusion', 'movement', 'allowance', 'airThere', 'start', 'leak'] as const
 export type Cause = (typeof CAUSES)[number]
 export type Draws = Readonly<Record<Cause, Float64Array>>
 
@@ -96,6 +96,7 @@ export function drawsOf(seed: number = DOUBT_SEED): Draws {
     allowance: column(),
     airThere: column(),
     start: column(),
+    leak: column(),
   }
   made.set(seed, draws)
   return draws

@@ -96,7 +96,8 @@ function meanPct(weights: Float64Array, rungs: Float64Array): number {
   return mean
 }
 
-const isEnclosed = (cover: PlaceCover): boolean => cover === 'bagged' || cover === 'tub'
+/** Whether a cover is a small room of its own. */
+export const isEnclosed = (cover: PlaceCover): boolean => cover === 'bagged' || cover === 'tub'
 
 /** Rungs further out than wood can be are a sign that too many shifts have piled up. */
 const RUNG_MIN_PCT = -4
@@ -153,16 +154,23 @@ function stepRungs(rungs: Float64Array, weights: Float64Array, emcPct: number, s
  * @param filter by `pieceFilter`
  * @param state changed; EMC of the step in % MC (0 to 30), temperature in °C (clamped to -10 to 50), hours above 0
  * @param diffusionFactor on the diffusion of the formula: the site's own, or a doubt's; 1 in the middle
+ * @param leakFactor on what a bag or a tub lets through: a doubt's; 1 in the middle
  *
  * In a bag or a tub the wood meets its own moisture, which drifts towards the room's as the cover leaks.
  * Source: derived from Crank, The Mathematics of Diffusion (1975), ch. 4.
  */
-export function stepWood(filter: PieceFilter, state: WoodState, step: AirStep, diffusionFactor = 1): void {
+export function stepWood(
+  filter: PieceFilter,
+  state: WoodState,
+  step: AirStep,
+  diffusionFactor = 1,
+  leakFactor = 1,
+): void {
   changeCover(filter, state, step.cover)
   const temperatureC = usable(step.temperatureC)
   let emcPct = step.emcPct
   if (state.enclosedPct !== null) {
-    const perH = coverDriftPerH(state.cover === 'tub' ? USUAL_TUB : USUAL_BAG, temperatureC)
+    const perH = leakFactor * coverDriftPerH(state.cover === 'tub' ? USUAL_TUB : USUAL_BAG, temperatureC)
     state.enclosedPct += (emcPct - state.enclosedPct) * -Math.expm1(-perH * step.hours)
     emcPct = state.enclosedPct
   }
