@@ -152,6 +152,13 @@ describe('lock-up', () => {
     expect(look(new Ledger(), '18:00', { ...yard({}), rules: daily })).toEqual(['lock-up: maker, house'])
   })
 
+  it('leaves it at that where carries were logged today and all of them are back', () => {
+    const logged = yard({ evening: { shopUse: 'carried', isAnswered: false } })
+    expect(look(new Ledger(), '18:00', logged)).toEqual([])
+    const daily = new Map([['lock-up', { isOn: true, settings: { whenNothing: 'daily' } }]])
+    expect(look(new Ledger(), '18:00', { ...logged, rules: daily })).toEqual(['lock-up: maker, house'])
+  })
+
   it('asks again in the morning whoever said so, if it is still out', () => {
     const ledger = new Ledger()
     look(ledger, '18:00', still)

@@ -103,6 +103,18 @@ describe('a planned carry', () => {
     ])
   })
 
+  it('is not told of once more when it is short, was told of in the evening and ends in time', () => {
+    const times = ['04T19:00', '05T13:00', '05T13:01']
+    const told = (stayMinutes: number) => {
+      const short = plan(verdict('keep-short', plannedAt + 90 * minute), { stayMinutes })
+      return run(
+        times.map((time) => ({ now: at(`2026-03-${time}:00Z`), inputs: inputs({ carries: [short] }) })),
+      )
+    }
+    expect(told(90)).toEqual([['planned-carry'], [], []])
+    expect(told(91)).toEqual([['planned-carry'], ['planned-carry'], []])
+  })
+
   it('takes 19:00 by the clocks of the site', () => {
     const summer = plan(verdict('leave', null), { plannedAt: at('2026-07-05T13:00:00Z') })
     const steps = ['04T17:59', '04T18:00'].map((time) => ({

@@ -25,7 +25,7 @@ export const OPENED_BY_PCT = 1.2
 
 /**
  * Whether somebody worked in the shop today, as far as its record tells: then something may stand out there that
- * nobody logged, and the evening question is asked with nothing out.
+ * nobody logged. Warmed or opened with no carry logged, the evening question is asked with nothing out.
  * @param shops the hours of one day, a list for each shop, oldest first; hours without a reading are left out
  * @param carriesToday how many carries went out to a shop or came back from one that day
  *

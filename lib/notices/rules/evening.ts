@@ -90,12 +90,16 @@ function askedLater(
   return { episodes: [episode], notices: [notice] }
 }
 
-/** With nothing logged out: asked on days when the shop was used, until somebody says "nothing". */
+/**
+ * With nothing logged out: asked on days when the shop was used and nothing was logged that accounts for it, until
+ * somebody says "nothing". Where carries were logged and all are back, the log has answered already.
+ */
 function anythingOut(now: number, state: NoticeState, inputs: NoticeInputs, hours: EveningHours): RulePart {
   const { isOn, values } = choiceOf(inputs.rules, 'lock-up')
   const facts = inputs.surroundings?.evening
   if (!isOn || facts === undefined || facts.isAnswered || values.whenNothing === 'never') return nothing
-  if (facts.shopUse === null && values.whenNothing !== 'daily') return nothing
+  const isAccountedFor = facts.shopUse === null || facts.shopUse === 'carried'
+  if (isAccountedFor && values.whenNothing !== 'daily') return nothing
   const episode: Episode = {
     rule: 'lock-up',
     subject: 'site',

@@ -18,7 +18,8 @@ import { plannedBody, plannedTitle, severityOf } from '../wording'
 
 /**
  * A planned carry that should not be made as planned: told the evening before and an hour before, each once, and
- * again when its verdict has worsened since it was told.
+ * again when its verdict has worsened since it was told. A short one that was told of in the evening, and is planned to
+ * be back by its early edge, is not told of once more.
  */
 export function plannedCarry(
   now: number,
@@ -43,8 +44,11 @@ export function plannedCarry(
   )
   const moment =
     now >= carry.plannedAt - values.beforeMin * 60_000 ? 'hour' : now >= eveningBefore ? 'evening' : null
-  const key = `planned-carry/${carry.code}/${occasion}/${moment ?? ''}`
-  const momentIsNew = moment !== null && !state.told.has(key)
+  const keyOf = (of: 'hour' | 'evening' | null) => `planned-carry/${carry.code}/${occasion}/${of ?? ''}`
+  const key = keyOf(moment)
+  const isHeeded =
+    moment === 'hour' && state.told.has(keyOf('evening')) && hold.held === 'keep-short' && endsInTime(carry)
+  const momentIsNew = moment !== null && !state.told.has(key) && !isHeeded
   const isBad = severities[hold.held] > 0
   const isWorse = moment !== null && severities[hold.held] > severities[hold.told]
   const tells = isBad && (momentIsNew || isWorse)
@@ -77,6 +81,15 @@ export function plannedCarry(
   }
   return { episodes: [episode], notices: [notice] }
 }
+
+/** Whether every piece is planned to be back by its early edge. */
+const endsInTime = ({ pieces, plannedAt, stayMinutes }: NoticeCarry): boolean =>
+  pieces.every(
+    ({ check }) =>
+      check?.kind !== 'verdict' ||
+      check.earlyAt === null ||
+      new Date(check.earlyAt).getTime() >= plannedAt + stayMinutes * 60_000,
+  )
 
 function worstOf(carry: NoticeCarry): Severity {
   return carry.pieces
