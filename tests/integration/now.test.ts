@@ -68,7 +68,7 @@ describe('Now', () => {
     expect(after.out).toEqual([])
     expect(after.justBack).toEqual([
       {
-        ...{ carryId: out.id, pieceId: box.code, number: '601', hasLid: true },
+        ...{ carryId: out.id, pieceId: box.code, number: '601', hasLid: true, isAskSkipped: false },
         ...{ roomName: 'Landing cupboard', at: minutesAfter(20).toISOString() },
       },
     ])
