@@ -11,7 +11,8 @@ describe('what stands behind npm start --', () => {
 
   it('names what there is when something else is asked', () => {
     expect(() => startOptions(['--scenario', 'flood'])).toThrow(/no scenario "flood".*lock-up/s)
-    expect(() => startOptions(['--scenario'])).toThrow(/--scenario NAME/)
-    expect(() => startOptions(['--fast'])).toThrow(/--reset-demo and --scenario NAME/)
+    expect(() => startOptions(['--scenario'])).toThrow('--scenario needs a name.')
+    expect(() => startOptions(['--fast'])).toThrow('"--fast" is not an option. There are two')
+    expect(() => startOptions(['lock-up'])).toThrow('"lock-up" is not an option.')
   })
 })

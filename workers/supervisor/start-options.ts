@@ -27,7 +27,12 @@ function parsed(args: readonly string[]) {
       options: { 'reset-demo': { type: 'boolean' }, scenario: { type: 'string' } },
     }).values
   } catch (error) {
-    const why = error instanceof Error ? error.message.split('\n')[0] : ''
-    throw new Error(`${why ?? ''} There are two options: --reset-demo and --scenario NAME.`)
+    const why = error instanceof Error ? error.message : ''
+    const unknown = /^Unknown option '(.+?)'|^Unexpected argument '(.+?)'/.exec(why)
+    const what =
+      unknown === null
+        ? '--scenario needs a name.'
+        : `"${unknown[1] ?? unknown[2] ?? ''}" is not an option. There are two: --reset-demo and --scenario NAME.`
+    throw new Error(what)
   }
 }
