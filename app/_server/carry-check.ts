@@ -5,7 +5,9 @@ import type { SiteMember } from '@/db/queries/members'
 import { findPieces, type PieceRecord } from '@/db/queries/pieces'
 import { findRoom, listHangingSensors, type RoomRecord } from '@/db/queries/rooms'
 import type { Database } from '@/db/schema'
-import { betterWays } from '@/lib/carry/better-ways'
+import { bestHoursWords } from '@/lib/carry/best-hours-words'
+import type { BetterHoursAsked } from '@/lib/carry/better-hours'
+import { type BetterWays, betterWays } from '@/lib/carry/better-ways'
 import type { CarryCheckAnswer, CarryCheckRequest, CheckedPiece } from '@/lib/carry/carry-answer'
 import { carryCautions } from '@/lib/carry/cautions'
 import { NO_FORECAST_NOTE } from '@/lib/carry/forecast'
@@ -14,6 +16,8 @@ import type { CarryMaterial } from '@/lib/carry/material'
 import { sessionOf } from '@/lib/carry/session'
 import { byPress, checkHeadline, worstOf } from '@/lib/carry/summary'
 import { moistureOfToldAir, type ToldAir } from '@/lib/carry/told-air'
+import { usualHours } from '@/lib/carry/usual-hours'
+import { hourStrip } from '@/lib/forecast/hour-strip'
 import { pieceTitle } from '@/lib/pieces/title'
 import { ok } from '@/lib/result'
 import { settledTo } from '@/lib/rooms/air'
@@ -79,7 +83,7 @@ export async function checkCarry(
   const better =
     'room' in to
       ? betterWays(material, { ...asked, pieceIds, toRoomId: to.room.id }, codeOf)
-      : { betterHour: null, keeps: null }
+      : { hours: [], betterHour: null, keeps: null }
   return ok({
     at: now.toISOString(),
     startsAt: startsAt.toISOString(),
@@ -103,9 +107,34 @@ export async function checkCarry(
             number: judged.find((piece) => piece.id === better.keeps?.id)?.number ?? '',
             hours: better.keeps.hours,
           },
+    ...('room' in to
+      ? comingHours(member, material, { ...asked, pieceIds, toRoomId: to.room.id }, better)
+      : { strip: null, bestHours: [] }),
     cautions: [...carryCautions],
     ...place,
   })
+}
+
+/** The hours of the room as a strip, and the best of the week in words: all by the least forgiving piece. */
+function comingHours(
+  { timeZone }: SiteMember,
+  material: CarryMaterial,
+  asked: BetterHoursAsked,
+  { hours }: BetterWays,
+): Pick<CarryCheckAnswer, 'strip' | 'bestHours'> {
+  const { pieceIds, toRoomId, stayMinutes, cover } = asked
+  const keepRoomId = pieceIds.flatMap((id) => material.pieces.get(id)?.keepRoomId ?? [])[0] ?? null
+  const { now } = material
+  return {
+    strip: hourStrip(material, {
+      roomId: toRoomId,
+      pieceIds,
+      keepRoomId,
+      timeZone,
+      stay: { stayMinutes, cover },
+    }),
+    bestHours: bestHoursWords(hours, usualHours(material, { ...asked, timeZone }), { timeZone, now }),
+  }
 }
 
 /** Of a piece that is private to another: its number and its time out. */

@@ -136,13 +136,15 @@ export function judgedHour(
   }
 }
 
-/** Of the pieces chosen, the one that would have used most of its allowance by the end; undefined where none has a verdict. */
+/** Of the pieces chosen, the one with the worst verdict that would have used most by the end; undefined where none has one. */
 export function leastForgiving(
   material: CarryMaterial,
   asked: BetterHoursAsked,
   startsAt: number,
 ): { pieceId: number; of: number } | undefined {
   const judged = judgedHour(material, asked, startsAt, null)
-  const [least] = (judged?.verdicts ?? []).toSorted((one, other) => other.usedAtEnd - one.usedAtEnd)
+  const [least] = (judged?.verdicts ?? []).toSorted(
+    (one, other) => RANK[other.verdict] - RANK[one.verdict] || other.usedAtEnd - one.usedAtEnd,
+  )
   return least && { pieceId: least.pieceId, of: judged?.verdicts.length ?? 1 }
 }

@@ -1,4 +1,5 @@
 import { z } from 'zod'
+import { hourStripSchema } from '@/lib/forecast/strip-view'
 import { coverSchema } from '@/lib/pieces/piece'
 import { pieceCheckSchema, verdictSchema } from './carry-check'
 import { toldAirSchema } from './told-air'
@@ -130,6 +131,10 @@ export const carryCheckAnswerSchema = z.object({
   betterHour: betterHourSchema.nullable(),
   /** Of the least forgiving piece; null without a forecast, or where nothing is short. */
   keepsByHour: z.object({ number: z.string(), hours: z.array(keepsHourSchema) }).nullable(),
+  /** The coming hours of the room, by the least forgiving piece, for the stay and cover asked about; null: air as told. */
+  strip: hourStripSchema.nullable(),
+  /** The best hours of the week, a sentence each: by the forecast, then what is usual. */
+  bestHours: z.array(z.string()),
   /** What the coming hours are taken from. */
   forecastNote: z.string(),
   cautions: z.array(z.string()),

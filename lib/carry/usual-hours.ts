@@ -96,7 +96,7 @@ export function usualHours(
   if (least === undefined) return []
   const usualAt = usualAirOf(room.hours, asked.timeZone)
   const airs = Array.from({ length: HOURS_AHEAD + FORECAST_HOURS }, (_, n) => usualAt(first + n * HOUR_MS))
-  const byDay = new Map<string, BetterHour>()
+  const byDay = new Map<string, { judged: BetterHour; usual: CarryMaterial }>()
   for (let n = 0; n < HOURS_AHEAD; n += 1) {
     const at = first + n * HOUR_MS
     const local = new TZDate(at, asked.timeZone)
@@ -109,10 +109,11 @@ export function usualHours(
     const judged = judgedHour(usual, { ...asked, pieceIds: [least.pieceId] }, at, null)
     const day = local.toDateString()
     const best = byDay.get(day)
-    if (judged !== undefined && (best === undefined || byLeastHarm(judged, best) < 0)) {
-      // The others can only be better off; their verdicts are told with it.
-      byDay.set(day, judgedHour(usual, asked, at, null) ?? judged)
-    }
+    if (judged !== undefined && (best === undefined || byLeastHarm(judged, best.judged) < 0))
+      byDay.set(day, { judged, usual })
   }
-  return [...byDay.values()].toSorted(byLeastHarm)
+  // The others can only be better off; their verdicts are told with it.
+  return [...byDay.values()]
+    .map(({ judged, usual }) => judgedHour(usual, asked, Date.parse(judged.startsAt), null) ?? judged)
+    .toSorted(byLeastHarm)
 }

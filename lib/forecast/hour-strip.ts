@@ -3,13 +3,15 @@ import type { Verdict } from '@/lib/carry/carry-check'
 import { airOfHour, type CarryMaterial } from '@/lib/carry/material'
 import { HOUR_MS } from '@/lib/follow/record'
 import { formatCount } from '@/lib/format/figures'
+import { formatDuration } from '@/lib/format/times'
+import { type Cover, coverWords } from '@/lib/pieces/piece'
 import { FORECAST_HOURS, litForecast } from './room-forecast'
 import type { HourState, HourStrip, StripCell } from './strip-view'
 import { stripWords } from './strip-words'
 import { TYPICAL_BOX_ID, TYPICAL_BOX_WORDS, typicalBox } from './typical-box'
 
-/** What an hour is judged by: so long a stay from then on, open in work. Status: common practice, no source. */
-const STAY_MINUTES = 180
+/** What an hour is judged by where no other stay is asked about. Status: common practice, no source. */
+const USUAL_STAY = { stayMinutes: 180, cover: 'open' } as const
 
 const STATE_OF: Readonly<Record<Verdict, HourState>> = {
   fine: 'fit',
@@ -24,10 +26,12 @@ export interface HourStripAsked {
   /** The room that a typical box would be kept in. */
   keepRoomId: number | null
   timeZone: string
+  /** How long they stay from the hour on, minutes, and how they sit there; left out: 3 h, open in work. */
+  stay?: { stayMinutes: number; cover: Cover }
 }
 
 /**
- * The coming 48 hours of a room: fit where the least forgiving piece would keep its fit through 3 h open in work, tolerable
+ * The coming 48 hours of a room: fit where the least forgiving piece would keep its fit through the stay, tolerable
  * where it would for half an hour, else unfit; and what they would be if the room is lit at its usual hour.
  * Without a forecast the last two days stand in, and no hour is called fit; with nothing fresh read there are no cells.
  *
@@ -67,26 +71,27 @@ interface Judge {
   words: string
 }
 
-const stayOf = (pieceIds: readonly number[], roomId: number) => ({
+const stayOf = (pieceIds: readonly number[], { roomId, stay = USUAL_STAY }: HourStripAsked) => ({
   pieceIds,
   toRoomId: roomId,
-  stayMinutes: STAY_MINUTES,
-  cover: 'open' as const,
+  ...stay,
 })
 
-/** The piece that would have lost most after 3 h from now; a typical box where there is none. */
-function judgeOf(
-  material: CarryMaterial,
-  { roomId, pieceIds, keepRoomId }: HourStripAsked,
-): Judge | undefined {
-  const least = leastForgiving(material, stayOf(pieceIds, roomId), material.now.getTime())
+/** "going for 3 h, open in work" */
+const stayWords = ({ stay = USUAL_STAY }: HourStripAsked): string =>
+  `going for ${formatDuration(stay.stayMinutes)}, ${coverWords[stay.cover]}`
+
+/** The piece that would have lost most by the end of the stay from now; a typical box where there is none. */
+function judgeOf(material: CarryMaterial, asked: HourStripAsked): Judge | undefined {
+  const { pieceIds, keepRoomId } = asked
+  const least = leastForgiving(material, stayOf(pieceIds, asked), material.now.getTime())
   if (least !== undefined) {
     const number = material.pieces.get(least.pieceId)?.facts.number ?? ''
     const of = least.of === 1 ? '' : `, the least forgiving of ${String(least.of)} boxes`
     return {
       material,
       pieceId: least.pieceId,
-      words: `Judged by ${number}${of}, going for 3 h, open in work.`,
+      words: `Judged by ${number}${of}, ${stayWords(asked)}.`,
     }
   }
   if (keepRoomId === null || (material.rooms.get(keepRoomId)?.emcPctMean ?? null) === null) return undefined
@@ -94,7 +99,7 @@ function judgeOf(
   return {
     material: { ...material, pieces },
     pieceId: TYPICAL_BOX_ID,
-    words: `Judged by ${TYPICAL_BOX_WORDS}, going for 3 h, open in work.`,
+    words: `Judged by ${TYPICAL_BOX_WORDS}, ${stayWords(asked)}.`,
   }
 }
 
@@ -105,12 +110,7 @@ function litMaterial({ material }: Judge, { roomId }: HourStripAsked): CarryMate
 
 function forecastCells({ material, pieceId }: Judge, asked: HourStripAsked, lit: CarryMaterial): StripCell[] {
   const hourAt = Math.floor(material.now.getTime() / HOUR_MS) * HOUR_MS
-  const stay = {
-    pieceIds: [pieceId],
-    toRoomId: asked.roomId,
-    stayMinutes: STAY_MINUTES,
-    cover: 'open' as const,
-  }
+  const stay = stayOf([pieceId], asked)
   return judgedHours(material, { ...stay, fromAt: new Date(hourAt) }).flatMap(({ asItIs, ifLit }) => {
     const at = new Date(asItIs.startsAt).getTime()
     const air = airOfHour(material, asked.roomId, Math.max(at, material.now.getTime()))
@@ -126,10 +126,10 @@ function forecastCells({ material, pieceId }: Judge, asked: HourStripAsked, lit:
 }
 
 /** The last two days over again. What came once is no promise: fit is told as tolerable. */
-function repeatedCells({ material, pieceId }: Judge, { roomId }: HourStripAsked): StripCell[] {
+function repeatedCells({ material, pieceId }: Judge, asked: HourStripAsked): StripCell[] {
   const hourAt = Math.floor(material.now.getTime() / HOUR_MS) * HOUR_MS
-  const hours = material.rooms.get(roomId)?.hours
-  const stay = stayOf([pieceId], roomId)
+  const hours = material.rooms.get(asked.roomId)?.hours
+  const stay = stayOf([pieceId], asked)
   return Array.from({ length: FORECAST_HOURS }, (_, n) => n).flatMap((n) => {
     const at = hourAt + n * HOUR_MS
     const before = hours?.get(at - FORECAST_HOURS * HOUR_MS)

@@ -41,6 +41,8 @@ export function CarryDecision(props: CarryDecisionProps) {
   const [asking, setAsking] = useState(false)
   const isAdvised = create.problem !== null && problemCodeOf(create.problem) === 'advised-against'
   const isBad = answer?.worst === 'leave' && !isLogged
+  // Until there is an answer no way is the best one.
+  const isUnjudged = answer === undefined && !isLogged
   const others = isLogged ? [] : ways.filter((way) => way.key !== 'asked')
   const some = answer && !isLogged ? someWay(answer, request) : undefined
   const isBestOther = best !== undefined && best.key !== 'asked' && others.includes(best)
@@ -72,7 +74,7 @@ export function CarryDecision(props: CarryDecisionProps) {
           </Button>
         ) : null}
         <Button
-          variant={isBestOther ? 'link' : isBad ? 'second' : 'filled'}
+          variant={isBestOther ? 'link' : isBad || isUnjudged ? 'second' : 'filled'}
           pending={create.pending}
           onClick={() => {
             if (isBad && mode === 'now') setAsking(true)

@@ -22,6 +22,7 @@ import { CarrySentence } from './carry-sentence'
 import { bestWay, waysOf } from './carry-ways'
 import { CheckPieces } from './check-pieces'
 import { CoverChoice } from './cover-choice'
+import { HoursSheet } from './hours-sheet'
 import { KeepAsRoom } from './keep-as-room'
 import { KeepsSheet } from './keeps-sheet'
 import { SessionSheet } from './session-sheet'
@@ -187,6 +188,7 @@ export function CarryPageView({
         </div>
       ) : null}
       {answer?.session ? <SessionSheet session={answer.session} reader={reader} now={now} /> : null}
+      {answer ? <HoursSheet answer={answer} reader={reader} now={now} /> : null}
       {answer ? <KeepsSheet answer={answer} reader={reader} now={now} /> : null}
       {answer ? (
         <div className="flex flex-col gap-3 max-sm:px-4">
