@@ -49,10 +49,12 @@ export function scoreCheck(
     score.fines += 1
     if (!holds) score.falseFines += 1
   }
-  if (truth !== null && truth > now)
-    score.ratios.push(
-      check.earlyAt === null ? Infinity : (new Date(check.earlyAt).getTime() - now) / (truth - now),
-    )
+  if (truth !== null && truth > now) {
+    const earlyMs = check.earlyAt === null ? Infinity : new Date(check.earlyAt).getTime()
+    score.ratios.push((earlyMs - now) / (truth - now))
+    if (check.earlyAt !== null) score.edges.told += 1
+    if (check.earlyAt !== null && truth < earlyMs) score.edges.boundBefore += 1
+  }
   return { verdict: check.verdict, goneAt: truth }
 }
 

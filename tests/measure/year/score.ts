@@ -26,6 +26,8 @@ export interface YearScore {
   falseFines: number
   /** Early edge over true time, of each check whose box binds within 30 days in truth; Infinity where no time was told. */
   ratios: number[]
+  /** Of those checks, the ones that told an early edge, and of these the ones whose box bound before it. */
+  edges: { told: number; boundBefore: number }
   notices: number
   byRule: Map<string, number>
   forecast: Map<string, ForecastErrors>
@@ -45,6 +47,7 @@ export const newScore = (): YearScore => ({
   fines: 0,
   falseFines: 0,
   ratios: [],
+  edges: { told: 0, boundBefore: 0 },
   notices: 0,
   byRule: new Map(),
   forecast: new Map(),

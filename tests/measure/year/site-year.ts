@@ -68,7 +68,7 @@ export function siteYear(seed: number, days = 365): YearScore {
       const dayOn = dayOfInstant(new Date(now), YEAR_SITE.timeZone)
       if (dayOn !== year.today.dayOn) year.today = { dayOn, carries: 0, isAnswered: false }
       followShelf(year, now)
-      year.forecasts.hour(now, air.isWarmed)
+      year.forecasts.hour(now, air.isWarmed, isNear(year, now + HOUR_MS))
     }
     if ((now - beginMs) % DAY_MS === 12 * HOUR_MS) {
       makePlans(year, people, now)
@@ -138,12 +138,12 @@ function sensorsOf({ rooms }: SiteYear): HangingSensor[] {
   ]
 }
 
-/** Often while something is out or about to go, seldom where nothing can change. */
-function isTimeToDecide({ carries }: SiteYear, now: number): boolean {
-  const isNear = carries.some(
-    ({ state, kind, madeAt, plannedAt }) =>
-      state === 'out' ||
-      (state === 'planned' && kind === 'planned' && madeAt <= now && plannedAt - now <= 95 * MINUTE_MS),
+/** Something is out or about to go. */
+const isNear = ({ carries }: SiteYear, now: number): boolean =>
+  carries.some(
+    ({ state, madeAt, plannedAt }) =>
+      state === 'out' || (state === 'planned' && madeAt <= now && plannedAt - now <= 95 * MINUTE_MS),
   )
-  return isNear || now % HOUR_MS === 0
-}
+
+/** Often then, seldom where nothing can change. */
+const isTimeToDecide = (year: SiteYear, now: number): boolean => isNear(year, now) || now % HOUR_MS === 0

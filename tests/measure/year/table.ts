@@ -67,6 +67,12 @@ const MEASURES: readonly Measure[] = [
     isMet: ({ ratios }) => quantile(ratios, 0.5) >= 0.4 && quantile(ratios, 0.5) <= 0.9,
   },
   {
+    what: 'bound before the early edge that was told',
+    goal: '1 in 10, by design',
+    told: ({ edges }) => counted(edges.boundBefore, edges.told),
+    isMet: () => null,
+  },
+  {
     what: 'notices a week',
     goal: '< 3',
     told: (score) => perWeek(score, score.notices),
@@ -105,7 +111,13 @@ export function latencyRow(sortedMs: readonly number[], seeds: number): ScoreRow
 export function scoreTable(seeds: readonly number[], rows: readonly ScoreRow[]): string {
   const lines = [
     ['measure', 'goal', 'all', 'met', ...seeds.map((seed) => `seed ${String(seed)}`)],
-    ...rows.map((row) => [row.what, row.goal, row.all, row.isMet === true ? 'yes' : 'no', ...row.perSeed]),
+    ...rows.map((row) => [
+      row.what,
+      row.goal,
+      row.all,
+      row.isMet === null ? '–' : row.isMet ? 'yes' : 'no',
+      ...row.perSeed,
+    ]),
   ]
   const widths = (lines[0] ?? []).map((_, n) => Math.max(...lines.map((line) => (line[n] ?? '').length)))
   const told = lines.map((line) => `| ${line.map((cell, n) => cell.padEnd(widths[n] ?? 0)).join(' | ')} |`)
@@ -134,6 +146,7 @@ Warned: the notice of it was on its way, not held by quiet hours, 30 min before 
 Forgotten: out until it is missed the next morning; counted where its grade would have gone by then, but had not when it went.
 False "leave it": the check at the door said so, and in truth the grade would have held for the whole stay.
 Told over true: from the start to the early edge, over the time until the grade was gone, of boxes that lose it within 30 days.
+Bound before: of those checks that told an early edge at all, whose box's grade was gone before it.
 Notices: made for the site, each once, however many people and channels.
 Forecast: of a shop's hours that nobody warmed, mean error of EMC; "same as now" is the last whole hour.
 Reading to notice: from a reading sent over MQTT to the committed notice, 50 sites, PostgreSQL, broker and worker as they run.`
