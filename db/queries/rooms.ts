@@ -100,7 +100,7 @@ export async function isRoomNameTaken(
   return row !== undefined
 }
 
-/** The room marks of LOOK, 0 to 6: the first that no room uses, so that neighbours differ. */
+/** The room marks, 0 to 6: the first that no room uses, so that neighbours differ. */
 const marks = 7
 
 export async function insertRoom(

@@ -20,6 +20,7 @@ import {
   levelAbove,
   lookBackDays,
   meanOf,
+  oncePerRecord,
   roomPart,
 } from './room-rule'
 
@@ -27,18 +28,24 @@ type Values = ValuesOf<'mould-risk'>
 const dayMs = 24 * 3_600_000
 
 /**
- * Air in which mould may grow: the mean RH of a week, or surfaces over 30 days (SCIENCE §8; ASHRAE 160-2009). Rooms that
+ * Air in which mould may grow: the mean RH of a week, or surfaces over 30 days (ASHRAE 160-2009). Rooms that
  * keep no dry work are spoken of once a season.
  */
 export function mouldRisk(now: number, state: NoticeState, inputs: NoticeInputs): RulePart {
   const { values } = choiceOf(inputs.rules, 'mould-risk')
-  const outdoors = outdoorDays(inputs.surroundings?.rooms ?? [])
+  const rooms = inputs.surroundings?.rooms ?? []
+  const outside = rooms.find(({ kind }) => kind === 'outdoor')?.days
   return eachRoom(
     inputs,
     'mould-risk',
     (room) => room.kind !== 'outdoor',
     (room) => {
-      const samples = mouldSamples(room, values, lookBackDays, outdoors)
+      const samples = lately(
+        room,
+        values,
+        () => mouldSamples(room, values, lookBackDays, outdoorDays(rooms)),
+        outside,
+      )
       const isWatched = isInScope(values.rooms, room.code, room.keepsDryWork)
       return roomPart(now, state, inputs, {
         rule: 'mould-risk',
@@ -66,6 +73,8 @@ const outdoorDays = (rooms: readonly NoticeRoom[]): ReadonlyMap<string, RoomDay>
   new Map((rooms.find(({ kind }) => kind === 'outdoor')?.days ?? []).map((day) => [day.dayOn, day]))
 
 type MouldSample = DaySample & { isWarning: boolean }
+
+const lately = oncePerRecord<MouldSample[]>()
 
 function mouldSamples(
   room: NoticeRoom,
