@@ -12,11 +12,14 @@ import {
   eachRoom,
   levelAbove,
   lookBackDays,
+  oncePerRecord,
   quantileOf,
   roomPart,
 } from './room-rule'
 
 type Values = ValuesOf<'damper-than-normal'>
+
+const lately = oncePerRecord<DaySample[]>()
 
 /** A room that is damper than it was in the same weeks of earlier years. */
 export function damperThanNormal(
@@ -32,7 +35,7 @@ export function damperThanNormal(
     // A keep room out of its band says the same thing already.
     (room) => isInScope(values.rooms, room.code, isUsual(room)) && !alreadyTold.has(room.code),
     (room) => {
-      const samples = damperSamples(room, values, lookBackDays)
+      const samples = lately(room, values, () => damperSamples(room, values, lookBackDays))
       return roomPart(now, state, inputs, {
         rule: 'damper-than-normal',
         room,

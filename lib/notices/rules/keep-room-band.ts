@@ -13,11 +13,14 @@ import {
   levelAbove,
   levelBelow,
   lookBackDays,
+  oncePerRecord,
   quantileOf,
   roomPart,
 } from './room-rule'
 
 const yearDays = 365
+
+const lately = oncePerRecord<DaySample[]>()
 
 /** A keep room that stays out of its own band: told once, and once more when it is well inside again. */
 export function keepRoomBand(now: number, state: NoticeState, inputs: NoticeInputs): RulePart {
@@ -27,7 +30,7 @@ export function keepRoomBand(now: number, state: NoticeState, inputs: NoticeInpu
     'keep-room-band',
     (room) => isInScope(values.rooms, room.code, room.isKeepRoom),
     (room) => {
-      const samples = bandSamples(room, values, lookBackDays)
+      const samples = lately(room, values, () => bandSamples(room, values, lookBackDays))
       return roomPart(now, state, inputs, {
         rule: 'keep-room-band',
         room,

@@ -33,6 +33,24 @@ export function daySamples(
   })
 }
 
+/**
+ * Whole days change once a day and a site is looked at every few seconds, so what is made of the very same record is made
+ * once. Nothing but time is saved: `make` must depend on the room's days, on `values` and on `beside` alone. Days that are
+ * loaded anew are another record.
+ */
+export function oncePerRecord<T>() {
+  const known = new WeakMap<readonly RoomDay[], { key: string; beside: unknown; made: T }>()
+  /** @param beside another record that counts, such as the days outdoors */
+  return (room: NoticeRoom, values: object, make: () => T, beside: unknown = null): T => {
+    const key = JSON.stringify(values)
+    const before = known.get(room.days)
+    if (before?.key === key && before.beside === beside) return before.made
+    const made = make()
+    known.set(room.days, { key, beside, made })
+    return made
+  }
+}
+
 /** Over, clear or in between, for a limit that must not be passed upwards. */
 export const levelAbove = (value: number, limit: number, hysteresis: number): Sample['level'] =>
   value > limit ? 'over' : value <= limit - hysteresis ? 'clear' : 'between'
