@@ -4,6 +4,7 @@ import { type CarryRecord, listCarriesBackSince, listOpenCarries } from '@/db/qu
 import { assumedKeepRoom, loadCarryMaterial } from '@/db/queries/carry-inputs'
 import type { SiteMember } from '@/db/queries/members'
 import { listStandingPieces, type PieceRecord } from '@/db/queries/pieces'
+import { loadRuleBook } from '@/db/queries/rules'
 import { listSensorRecords, type SensorRecord } from '@/db/queries/sensors'
 import { countPieces } from '@/db/queries/site-counts'
 import { listWhateverCandidates } from '@/db/queries/whatever'
@@ -13,6 +14,8 @@ import { type CarryMaterial, woodAt } from '@/lib/carry/material'
 import { isTooFarAhead } from '@/lib/carry/repeat'
 import { hourStrip } from '@/lib/forecast/hour-strip'
 import { undoBringBackMs } from '@/lib/notices/policy'
+import type { RuleBook } from '@/lib/notices/rule-settings'
+import { listed } from '@/lib/notices/wording'
 import { nowHeadline } from '@/lib/now/headline'
 import { needs, type SensorForNeeds } from '@/lib/now/needs'
 import type { NowView, RuleRoom } from '@/lib/now/now-view'
@@ -30,11 +33,12 @@ import { isOnlooker, type SeenRoom, seenRooms } from './rooms'
 export async function getNow(db: Kysely<Database>, member: SiteMember, now: Date): Promise<NowView> {
   const { siteId } = member
   const seesCarries = may(member.role, 'carries:see')
-  const [rooms, records, back, sensors, pieces, pieceCount] = await Promise.all([
+  const [rooms, records, back, sensors, rules, pieces, pieceCount] = await Promise.all([
     seenRooms(db, member, now),
     seesCarries ? listNearCarries(db, siteId, now) : [],
     seesCarries ? listCarriesBackSince(db, siteId, new Date(now.getTime() - undoBringBackMs)) : [],
     may(member.role, 'sensors:see') ? listSensorRecords(db, siteId) : [],
+    loadRuleBook(db, siteId),
     listStandingPieces(db, siteId, viewerOf(member)),
     countPieces(db, siteId, isOnlooker(member)),
   ])
@@ -50,7 +54,7 @@ export async function getNow(db: Kysely<Database>, member: SiteMember, now: Date
   const planned = carries.filter((carry) => carry.state === 'planned')
   const ruleRooms = roomsOfRule(rooms)
   const clock = { timeZone: member.timeZone, now }
-  const devices = sensors.filter((sensor) => sensor.kind === 'device').map((one) => signsOf(one, now))
+  const devices = sensors.filter((sensor) => sensor.kind === 'device').map((one) => signsOf(one, now, rules))
   const silent = devices.filter((sensor) => sensor.state === 'silent')
   return {
     at: now.toISOString(),
@@ -63,7 +67,7 @@ export async function getNow(db: Kysely<Database>, member: SiteMember, now: Date
       // Where a piece's wood stands tells which rooms it was in and when: not for onlookers.
       shelf: seesCarries ? ruleShelf(pieces.flatMap((piece) => shelfPiece(piece, material) ?? [])) : [],
     },
-    strip: shop === undefined ? null : stripOf(member, shop, rooms, material, plannedIds(planned, pieces)),
+    strip: shop === undefined ? null : stripOf(member, shop, rooms, material, judgesOf(planned, pieces)),
     justBack: (await viewCarries(db, member, back, now, material)).flatMap((carry) =>
       justBack(carry, back, now),
     ),
@@ -90,10 +94,26 @@ async function listNearCarries(db: Kysely<Database>, siteId: number, now: Date):
 const shopOf = (rooms: readonly SeenRoom[]): SeenRoom | undefined =>
   rooms.find(({ record, view }) => record.kind === 'shop' && view.air.kind !== 'never')
 
-/** The boxes that are down to go: they are the ones chosen, so they judge the hours. */
-function plannedIds(planned: readonly Carry[], pieces: readonly PieceRecord[]): number[] {
-  const codes = new Set(planned.flatMap((carry) => carry.pieces.map((piece) => piece.id)))
-  return pieces.filter((piece) => codes.has(piece.code) && !piece.isHidden).map((piece) => piece.id)
+/**
+ * The boxes that are down to go: they are the ones chosen, so they judge the hours. One that should stay where it is
+ * would call every hour unfit and hide what the others can do, so it is left out and named.
+ */
+function judgesOf(
+  planned: readonly Carry[],
+  pieces: readonly PieceRecord[],
+): { ids: number[]; leftOut: string[] } {
+  const going = planned.flatMap((carry) => carry.pieces)
+  const staying = new Set(
+    going.filter(({ check }) => check?.kind === 'verdict' && check.verdict === 'leave').map(({ id }) => id),
+  )
+  const seen = pieces.filter(({ code, isHidden }) => going.some(({ id }) => id === code) && !isHidden)
+  const judges = seen.filter(({ code }) => !staying.has(code))
+  return judges.length === 0
+    ? { ids: seen.map(({ id }) => id), leftOut: [] }
+    : {
+        ids: judges.map(({ id }) => id),
+        leftOut: seen.filter(({ code }) => staying.has(code)).map(({ number }) => number),
+      }
 }
 
 function stripOf(
@@ -101,13 +121,16 @@ function stripOf(
   { record, view }: SeenRoom,
   rooms: readonly SeenRoom[],
   material: CarryMaterial,
-  pieceIds: readonly number[],
+  judges: ReturnType<typeof judgesOf>,
 ): NowView['strip'] {
   const keepRoomId = assumedKeepRoom(rooms.map((room) => room.record))?.id ?? null
-  return {
-    room: { id: view.id, name: view.name },
-    hours: hourStrip(material, { roomId: record.id, pieceIds, keepRoomId, timeZone }),
-  }
+  const hours = hourStrip(material, { roomId: record.id, pieceIds: judges.ids, keepRoomId, timeZone })
+  const { leftOut } = judges
+  const without =
+    leftOut.length === 0 || hours.cells.length === 0
+      ? ''
+      : ` Without ${listed(leftOut)}, which should stay ${leftOut.length === 1 ? 'where it is' : 'where they are'}.`
+  return { room: { id: view.id, name: view.name }, hours: { ...hours, note: `${hours.note}${without}` } }
 }
 
 const edgeOf = (carry: Carry): number =>
@@ -159,12 +182,12 @@ function shelfPiece(piece: PieceRecord, material: CarryMaterial): ShelfPiece | u
   }
 }
 
-function signsOf(sensor: SensorRecord, now: Date): SensorForNeeds {
+function signsOf(sensor: SensorRecord, now: Date, rules: RuleBook): SensorForNeeds {
   return {
     id: sensor.code,
     name: sensor.name,
     roomName: sensor.room?.name ?? null,
-    state: sensorState(sensor, now),
+    state: sensorState(sensor, now, rules),
     heardAt: sensor.heardAt,
     createdAt: sensor.createdAt,
     clock: sensorClock(sensor, now),

@@ -4,10 +4,12 @@ import { findIngestCounts } from '@/db/queries/ingest-counts'
 import type { SiteMember } from '@/db/queries/members'
 import { listPlacements } from '@/db/queries/placements'
 import { countRefusedBySensor } from '@/db/queries/refused-today'
+import { loadRuleBook } from '@/db/queries/rules'
 import { findSensor, listSensorRecords, type SensorRecord } from '@/db/queries/sensors'
 import type { Database } from '@/db/schema'
 import { dayOfInstant } from '@/lib/climate/days'
 import { signInNameOf, topicOf } from '@/lib/readings/topic'
+import type { RuleBook } from '@/lib/notices/rule-settings'
 import { ok } from '@/lib/result'
 import type { Sensor, SensorCredential, SensorDetail } from '@/lib/sensors/sensor'
 import { sensorClock, sensorState } from '@/lib/sensors/state'
@@ -16,12 +18,12 @@ import { notThere, type Outcome } from './problem'
 
 const instant = (at: Date | null): string | null => at?.toISOString() ?? null
 
-function sensorView(sensor: SensorRecord, refusedToday: number, now: Date): Sensor {
+function sensorView(sensor: SensorRecord, refusedToday: number, now: Date, rules: RuleBook): Sensor {
   return {
     id: sensor.code,
     name: sensor.name,
     kind: sensor.kind,
-    state: sensorState(sensor, now),
+    state: sensorState(sensor, now, rules),
     room:
       sensor.room === null ? null : { id: sensor.room.code, name: sensor.room.name, mark: sensor.room.mark },
     spot: sensor.spot,
@@ -39,11 +41,12 @@ function sensorView(sensor: SensorRecord, refusedToday: number, now: Date): Sens
 /** The sensors in use, and behind them those that were retired. */
 export async function listSensors(db: Kysely<Database>, member: SiteMember, now: Date): Promise<Sensor[]> {
   const todayOn = dayOfInstant(now, member.timeZone)
-  const [records, refused] = await Promise.all([
+  const [records, refused, rules] = await Promise.all([
     listSensorRecords(db, member.siteId, { withArchived: true }),
     countRefusedBySensor(db, member.siteId, todayOn),
+    loadRuleBook(db, member.siteId),
   ])
-  return records.map((record) => sensorView(record, refused.get(record.id) ?? 0, now))
+  return records.map((record) => sensorView(record, refused.get(record.id) ?? 0, now, rules))
 }
 
 export async function getSensor(
@@ -55,12 +58,13 @@ export async function getSensor(
   const sensor = await findSensor(db, member.siteId, sensorCode)
   if (sensor === undefined) return notThere()
   const todayOn = dayOfInstant(now, member.timeZone)
-  const [placements, counts] = await Promise.all([
+  const [placements, counts, rules] = await Promise.all([
     listPlacements(db, member.siteId, sensor.id),
     findIngestCounts(db, member.siteId, sensor.id, todayOn),
+    loadRuleBook(db, member.siteId),
   ])
   return ok({
-    ...sensorView(sensor, counts.get('refused') ?? 0, now),
+    ...sensorView(sensor, counts.get('refused') ?? 0, now, rules),
     ...addressOf(member, sensor.code),
     placements: placements.map(({ room, fromAt, toAt, spot }) => ({
       room: { id: room.code, name: room.name, mark: room.mark },

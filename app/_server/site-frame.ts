@@ -1,10 +1,11 @@
 import 'server-only'
 import type { Kysely } from 'kysely'
 import { noteMemberHere, type SiteMember } from '@/db/queries/members'
+import { loadRuleBook } from '@/db/queries/rules'
 import { countNewNotices, countPieces, countRooms, listSensorsHeard } from '@/db/queries/site-counts'
 import { listSitesOf } from '@/db/queries/sites'
 import type { Database } from '@/db/schema'
-import { silentAfterMs } from '@/lib/notices/policy'
+import { silentAfterOf } from '@/lib/notices/rule-settings'
 import { may } from '@/lib/sites/permissions'
 import type { SiteFrame } from '@/lib/sites/site'
 import type { SignedInUser } from './session'
@@ -21,17 +22,18 @@ export async function getSiteFrame(
   await noteMemberHere(db, member.siteId, member.userId, now)
   const { siteId, role } = member
   const onlyShared = role === 'onlooker'
-  const [sites, rooms, pieces, sensors, newNotices] = await Promise.all([
+  const [sites, rooms, pieces, sensors, rules, newNotices] = await Promise.all([
     listSitesOf(db, member.userId),
     countRooms(db, siteId, onlyShared),
     countPieces(db, siteId, onlyShared),
     may(role, 'sensors:see') ? listSensorsHeard(db, siteId) : [],
+    loadRuleBook(db, siteId),
     may(role, 'notices:see')
       ? countNewNotices(db, siteId, member.userId, new Date(now.getTime() - newForMs))
       : 0,
   ])
   const silent = sensors.filter(({ heardAt, usualGapS }) => {
-    return heardAt !== null && now.getTime() - heardAt.getTime() > silentAfterMs(usualGapS)
+    return heardAt !== null && now.getTime() - heardAt.getTime() > silentAfterOf(rules, usualGapS)
   }).length
   const heard = sensors.filter(({ heardAt }) => heardAt !== null).length - silent
   return {

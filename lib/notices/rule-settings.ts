@@ -1,6 +1,7 @@
 import { z } from 'zod'
 import { timeOfDaySchema } from '@/lib/sites/site'
 import type { Rule } from './notice'
+import { silentAfterMs } from './policy'
 import type { Control, RuleForm } from './rule-form'
 import { carryRuleForms } from './rule-forms-carry'
 import { yardRuleForms } from './rule-forms-yard'
@@ -79,6 +80,12 @@ export function choiceOf<R extends ToldRule>(
 
 export const isRuleOn = (book: RuleBook | undefined, rule: Rule): boolean =>
   rule === 'test' || choiceOf(book, rule).isOn
+
+/** From how long after it was last heard a sensor counts as silent at a site, ms. */
+export function silentAfterOf(book: RuleBook | undefined, usualGapS: number | null): number {
+  const { gaps, leastH } = choiceOf(book, 'sensor-silent').values
+  return silentAfterMs(usualGapS, gaps, leastH * 3_600_000)
+}
 
 /** Whether a rule looks at a room: one that was named, or, with none named, one that it means by itself. */
 export const isInScope = (named: readonly string[], roomCode: string, usual: boolean): boolean =>

@@ -1,4 +1,5 @@
-import { assumedGapS, silentAfterMs } from '@/lib/notices/policy'
+import { assumedGapS } from '@/lib/notices/policy'
+import { silentAfterOf, type RuleBook } from '@/lib/notices/rule-settings'
 import type { SensorStateWord } from './sensor'
 
 const hourMs = 3_600_000
@@ -15,14 +16,17 @@ export interface SensorSigns {
   archivedAt: Date | null
 }
 
-/** Whether a sensor is alive. What counts is when it was last heard, not the time that its reading bears. */
-export function sensorState(sensor: SensorSigns, now: Date): SensorStateWord {
+/**
+ * Whether a sensor is alive. What counts is when it was last heard, not the time that its reading bears.
+ * @param rules how patient the site is; as it comes where left out
+ */
+export function sensorState(sensor: SensorSigns, now: Date, rules?: RuleBook): SensorStateWord {
   if (sensor.archivedAt !== null) return 'retired'
   if (sensor.heardAt === null) return 'never-heard'
   const ageMs = now.getTime() - sensor.heardAt.getTime()
   // Nobody is expected to stand there typing, so such a row is late at the most.
   if (sensor.kind === 'typed') return ageMs > typedLateAfterMs ? 'late' : 'alive'
-  if (ageMs > silentAfterMs(sensor.usualGapS)) return 'silent'
+  if (ageMs > silentAfterOf(rules, sensor.usualGapS)) return 'silent'
   const lateAfterMs = Math.max(lateAfterMsMin, lateAfterGaps * (sensor.usualGapS ?? assumedGapS) * 1000)
   return ageMs > lateAfterMs ? 'late' : 'alive'
 }

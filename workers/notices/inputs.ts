@@ -12,8 +12,8 @@ import { carryCheckInput, type CarryMaterial } from '@/lib/carry/material'
 import { isTooFarAhead } from '@/lib/carry/repeat'
 import { whateverJudged } from '@/lib/carry/whatever'
 import type { NoticeCarry, NoticeInputs, NoticePiece, NoticeSensor } from '@/lib/notices/inputs'
-import { freshForMs, silentAfterMs } from '@/lib/notices/policy'
-import { choiceOf } from '@/lib/notices/rule-settings'
+import { freshForMs } from '@/lib/notices/policy'
+import { silentAfterOf } from '@/lib/notices/rule-settings'
 import { isKeepingRoom } from '@/lib/rooms/room'
 import { type CostlyFacts, loadSurroundings } from './surroundings'
 
@@ -49,8 +49,6 @@ export async function loadNoticeInputs(
     carry: noticeCarry(material, carry, candidates),
   }))
 
-  const patience = choiceOf(rules, 'sensor-silent').values
-
   const sensors = hanging
     .filter((sensor) => sensor.kind === 'device')
     .map((sensor): NoticeSensor => {
@@ -72,10 +70,7 @@ export async function loadNoticeInputs(
         roomName: room?.name ?? null,
         lastHeardAt,
         freshUntil: lastHeardAt === null ? null : lastHeardAt + freshMs,
-        silentFrom:
-          lastHeardAt === null
-            ? null
-            : lastHeardAt + silentAfterMs(sensor.usualGapS, patience.gaps, patience.leastH * 3_600_000),
+        silentFrom: lastHeardAt === null ? null : lastHeardAt + silentAfterOf(rules, sensor.usualGapS),
         piecesOutThere: isAirKnown ? [] : piecesOut,
         batteryPct: batteries.get(sensor.sensorId) ?? null,
       }
