@@ -65,7 +65,8 @@ export async function getDoorView(
     out: doorPieces(carries, clock),
     strip: hourStrip(material, {
       roomId: door.room.roomId,
-      pieceIds: boxes,
+      // What is down to go judges the hours; with nothing down, a typical box.
+      pieceIds: pieceIdsOf(records.filter(({ state }) => state === 'planned')),
       keepRoomId: keep?.id ?? null,
       timeZone: screen.timeZone,
     }),

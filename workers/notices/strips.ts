@@ -1,24 +1,24 @@
 import { assumedKeepRoom } from '@/db/queries/carry-inputs'
-import type { RestingPiece } from '@/db/queries/notice-inputs'
 import type { RoomRecord } from '@/db/queries/rooms'
 import type { CarryMaterial } from '@/lib/carry/material'
 import { hourStrip } from '@/lib/forecast/hour-strip'
 import type { StripCell } from '@/lib/forecast/strip-view'
 import type { NoticeStrip, StripKind } from '@/lib/notices/surroundings'
 
-/** The coming hours of each shop by its forecast, judged as on its page; a shop without a forecast is left out. */
+/**
+ * The coming hours of each shop by its forecast, judged by a typical box as on the room's page: nobody has chosen pieces,
+ * and by the least forgiving box of a whole shelf hardly an hour of the year is fit. A shop without a forecast is left out.
+ */
 export function stripsOf(
   material: CarryMaterial,
   rooms: readonly RoomRecord[],
-  pieces: readonly RestingPiece[],
   timeZone: string,
 ): NoticeStrip[] {
   const keepRoomId = assumedKeepRoom(rooms)?.id ?? null
-  const pieceIds = pieces.filter(({ stage, isOut }) => stage === 'box' && !isOut).map(({ id }) => id)
   return rooms
     .filter(({ kind }) => kind === 'shop')
     .flatMap((room): NoticeStrip[] => {
-      const strip = hourStrip(material, { roomId: room.id, pieceIds, keepRoomId, timeZone })
+      const strip = hourStrip(material, { roomId: room.id, pieceIds: [], keepRoomId, timeZone })
       if (strip.kind !== 'forecast') return []
       const cells = strip.cells.map((cell) => ({ at: new Date(cell.at).getTime(), kind: kindOf(cell) }))
       return [{ roomCode: room.code, roomName: room.name, cells }]

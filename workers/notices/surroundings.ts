@@ -105,7 +105,7 @@ async function loadCostly(
     })),
     boxes: pieces.flatMap((piece) => restingBox(piece, material, rooms) ?? []),
     blanks: await loadBlanks(db, site, now, pieces, material, rooms),
-    strips: wantsStrips ? stripsOf(material, rooms, pieces, timeZone) : [],
+    strips: wantsStrips ? stripsOf(material, rooms, timeZone) : [],
   }
 }
 
