@@ -11,7 +11,7 @@ import { inTransaction } from '@/db/queries/transaction'
 import type { Database } from '@/db/schema'
 import type { AsksView, DeliveryLog } from '@/lib/notices/delivery'
 import type { PlannedDelivery, RoutedNotice } from '@/lib/notices/inputs'
-import type { Notice } from '@/lib/notices/notice'
+import type { Notice, Rule } from '@/lib/notices/notice'
 import { ok } from '@/lib/result'
 import { serverConfig } from './env'
 import { answersOfRecords, getNotice, noticeView } from './notices'
@@ -62,7 +62,12 @@ const hourMs = 3_600_000
 const asksForMs = 24 * hourMs
 const lostForMs = 7 * 24 * hourMs
 
-/** What is asked now, one question for each occasion, the newest of it; and whether this person is at work. */
+/** A piece whose time is up, then one whose time nearly is, then the evening's questions and the rest. */
+const pressingFirst: readonly Rule[] = ['time-out', 'time-nearly-out', 'last-call', 'lock-up']
+const pressing = ({ rule }: Notice): number =>
+  pressingFirst.includes(rule) ? pressingFirst.indexOf(rule) : pressingFirst.length
+
+/** What is asked now, one question for each occasion, the newest of it, what presses most first; and whether this person is at work. */
 export async function getAsks(db: Kysely<Database>, member: SiteMember, now: Date): Promise<AsksView> {
   const records = await listNoticeRecords(db, member.siteId, member.userId, {
     isDescending: true,
@@ -81,7 +86,7 @@ export async function getAsks(db: Kysely<Database>, member: SiteMember, now: Dat
   const settings = await findSettings(db, member.siteId, member.userId)
   const { sessionUntil } = settings
   return {
-    items,
+    items: items.toSorted((one, other) => pressing(one) - pressing(other)),
     lost: await countLost(db, member.siteId, new Date(now.getTime() - lostForMs)),
     sessionUntil: sessionUntil !== null && sessionUntil > now ? sessionUntil.toISOString() : null,
     settingsVersion: settings.version,

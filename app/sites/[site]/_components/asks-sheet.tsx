@@ -17,19 +17,31 @@ function useAsks(reader: Reader, initial: AsksView): AsksView {
   return query.data ?? initial
 }
 
+/** While at work: the slim line that says so, above everything. */
+export function AtWorkNow({ reader, initial }: { reader: Reader; initial: AsksView }) {
+  const { sessionUntil, settingsVersion } = useAsks(reader, initial)
+  return <SessionLine reader={reader} until={sessionUntil} version={settingsVersion} />
+}
+
 /** Stands at the end of the page: being silent is no question of the moment. */
 export function AtWork({ reader, initial }: { reader: Reader; initial: AsksView }) {
   const { sessionUntil, settingsVersion } = useAsks(reader, initial)
   return <SessionOffer reader={reader} until={sessionUntil} version={settingsVersion} />
 }
 
-/** What is asked now, to be answered with one press; while at work, the slim line that says so. */
-export function AsksSheet({ reader, initial }: { reader: Reader; initial: AsksView }) {
+type AsksSheetProps = {
+  reader: Reader
+  initial: AsksView
+  /** Nothing above it asks more pressingly, so its first answer is the filled button. */
+  isFirst: boolean
+}
+
+/** What is asked now, to be answered with one press. */
+export function AsksSheet({ reader, initial, isFirst }: AsksSheetProps) {
   const view = useAsks(reader, initial)
   const now = new Date(reader.at)
   return (
     <>
-      <SessionLine reader={reader} until={view.sessionUntil} version={view.settingsVersion} />
       {view.lost > 0 ? (
         <p className="text-label text-warn max-sm:px-4">
           {view.lost === 1 ? 'A notice' : `${String(view.lost)} notices`} of the last week could not be sent
@@ -52,7 +64,7 @@ export function AsksSheet({ reader, initial }: { reader: Reader; initial: AsksVi
                     ))}
                   </div>
                 </div>
-                <AnswerButtons site={reader.site} notice={notice} isFirst={index === 0} />
+                <AnswerButtons site={reader.site} notice={notice} isFirst={isFirst && index === 0} />
               </li>
             ))}
           </ul>

@@ -18,7 +18,7 @@ import type { NowView } from '@/lib/now/now-view'
 import { may } from '@/lib/sites/permissions'
 import type { Reader } from '@/lib/sites/reader'
 import { LockUpLink } from './lock-up-link'
-import { AsksSheet, AtWork } from './asks-sheet'
+import { AsksSheet, AtWork, AtWorkNow } from './asks-sheet'
 import { NeedsSheet } from './needs-sheet'
 import { NoReadings } from './no-readings'
 import { furthestApart, nowRule } from './now-rule'
@@ -58,9 +58,8 @@ export function NowPageView({ reader, initial, asks }: NowPageViewProps) {
   return (
     <>
       <PageSentence parts={view.headline} />
-      {asks === null ? null : <AsksSheet reader={reader} initial={asks} />}
+      {asks === null ? null : <AtWorkNow reader={reader} initial={asks} />}
       <OutAnnouncer pieces={out} now={now} />
-      {view.isLockUp && mayDo ? <LockUpLink base={base} isOut={out.length > 0} /> : null}
       {out.length === 0 && mayDo && isRead ? (
         <div className="flex flex-wrap gap-3 px-4 sm:px-0">
           <ButtonLink href={`${base}/carry?mode=now`} variant="filled" className="max-sm:grow">
@@ -84,6 +83,8 @@ export function NowPageView({ reader, initial, asks }: NowPageViewProps) {
           isUrgent
         />
       ) : null}
+      {asks === null ? null : <AsksSheet reader={reader} initial={asks} isFirst={due.length === 0} />}
+      {view.isLockUp && mayDo ? <LockUpLink base={base} isOut={out.length > 0} /> : null}
       {near.map((carry) => (
         <PlannedSheet key={carry.id} carry={carry} reader={reader} now={now} />
       ))}

@@ -106,7 +106,13 @@ export function OutPiece({ carry, piece, reader, now, isFirst = false }: OutPiec
               })
             }}
           >
-            {coverVerb}
+            {isShut ? (
+              coverVerb
+            ) : (
+              <>
+                Bagged<span className="max-sm:hidden">, still out</span>
+              </>
+            )}
           </Button>
         </div>
       ) : null}

@@ -71,7 +71,7 @@ export function PlannedSheet({ carry, reader, now, isOwnPage = false }: PlannedS
             {carry.takesWhatever ? (
               <TakeWhatever carry={carry} reader={reader} start={actions.start} />
             ) : (
-              <StartCarry carry={carry} start={actions.start} />
+              <StartCarry carry={carry} start={actions.start} isSoon={minutes <= 120} />
             )}
             {isShort && !carry.canPutBack ? (
               <PutOff carry={carry} actions={actions} isBest={carry.worst === 'leave'} />

@@ -9,14 +9,21 @@ import { Callout } from '@/app/_components/ui/callout'
 import { AgainstAdvice } from './against-advice'
 import type { CarryActions } from './use-carry-actions'
 
+type StartCarryProps = {
+  carry: Carry
+  start: CarryActions['start']
+  /** Its time is near: then going is the answer that the page offers first. */
+  isSoon: boolean
+}
+
 /**
  * Takes a planned carry out. Against the advice it asks again, and says why: at once where the verdict on the page
  * says so, and after the server's own check where that has changed meanwhile.
  */
-export function StartCarry({ carry, start }: { carry: Carry; start: CarryActions['start'] }) {
+export function StartCarry({ carry, start, isSoon }: StartCarryProps) {
   const isAdvised = start.problem !== null && problemCodeOf(start.problem) === 'advised-against'
   const [asking, setAsking] = useState(false)
-  const isBest = carry.worst === 'fine' || carry.worst === 'keep-short' || carry.worst === 'words'
+  const isBest = isSoon && carry.worst !== 'leave' && carry.worst !== 'unknown'
   return (
     <>
       <Button
@@ -27,7 +34,7 @@ export function StartCarry({ carry, start }: { carry: Carry; start: CarryActions
           else start.act({ carryId: carry.id, againstAdvice: false })
         }}
       >
-        Take it out now
+        {carry.pieces.length > 1 ? 'Take them out now' : 'Take it out now'}
       </Button>
       <AgainstAdvice
         open={asking || isAdvised}
