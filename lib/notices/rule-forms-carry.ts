@@ -88,7 +88,7 @@ export const carryRuleForms = {
         label: 'With nothing logged out',
         usual: 'used',
         options: [
-          { value: 'used', words: 'on days when the shop was warmed or opened and no carry was logged' },
+          { value: 'used', words: 'if the shop was warmed or opened' },
           { value: 'daily', words: 'every evening' },
           { value: 'never', words: 'never' },
         ],

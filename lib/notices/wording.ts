@@ -73,8 +73,11 @@ export function moreLikelyGood(check: PieceCheck | null, timeZone: string, now: 
 export function silentTitle(sensor: NoticeSensor, timeZone: string, now: Date): string {
   const since =
     sensor.lastHeardAt === null ? '' : ` since ${formatMoment(new Date(sensor.lastHeardAt), timeZone, now)}`
-  const where = sensor.roomName === null ? '' : ` in ${sensor.roomName}`
-  return `${sensor.name}${where} has been silent${since}.`
+  // Many are named after their room, which need not be said twice.
+  const isNamedAfter = sensor.name === sensor.roomName
+  const where = sensor.roomName === null || isNamedAfter ? '' : ` in ${sensor.roomName}`
+  const name = isNamedAfter ? `The sensor in ${sensor.name}` : sensor.name
+  return `${name}${where} has been silent${since}.`
 }
 
 export function silentBody(sensor: NoticeSensor): string {

@@ -1,6 +1,6 @@
 'use client'
 
-import { useState } from 'react'
+import { type ReactNode, useState } from 'react'
 import { apiFetch } from '@/app/_components/api'
 import { siteKey } from '@/app/_components/live/site-keys'
 import { useSiteQuery } from '@/app/_components/live/use-site-query'
@@ -22,8 +22,15 @@ const stateWords = {
   'let-go': 'not needed any more',
 }
 
+type DeliveryFoldProps = {
+  reader: Reader
+  notice: Notice
+  /** The rest of the notice, where the list shows only its title. */
+  children?: ReactNode
+}
+
 /** How a notice went out: each try with its time, and what could not be sent to be tried again. */
-export function DeliveryFold({ reader, notice }: { reader: Reader; notice: Notice }) {
+export function DeliveryFold({ reader, notice, children }: DeliveryFoldProps) {
   const [isOpen, setIsOpen] = useState(false)
   const path = `/notices/${notice.id}`
   const log = useSiteQuery<DeliveryLog>({
@@ -46,7 +53,10 @@ export function DeliveryFold({ reader, notice }: { reader: Reader; notice: Notic
         setIsOpen(event.currentTarget.open)
       }}
     >
-      <summary className="min-h-8 cursor-pointer py-1 text-heart">How it went out</summary>
+      <summary className="min-h-11 cursor-pointer py-2.5 text-heart sm:min-h-8 sm:py-1">
+        {children ? 'All of it, and how it went out' : 'How it went out'}
+      </summary>
+      {children}
       {log.isError ? <p className="text-warn">The log could not be fetched just now.</p> : null}
       {log.data?.items.length === 0 ? <p>It stands on this page only.</p> : null}
       <ul className="mt-1 flex flex-col gap-2">

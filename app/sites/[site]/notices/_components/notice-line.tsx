@@ -55,6 +55,8 @@ export function NoticeLine({ reader, notice }: { reader: Reader; notice: Notice 
   })
   const moment = (at: string) => formatMoment(at, reader.timeZone, new Date(reader.at))
   const mayAcknowledge = may(reader.role, 'notices:acknowledge')
+  // What was seen and asks nothing any more is one line in the list; the rest of it is a press away.
+  const isPast = !isFresh(notice) && notice.asks.length === 0
 
   return (
     <li className="grid grid-cols-[1.75rem_minmax(0,1fr)] gap-x-2 py-4 sm:grid-cols-[2rem_7.5rem_minmax(0,1fr)_auto]">
@@ -70,7 +72,7 @@ export function NoticeLine({ reader, notice }: { reader: Reader; notice: Notice 
         <p className={classNames('max-w-words', isFresh(notice) && 'font-semibold')}>
           <RichText parts={notice.title} />
         </p>
-        {notice.body ? (
+        {notice.body && !isPast ? (
           <p className="max-w-words whitespace-pre-line">
             <RichText parts={notice.body} />
           </p>
@@ -94,9 +96,15 @@ export function NoticeLine({ reader, notice }: { reader: Reader; notice: Notice 
               ? 'Seen.'
               : 'Not seen yet.'}
         </p>
-        <DeliveryFold reader={reader} notice={notice} />
+        <DeliveryFold reader={reader} notice={notice}>
+          {notice.body && isPast ? (
+            <p className="mb-2 max-w-words text-base whitespace-pre-line">
+              <RichText parts={notice.body} />
+            </p>
+          ) : null}
+        </DeliveryFold>
       </div>
-      <div className="flex flex-wrap items-start gap-2 max-sm:col-start-2 max-sm:mt-2 sm:justify-end">
+      <div className="flex flex-wrap items-start gap-2 max-sm:col-start-2 max-sm:mt-2 sm:flex-col sm:items-end">
         {notice.link ? (
           <ButtonLink href={`/sites/${reader.site}${notice.link}`}>{linkWords[notice.rule]}</ButtonLink>
         ) : null}

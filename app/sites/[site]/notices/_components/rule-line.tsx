@@ -9,6 +9,7 @@ import { Switch } from '@/app/_components/ui/switch'
 import { useAction } from '@/app/_components/use-action'
 import { FlowingSentence } from '@/app/sites/_components/flowing-sentence'
 import { formatDate } from '@/lib/format/times'
+import { ruleNames } from '@/lib/notices/rule-names'
 import { enteredValue } from '@/lib/notices/rule-units'
 import type { RuleValue } from '@/lib/notices/rule-settings'
 import {
@@ -62,7 +63,7 @@ export function RuleLine({ reader, rule, rooms, mayChange }: RuleLineProps) {
   return (
     <li className="flex flex-col gap-2 py-3">
       <div className="flex flex-wrap items-start justify-between gap-x-6 gap-y-2 sm:flex-nowrap">
-        <FlowingSentence className={classNames('max-w-words', !rule.isOn && 'text-ink-soft')}>
+        <FlowingSentence className={classNames('min-w-0 max-w-words', !rule.isOn && 'text-ink-soft')}>
           {rule.parts.map((part, index) =>
             'text' in part ? (
               <Fragment key={index}>{part.text}</Fragment>
@@ -86,7 +87,7 @@ export function RuleLine({ reader, rule, rooms, mayChange }: RuleLineProps) {
         </FlowingSentence>
         {mayChange ? (
           <Switch
-            label={`Tell of this: ${rule.rule.replaceAll('-', ' ')}`}
+            label={`Tell of this: ${ruleNames[rule.rule]}`}
             checked={rule.isOn}
             disabled={change.pending}
             onCheckedChange={(isOn) => {
