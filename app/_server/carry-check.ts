@@ -109,7 +109,7 @@ export async function checkCarry(
           },
     ...('room' in to
       ? comingHours(member, material, { ...asked, pieceIds, toRoomId: to.room.id }, better)
-      : { strip: null, bestHours: [] }),
+      : { strip: null, bestHours: null }),
     cautions: [...carryCautions],
     ...place,
   })

@@ -24,27 +24,31 @@ describe('the best hours of the week', () => {
       lit('06T15:00'),
       hour('05T14:00', 'leave'),
     ]
-    expect(bestHoursWords(hours, [], clock)).toEqual([
-      'Best hours in the next two days: tomorrow 10:00 to 12:00, if it is lit tomorrow 08:00.',
-    ])
+    expect(bestHoursWords(hours, [], clock)).toBe(
+      'Best hours this week: tomorrow 10:00 to 12:00 if it is lit tomorrow 08:00.',
+    )
   })
 
   it('are told as usual beyond it, and never as a forecast', () => {
     const usual = [hour('08T10:00', 'fine'), hour('07T11:00', 'fine'), hour('09T12:00', 'leave')]
-    const [told, later] = bestHoursWords([hour('05T14:00', 'keep-short')], usual, clock)
-    expect(told).toBe('Best hours in the next two days: 14:00, for a short stay.')
-    expect(later).toBe(
-      'Later this week, as a rule, Saturday from 11:00 and Sunday from 10:00: by the hours of the last week, not by a forecast.',
+    expect(bestHoursWords([hour('05T14:00', 'keep-short')], usual, clock)).toBe(
+      'Best hours this week: 14:00, for a short stay; as a rule Saturday from 11:00 and Sunday from 10:00, by the last week’s hours and no forecast.',
+    )
+    expect(bestHoursWords([hour('05T14:00', 'leave')], usual, clock)).toMatch(
+      /^Best hours this week: as a rule Saturday from 11:00 and Sunday/,
     )
   })
 
-  it('say so where any hour will do, and where none will', () => {
+  it('are left out where the strip has said it: any hour will do, or nothing is known', () => {
     const any = [hour('05T14:00', 'fine'), hour('05T15:00', 'fine')]
-    expect(bestHoursWords(any, [hour('08T10:00', 'fine')], clock)).toEqual([
-      'Any hour of the next two days will do.',
-    ])
-    const none = bestHoursWords([hour('05T14:00', 'leave')], [hour('08T10:00', 'leave')], clock)
-    expect(none).toEqual(['No hour of the next two days is good for it, and as a rule none later this week.'])
-    expect(bestHoursWords([], [], clock)).toEqual([])
+    expect(bestHoursWords(any, [hour('08T10:00', 'fine')], clock)).toBeNull()
+    expect(bestHoursWords([hour('05T14:00', 'leave')], [], clock)).toBeNull()
+    expect(bestHoursWords([], [], clock)).toBeNull()
+  })
+
+  it('say so where no day of the week is good', () => {
+    expect(bestHoursWords([hour('05T14:00', 'leave')], [hour('08T10:00', 'leave')], clock)).toBe(
+      'As a rule no hour later this week is good for it either.',
+    )
   })
 })

@@ -1,9 +1,7 @@
 import { HOUR_MS } from '@/lib/follow/record'
 import { formatClock, formatMoment, formatRelativeDay, formatWeekday } from '@/lib/format/times'
 import type { BetterHour } from './better-hours'
-import type { Verdict } from './carry-check'
 
-const RANK: Readonly<Record<Verdict, number>> = { fine: 0, 'keep-short': 1, leave: 2 }
 /** More days are a list that nobody reads. */
 const DAYS_TOLD = 3
 
@@ -13,28 +11,28 @@ interface Clock {
 }
 
 /**
- * The best hours of the week in one or two sentences: by the forecast as far as that goes, then what is usual.
+ * The best hours of the week in one sentence: by the forecast as far as that goes, then what is usual.
  * @param hours of the least forgiving piece, best first, as the forecast has them
  * @param usual one hour a day past the forecast, best first; told as what is usual, never as a forecast
- * @returns empty where no hour is known of
+ * @returns null where nothing is known, or any hour will do: the strip of hours says that itself
  */
 export function bestHoursWords(
   hours: readonly BetterHour[],
   usual: readonly BetterHour[],
   clock: Clock,
-): string[] {
+): string | null {
+  if (hours.length > 0 && hours.every((hour) => hour.worst === 'fine')) return null
   const told = forecastWords(hours, clock)
-  if (hours.length > 0 && hours.every((hour) => hour.worst === 'fine')) return told
-  if (hours[0]?.worst === 'leave' && usual[0]?.worst === 'leave')
-    return ['No hour of the next two days is good for it, and as a rule none later this week.']
-  return [...told, ...usualWords(usual, hours.length > 0, clock)]
+  const later = usualWords(usual, clock)
+  if (told === null && later === null)
+    return usual.length > 0 ? 'As a rule no hour later this week is good for it either.' : null
+  return `Best hours this week: ${[told, later].filter((part) => part !== null).join('; ')}.`
 }
 
-function forecastWords(hours: readonly BetterHour[], clock: Clock): string[] {
+/** The stretch of like hours that the best one stands in; null where no hour is good. */
+function forecastWords(hours: readonly BetterHour[], clock: Clock): string | null {
   const [best] = hours
-  if (best === undefined) return []
-  if (best.worst === 'leave') return ['No hour of the next two days is good for it.']
-  if (hours.every((hour) => hour.worst === 'fine')) return ['Any hour of the next two days will do.']
+  if (best === undefined || best.worst === 'leave') return null
   const like = new Set(
     hours
       .filter((hour) => hour.worst === best.worst && hour.ifLitAt === best.ifLitAt)
@@ -45,10 +43,11 @@ function forecastWords(hours: readonly BetterHour[], clock: Clock): string[] {
   while (like.has(from - HOUR_MS)) from -= HOUR_MS
   while (like.has(until + HOUR_MS)) until += HOUR_MS
   const lit =
-    best.ifLitAt === null ? '' : `, if it is lit ${formatMoment(best.ifLitAt, clock.timeZone, clock.now)}`
-  const short = best.worst === 'keep-short' ? ', for a short stay' : ''
-  return [`Best hours in the next two days: ${spanWords(from, until, clock)}${lit}${short}.`]
+    best.ifLitAt === null ? '' : ` if it is lit ${formatMoment(best.ifLitAt, clock.timeZone, clock.now)}`
+  return `${spanWords(from, until, clock)}${lit}${shortWords(best)}`
 }
+
+const shortWords = ({ worst }: BetterHour): string => (worst === 'keep-short' ? ', for a short stay' : '')
 
 /** "tomorrow 10:00 to 14:00": hours to set out in, the last one with it. */
 function spanWords(from: number, until: number, { timeZone, now }: Clock): string {
@@ -60,18 +59,15 @@ function spanWords(from: number, until: number, { timeZone, now }: Clock): strin
   return `${start} to ${end}`
 }
 
-function usualWords(usual: readonly BetterHour[], isForecast: boolean, { timeZone }: Clock): string[] {
+function usualWords(usual: readonly BetterHour[], { timeZone }: Clock): string | null {
   const [best] = usual
-  if (best === undefined) return []
-  const after = isForecast ? 'Later this week' : 'This week'
-  if (best.worst === 'leave') return [`${after}, as a rule, no hour is good for it.`]
+  if (best === undefined || best.worst === 'leave') return null
   const days = usual
-    .filter((hour) => RANK[hour.worst] === RANK[best.worst])
+    .filter((hour) => hour.worst === best.worst)
     .slice(0, DAYS_TOLD)
     .toSorted((one, other) => one.startsAt.localeCompare(other.startsAt))
     .map((hour) => `${formatWeekday(hour.startsAt, timeZone)} from ${formatClock(hour.startsAt, timeZone)}`)
-  const short = best.worst === 'keep-short' ? ', for a short stay' : ''
-  return [`${after}, as a rule, ${listOf(days)}${short}: by the hours of the last week, not by a forecast.`]
+  return `as a rule ${listOf(days)}${shortWords(best)}, by the last week’s hours and no forecast`
 }
 
 const listOf = (words: readonly string[]): string =>

@@ -133,8 +133,8 @@ export const carryCheckAnswerSchema = z.object({
   keepsByHour: z.object({ number: z.string(), hours: z.array(keepsHourSchema) }).nullable(),
   /** The coming hours of the room, by the least forgiving piece, for the stay and cover asked about; null: air as told. */
   strip: hourStripSchema.nullable(),
-  /** The best hours of the week, a sentence each: by the forecast, then what is usual. */
-  bestHours: z.array(z.string()),
+  /** The best hours of the week in a sentence: by the forecast, then what is usual; null where the strip says it all. */
+  bestHours: z.string().nullable(),
   /** What the coming hours are taken from. */
   forecastNote: z.string(),
   cautions: z.array(z.string()),

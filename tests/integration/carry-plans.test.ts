@@ -4,8 +4,10 @@ import { putBackCarry, putOffCarry } from '@/app/_server/carry-put-off'
 import { startCarry } from '@/app/_server/carry-steps'
 import { getNow } from '@/app/_server/now'
 import type { SiteMember } from '@/db/queries/members'
+import { insertForecast } from '@/db/queries/forecasts'
 import { listNoticeSites } from '@/db/queries/notice-state'
 import { newCarrySchema } from '@/lib/carry/carry'
+import { FORECAST_HOURS } from '@/lib/forecast/room-forecast'
 import { loadNoticeInputs } from '@/workers/notices/inputs'
 import { createTestDatabase, type TestDatabase } from '../support/database'
 import { hoursAfter, makeYard, valueOf, type Yard } from '../support/yard'
@@ -97,6 +99,26 @@ describe('a plan for whatever is taken', () => {
   })
 })
 
+function forecastDryFrom({ yard }: Place, hour: number): Promise<void> {
+  const all = <Value>(value: Value) => Array.from({ length: FORECAST_HOURS }, () => value)
+  const emcPct = all(14).map((damp, n) => (n < hour ? damp : 8.5))
+  return insertForecast(database.db, yard.siteId, yard.shop.roomId, {
+    madeAt: now.getTime(),
+    temperatureC: all(9),
+    humidityPct: all(60),
+    emcPct,
+    emcPctLow: emcPct.map((value) => value - 0.3),
+    emcPctHigh: emcPct.map((value) => value + 0.3),
+    method: all('record' as const),
+    recordPct: emcPct,
+    sameAsNowPct: 14,
+    yesterdayPct: all(null),
+    usesOutdoors: false,
+    usesLastYear: false,
+    warmed: null,
+  })
+}
+
 describe('putting a plan off', () => {
   const from = at(4)
   const plan = async (place: Place) => {
@@ -128,6 +150,21 @@ describe('putting a plan off', () => {
     const carry = await plan(place)
     const none = await putOffCarry(database.db, place.maker, carry.id, { from }, now)
     expect(none).toMatchObject({ ok: false, error: { code: 'not-possible' } })
+  })
+
+  it('goes to the best hour that the forecast knows of, where none was named', async () => {
+    const place = await newPlace()
+    const box = await place.yard.box('432', { fitGrade: 'snap', jointDiameterMm: 90, wallMm: 2 })
+    // The shop is to be as dry as the house from hour 24 of the forecast on.
+    await forecastDryFrom(place, 24)
+    const asked = { takesWhatever: false, pieceIds: [box.code], stayMinutes: 120 }
+    const carry = await planWhatever(place, asked)
+    expect(carry.worst).toBe('leave')
+    const off = valueOf(await putOffCarry(database.db, place.maker, carry.id, { from }, now))
+    expect(Date.parse(off.plannedAt)).toBeGreaterThanOrEqual(Date.parse(at(24)))
+    expect(Date.parse(off.plannedAt)).toBeLessThan(Date.parse(at(48)))
+    expect(off.putOffFrom).toBe(from)
+    expect(off.worst).not.toBe('leave')
   })
 
   it('can be taken back for ten minutes', async () => {

@@ -18,7 +18,7 @@ type KeepsByHourProps = {
   now: Date
 }
 
-const PLOT = { left: 44, top: 44, bottom: 160 }
+const PLOT = { left: 58, top: 44, bottom: 160 }
 const HEIGHT = 186
 const FINE_MARGIN_MINUTES = 30
 
@@ -91,26 +91,45 @@ export function KeepsByHour({ number, hours, stayMinutes, betterAt, timeZone, no
                 {asItIs ? <rect {...bar(asItIs, index)} fill="var(--ink-soft)" /> : null}
               </g>
             ))}
+            {scaleSteps(most)
+              .slice(1)
+              .map((minutes) => (
+                <path
+                  key={minutes}
+                  d={`M${String(PLOT.left)} ${String(y(minutes))}H${String(width)}`}
+                  stroke="var(--line)"
+                />
+              ))}
             {stayMinutes <= most ? (
-              <path
-                d={`M${String(PLOT.left)} ${String(y(stayMinutes))}H${String(width)}`}
-                stroke="var(--ink)"
-                strokeWidth="1.5"
-                strokeDasharray="5 4"
-              />
+              <>
+                <path
+                  d={`M${String(PLOT.left)} ${String(y(stayMinutes))}H${String(width)}`}
+                  stroke="var(--ink)"
+                  strokeWidth="1.5"
+                  strokeDasharray="5 4"
+                />
+                <text
+                  className="halo"
+                  x={PLOT.left + 4}
+                  y={y(stayMinutes) - 6}
+                  fontWeight="600"
+                  fill="var(--ink)"
+                >
+                  {formatDuration(stayMinutes)}, as planned
+                </text>
+              </>
             ) : null}
-            <text
-              className="halo"
-              x={PLOT.left + 4}
-              y={y(stayMinutes) - 6}
-              fontWeight="600"
-              fill="var(--ink)"
-            >
-              {formatDuration(stayMinutes)}, as planned
-            </text>
-            <text x={PLOT.left - 8} y={PLOT.bottom + 4} textAnchor="end" fill="var(--ink-soft)">
-              0
-            </text>
+            {scaleSteps(most).map((minutes) => (
+              <text
+                key={minutes}
+                x={PLOT.left - 8}
+                y={y(minutes) + 4}
+                textAnchor="end"
+                fill="var(--ink-soft)"
+              >
+                {minutes === 0 ? '0' : formatDuration(minutes)}
+              </text>
+            ))}
             {better >= 0 ? (
               <path
                 d={`M${String(x(better) + step / 2 - 6)} ${String(PLOT.top - 14)}h12l-6 9z`}
@@ -141,6 +160,15 @@ function scaleMinutes(hours: readonly KeepsHour[], stayMinutes: number): number 
   return longest < stayMinutes / 3
     ? Math.ceil(Math.max(20, 1.3 * longest) / 10) * 10
     : stayMinutes + FINE_MARGIN_MINUTES
+}
+
+const STEPS_MINUTES = [10, 20, 30, 60, 120, 240, 480, 1440, 2880, 10_080] as const
+const STEPS_MAX = 3
+
+/** From nothing up in even steps, three at most. */
+function scaleSteps(most: number): number[] {
+  const step = STEPS_MINUTES.find((minutes) => most / minutes < STEPS_MAX + 1) ?? most
+  return Array.from({ length: Math.floor(most / step) + 1 }, (_, n) => n * step)
 }
 
 function keepsWords(hour: KeepsHour | undefined): string {

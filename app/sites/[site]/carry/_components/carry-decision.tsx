@@ -81,10 +81,13 @@ export function CarryDecision(props: CarryDecisionProps) {
             else create.act(bodyOf(request, mode, false))
           }}
         >
-          {goWords(mode, isLogged, isBad)}
+          {goWords(request.pieceIds.length, mode, isLogged, isBad)}
         </Button>
         {isBad && !isBestOther ? (
-          <p className="text-label text-ink-soft">Best left where it is. Nothing needs pressing for that.</p>
+          <p className="text-label text-ink-soft">
+            Best left where {request.pieceIds.length === 1 ? 'it is' : 'they are'}. Nothing needs pressing for
+            that.
+          </p>
         ) : null}
       </PageActions>
       <AgainstAdvice
@@ -109,10 +112,11 @@ export function CarryDecision(props: CarryDecisionProps) {
   )
 }
 
-function goWords(mode: 'now' | 'plan', isLogged: boolean, isBad: boolean): string {
+function goWords(count: number, mode: 'now' | 'plan', isLogged: boolean, isBad: boolean): string {
+  const them = count === 1 ? 'it' : 'them'
   if (mode === 'plan') return isBad ? 'Plan it as asked' : 'Plan it'
-  if (isLogged) return 'Log it as out'
-  return isBad ? 'Take it out as asked' : 'Take it out now'
+  if (isLogged) return `Log ${them} as out`
+  return isBad ? `Take ${them} out as asked` : `Take ${them} out now`
 }
 
 /** The verdict against it and its reason, for each piece that should stay. */

@@ -26,9 +26,7 @@ export function HoursSheet({
         units={reader.units}
         now={now}
       />
-      {bestHours.length > 0 ? (
-        <p className="mt-3 max-w-words border-t border-line pt-3">{bestHours.join(' ')}</p>
-      ) : null}
+      {bestHours ? <p className="mt-3 max-w-words font-semibold">{bestHours}</p> : null}
     </Sheet>
   )
 }
