@@ -38,6 +38,15 @@ describe('what a strip of hours comes to in words', () => {
     )
   })
 
+  it('says once how long a short stay is tolerable where that is all the time', () => {
+    expect(words('forecast', cells(from(0, 47, 'tolerable')))).toBe(
+      'Tolerable for a short stay now and for the 48 hours to come; none of them is fit.',
+    )
+    expect(words('forecast', cells(from(0, 2, 'tolerable')))).toBe(
+      'Not fit in the next 48 hours; tolerable for a short stay now until 16:00.',
+    )
+  })
+
   it('promises nothing of a room whose warmings are not on record', () => {
     expect(words('forecast', cells({}, from(21, 25, 'fit')))).not.toContain('light it')
   })

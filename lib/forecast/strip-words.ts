@@ -67,6 +67,8 @@ export function stripWords(strip: Pick<HourStrip, 'kind' | 'cells' | 'lit'>, clo
       ? say`Fit as it is ${strong(runWords(fit, clock))}.`
       : say`Fit as it is ${strong(runWords(fit, clock))}; ${ifLit}.`
   if (ifLit !== null) return say`Fit ${ifLit}. As it is, not in the next 48 hours.`
+  if (tolerable?.isToEnd === true && tolerable.from <= clock.now.getTime())
+    return say`${strong('Tolerable for a short stay')} now and for the 48 hours to come; none of them is fit.`
   return tolerable === undefined
     ? say`${strong('Not fit')} for finished boxes in the next 48 hours.`
     : say`${strong('Not fit')} in the next 48 hours; tolerable for a short stay ${strong(runWords(tolerable, clock))}.`

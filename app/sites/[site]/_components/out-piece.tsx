@@ -144,7 +144,7 @@ function leftWords({ check }: CarryPiece, { timeZone }: Reader, now: Date): stri
   const words: string[] = []
   if (check.earlyAt !== null) {
     const minutes = (new Date(check.earlyAt).getTime() - now.getTime()) / 60_000
-    if (minutes > 0 && minutes <= 24 * 60) words.push(`About ${formatDuration(minutes)} left`)
+    if (minutes >= 1 && minutes <= 24 * 60) words.push(`About ${formatDuration(minutes)} left`)
   }
   if (check.middleAt !== null && new Date(check.middleAt) > now) {
     words.push(`more likely good until about ${formatMoment(check.middleAt, timeZone, now)}`)
