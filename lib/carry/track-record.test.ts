@@ -2,7 +2,14 @@ import { describe, expect, it } from 'vitest'
 import { UNLEARNED_PACE } from '@/lib/follow/learned-pace'
 import { plainText } from '@/lib/format/sentence'
 import type { Turned } from '@/lib/pieces/outcome'
-import { expectedTurn, paceWords, trackHeadline, type TrackPoint, trackRecord } from './track-record'
+import {
+  expectedTurn,
+  paceWords,
+  trackHeadline,
+  type TrackPoint,
+  trackRecord,
+  usedInWords,
+} from './track-record'
 
 let day = 1
 const point = (turned: Turned, usedMiddle: number, over: Partial<TrackPoint> = {}): TrackPoint => ({
@@ -57,5 +64,16 @@ describe('how good the verdicts were', () => {
     expect(paceWords('medium', { ...UNLEARNED_PACE, factor: 1.2, logSpread: 0.5, outcomes: 6 })).toMatch(
       /about 1\.2 × as quickly.*from 6 carries\. For one piece, 8 chances in 10 lie between 0\.6 and 2\.3 ×/,
     )
+  })
+})
+
+describe('allowance used, in words', () => {
+  it('is told in words up to all of it, and in times past that', () => {
+    expect([0.02, 0.5, 1, 1.84].map(usedInWords)).toEqual([
+      'hardly any used',
+      'about half used',
+      'about all used',
+      'about 1.8 times all of it',
+    ])
   })
 })

@@ -1,7 +1,7 @@
 import { z } from 'zod'
 import { EDGE_OF_EIGHT_IN_TEN } from '@/lib/doubt/spread'
 import { BINDS_FROM, FELT_FROM, type Pace } from '@/lib/follow/learned-pace'
-import { formatCount } from '@/lib/format/figures'
+import { formatCount, formatUsed } from '@/lib/format/figures'
 import { say, strong, type TextPart } from '@/lib/format/sentence'
 import { learnedWords } from '@/lib/pieces/learned-words'
 import { type Turned, turnedSchema } from '@/lib/pieces/outcome'
@@ -53,6 +53,13 @@ export type TrackRecord = z.infer<typeof trackRecordSchema>
 /** What a hand would feel at so much of the allowance; the same levels as the learning goes by. */
 export const expectedTurn = (used: number): Exclude<Turned, 'looser'> =>
   used < FELT_FROM ? 'as-before' : used < BINDS_FROM ? 'tighter' : 'binds'
+
+/** "about half used", "about 1.8 times all of it": what the model had used of an allowance, in words. */
+export function usedInWords(used: number): string {
+  if (used > 1.02) return `about ${used.toFixed(1)} times all of it`
+  const words = formatUsed(used)
+  return words.startsWith('hardly') ? words : `about ${words}`
+}
 
 const STEPS: readonly Turned[] = ['looser', 'as-before', 'tighter', 'binds']
 

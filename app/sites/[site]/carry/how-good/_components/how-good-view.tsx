@@ -89,7 +89,8 @@ function Told({ title, counts, children }: { title: string; counts: TurnedCounts
   return (
     <div className="py-4 first:pt-0 last:pb-0">
       <dt className="font-semibold">
-        {title}: {formatCount(counts.all, 'lid')}
+        {title}
+        {counts.all > 0 ? `: ${formatCount(counts.all, 'lid')}` : ''}
       </dt>
       <dd>
         {counts.all === 0 ? <p>None so far.</p> : <p>{countWords(counts)}</p>}
@@ -112,7 +113,11 @@ function countWords(counts: TurnedCounts): string {
 
 function agreementWords({ agreement, points }: TrackRecord): string {
   const { same, oneOff, further } = agreement
-  return `What the reckoning would have had felt was felt by ${String(same)} of ${formatCount(points.length, 'lid')}; ${String(oneOff)} lay one step off and ${String(further)} further.`
+  const off = [
+    ...(oneOff > 0 ? [`${String(oneOff)} ${oneOff === 1 ? 'was' : 'were'} one step off`] : []),
+    ...(further > 0 ? [`${String(further)} further`] : []),
+  ].join(' and ')
+  return `${String(same)} of ${formatCount(points.length, 'lid')} turned as the reckoning had it${off === '' ? '' : `; ${off}`}.`
 }
 
 const untestedWords = ({ untested }: TrackRecord): string =>

@@ -17,6 +17,8 @@ const TOP = 8
 const LEFT = 84
 const RIGHT = 16
 const AXIS = 44
+/** So many marks stand side by side in a row before they lie on one another. */
+const LANES = 5
 /** What lies further out stands at the edge. */
 const USED_MAX = 2.5
 
@@ -53,7 +55,7 @@ export function TrackFigure({ points }: { points: readonly TrackPoint[] }) {
               </text>
               {inRow.map((point, n) => {
                 // Side by side where several would lie on one another.
-                const at = y + ((n % 5) - 2) * 8
+                const at = y + ((n % LANES) - (Math.min(LANES, inRow.length) - 1) / 2) * 8
                 return (
                   <g key={`${point.carryId} ${point.pieceId}`}>
                     <line

@@ -1,7 +1,6 @@
 import { DataTable } from '@/app/_components/ui/data-table'
 import { TextLink } from '@/app/_components/ui/text-link'
-import type { TrackPoint } from '@/lib/carry/track-record'
-import { formatUsed } from '@/lib/format/figures'
+import { type TrackPoint, usedInWords } from '@/lib/carry/track-record'
 import { formatMoment } from '@/lib/format/times'
 import { turnedWords } from '@/lib/pieces/outcome'
 import type { Reader } from '@/lib/sites/reader'
@@ -37,11 +36,9 @@ export function TrackTable({ points, reader }: { points: readonly TrackPoint[]; 
           phone: 'line',
           cell: (point) => (point.isAgainstAdvice ? 'leave it where it is' : 'it may go'),
         },
-        { id: 'used', header: 'Allowance', phone: 'line', cell: (point) => usedWords(point) },
+        { id: 'used', header: 'Allowance', phone: 'line', cell: (point) => usedInWords(point.usedMiddle) },
         { id: 'turned', header: 'The lid', phone: 'line', cell: (point) => turnedWords[point.turned] },
       ]}
     />
   )
 }
-
-const usedWords = ({ usedMiddle }: TrackPoint): string => `about ${formatUsed(usedMiddle)}`
