@@ -200,7 +200,7 @@ export async function previewOfRule(
   return ok({
     rule: asked.rule,
     by: preview.by,
-    words: previewWords(preview, days, { timeZone: member.timeZone, now }),
+    words: previewWords(preview, days),
     from: new Date(now.getTime() - previewDays * dayMs).toISOString(),
     to: now.toISOString(),
     moments: preview.moments.map(({ at, of }) => ({ at: new Date(at).toISOString(), of })),
