@@ -42,7 +42,7 @@ describe('what is out, by the door', () => {
     expect(
       shown.map(({ number, words, clock: at, minutesLeft }) => [number, words, at, minutesLeft]),
     ).toEqual([
-      ['203', 'bring in now: it was due by', '12:50', 0],
+      ['203', 'bring in now, due', '12:50', 0],
       ['207', 'bring in by', '13:15', 15],
       ['221', 'keeps its fit until', '18:00', 300],
       ['209', 'keeps its fit for now', '', null],

@@ -55,7 +55,7 @@ function doorPiece(carry: DoorCarry, piece: DoorCarryPiece, { timeZone, now }: C
       : { ...own, state: 'fine', words: 'keeps its fit for now', clock: '' }
   }
   const clock = moment(new Date(due))
-  if (now.getTime() >= due) return { ...own, state: 'overdue', words: 'bring in now: it was due by', clock }
+  if (now.getTime() >= due) return { ...own, state: 'overdue', words: 'bring in now, due', clock }
   if (piece.check?.kind === 'unknown')
     return { ...own, state: 'unknown', words: 'air not known: bring in by', clock }
   if (piece.check?.kind !== 'verdict') return { ...own, state: 'words', words: 'planned back by', clock }

@@ -11,9 +11,11 @@ export type StripSize = 'page' | 'door'
 
 const SIZES = {
   page: { font: 14, letter: 7.5, high: 46, head: 24, foot: 24, gap: 1.5, hatch: 6, line: 1.5, tick: 6 },
-  door: { font: 30, letter: 16, high: 118, head: 44, foot: 48, gap: 4, hatch: 13, line: 4, tick: 12 },
+  door: { font: 30, letter: 16, high: 88, head: 44, foot: 48, gap: 4, hatch: 13, line: 4, tick: 12 },
 }
 
+/** Room for the word "now" on the screen by the door, before a midnight that is near. */
+const NOW_WIDTH = 66
 const GUESS = { page: 358, door: 1200 }
 
 type HourStripFigureProps = {
@@ -58,12 +60,26 @@ export function HourStripFigure({
           <Hatch id={ids.fit} colour="var(--good)" gap={hatch} width={line} />
           <Hatch id={ids.tolerable} colour="var(--mid)" gap={hatch} width={line} />
         </defs>
+        {size === 'door' ? (
+          <g fill="var(--heart)">
+            <rect x={0} y={font + 10} width={7} height={bottom - font - 10} />
+            <text x={0} y={font} fontWeight="600">
+              now
+            </text>
+          </g>
+        ) : null}
         {days.map(({ index, label, isMidnight }) => (
-          <g key={index}>
+          // On the screen by the door the first hour is told as now, and its day stands in the head.
+          <g key={index} className={size === 'door' && index === 0 ? 'hidden' : undefined}>
             {isMidnight && index > 0 ? (
               <path d={`M${String(index * step)} 0V${String(bottom)}`} stroke="var(--edge)" />
             ) : null}
-            <text x={index * step + (index === 0 ? 0 : 6)} y={font} fontWeight="600" fill="var(--ink)">
+            <text
+              x={Math.max(index * step + (index === 0 ? 0 : 6), size === 'door' ? NOW_WIDTH : 0)}
+              y={font}
+              fontWeight="600"
+              fill="var(--ink)"
+            >
               {label}
             </text>
           </g>

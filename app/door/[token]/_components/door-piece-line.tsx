@@ -10,7 +10,7 @@ export function DoorPieceLine({ piece, isFirst = false }: { piece: DoorPiece; is
   return (
     <li
       className={classNames(
-        'grid grid-cols-[auto_minmax(0,1fr)_auto] items-center gap-x-8 border-b-2 border-edge py-3',
+        'grid grid-cols-[auto_minmax(0,1fr)_auto] items-center gap-x-8 border-b-2 border-edge py-2',
         presses && '-mx-6 border-l-[16px] border-l-warn pr-6 pl-2 sm:-mx-10 sm:pr-10 sm:pl-6',
       )}
     >
