@@ -17,6 +17,9 @@ import { may } from '@/lib/sites/permissions'
 import type { Reader } from '@/lib/sites/reader'
 import { DeliveryFold } from './delivery-fold'
 
+/** After so long nobody can take in hand any more what it was about. */
+const inHandWithinMs = 48 * 3_600_000
+
 /** Where a notice leads, in words. */
 const linkWords: Readonly<Record<Rule, string>> = {
   'planned-carry': 'Open the carry',
@@ -54,6 +57,7 @@ export function NoticeLine({ reader, notice }: { reader: Reader; notice: Notice 
     invalidates,
   })
   const moment = (at: string) => formatMoment(at, reader.timeZone, new Date(reader.at))
+  const isRecent = new Date(reader.at).getTime() - new Date(notice.at).getTime() < inHandWithinMs
   const mayAcknowledge = may(reader.role, 'notices:acknowledge')
   // What was seen and asks nothing any more is one line in the list; the rest of it is a press away.
   const isPast = !isFresh(notice) && notice.asks.length === 0
@@ -111,7 +115,8 @@ export function NoticeLine({ reader, notice }: { reader: Reader; notice: Notice 
         {mayAcknowledge &&
         notice.acknowledgedAt === null &&
         notice.asks.length === 0 &&
-        notice.urgency !== 'whenever' ? (
+        notice.urgency !== 'whenever' &&
+        isRecent ? (
           <Button
             pending={change.pending}
             onClick={() => {
