@@ -8,9 +8,8 @@ import type { SiteMember } from '@/db/queries/members'
 import { inTransaction } from '@/db/queries/transaction'
 import { listWhateverCandidates } from '@/db/queries/whatever'
 import type { Database } from '@/db/schema'
-import { betterHours } from '@/lib/carry/better-hours'
 import type { Carry, CarryPutOff } from '@/lib/carry/carry'
-import { hourToPutOffTo } from '@/lib/carry/put-off'
+import { betterHourOfPlan } from '@/lib/carry/put-off'
 import { isCandidate, whateverJudged } from '@/lib/carry/whatever'
 import { undoPutOffMs } from '@/lib/notices/policy'
 import { getCarry } from './carries'
@@ -81,8 +80,7 @@ async function betterHourOf(
   const pieceIds = carry.takesWhatever
     ? whateverJudged(material, standing, { ...stay, startsAt }).pieces.map(({ pieceId }) => pieceId)
     : named
-  const hours = betterHours(material, { ...stay, pieceIds })
-  return hourToPutOffTo(hours, startsAt)
+  return betterHourOfPlan(material, { ...stay, pieceIds }, startsAt)
 }
 
 /** Takes a put-off back, within ten minutes, as long as it has not been changed since. */

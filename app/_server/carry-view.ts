@@ -10,6 +10,7 @@ import type { Carry, CarryPiece } from '@/lib/carry/carry'
 import type { PieceCheck } from '@/lib/carry/carry-check'
 import { checkPiece } from '@/lib/carry/judge'
 import type { CarryMaterial } from '@/lib/carry/material'
+import { betterHourOfPlan } from '@/lib/carry/put-off'
 import { isTooFarAhead, repeatWords } from '@/lib/carry/repeat'
 import { carryHeadline, worstOf } from '@/lib/carry/summary'
 import { type WhateverJudged, whateverJudged, whateverWords } from '@/lib/carry/whatever'
@@ -137,6 +138,24 @@ function viewPiece(
   }
 }
 
+/** A plan that is not fine as it stands may be put off: to where the forecast sees better. */
+function betterAt(
+  carry: CarryRecord,
+  judged: readonly { part: CarryPieceRecord; check: PieceCheck | null }[],
+  material: CarryMaterial,
+): Date | undefined {
+  if (carry.state !== 'planned') return undefined
+  const isPoor = judged.some(({ check }) => check?.kind === 'verdict' && check.verdict !== 'fine')
+  if (!isPoor) return undefined
+  const asked = {
+    pieceIds: judged.map(({ part }) => part.pieceId),
+    toRoomId: carry.toRoom.roomId,
+    stayMinutes: carry.stayMinutes,
+    cover: carry.cover,
+  }
+  return betterHourOfPlan(material, asked, carry.plannedAt)
+}
+
 function viewCarry(
   carry: CarryRecord,
   pieces: ReadonlyMap<number, PieceRecord>,
@@ -173,6 +192,7 @@ function viewCarry(
     takesWhatever: carry.takesWhatever && carry.state === 'planned',
     whatever: told ?? null,
     repeat: carry.repeat === null ? null : { id: carry.repeat.code, words: repeatWords(carry.repeat) },
+    betterAt: betterAt(carry, judged, material)?.toISOString() ?? null,
     putOffFrom: carry.putOffFrom?.toISOString() ?? null,
     canPutBack:
       carry.state === 'planned' &&

@@ -109,6 +109,8 @@ export const carrySchema = z.object({
   /** The plan that comes again which it is one of: "every Tuesday at 09:00". */
   repeat: z.object({ id: z.string(), words: z.string() }).nullable(),
   /** The hour that it was put off from; it can be put back for 10 minutes. */
+  /** The better hour that one press puts a plan off to; null where none is known or none is needed. */
+  betterAt: instant.nullable(),
   putOffFrom: instant.nullable(),
   canPutBack: z.boolean(),
   /** The most pressing thing about it. */

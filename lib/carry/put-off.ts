@@ -1,5 +1,6 @@
-import type { BetterHour } from './better-hours'
+import { type BetterHour, type BetterHoursAsked, betterHours, leastForgiving } from './better-hours'
 import type { Verdict } from './carry-check'
+import type { CarryMaterial } from './material'
 
 const RANK: Readonly<Record<Verdict, number>> = { fine: 0, 'keep-short': 1, leave: 2 }
 
@@ -34,4 +35,20 @@ function nearest(hours: readonly BetterHour[], at: Date): BetterHour | undefined
   const away = (hour: BetterHour): number => Math.abs(new Date(hour.startsAt).getTime() - at.getTime())
   const [first] = hours.toSorted((a, b) => away(a) - away(b))
   return first !== undefined && away(first) < HOUR_MS ? first : undefined
+}
+
+/**
+ * The hour that one press would put a plan off to. The hours are gone through with the piece that is least forgiving at
+ * the hour planned.
+ * @returns undefined where the forecast knows of no better one, or where nothing can be judged
+ */
+export function betterHourOfPlan(
+  material: CarryMaterial,
+  asked: BetterHoursAsked,
+  plannedAt: Date,
+): Date | undefined {
+  const startsAt = new Date(Math.max(plannedAt.getTime(), material.now.getTime()))
+  const least = leastForgiving(material, asked, startsAt.getTime())
+  if (least === undefined) return undefined
+  return hourToPutOffTo(betterHours(material, { ...asked, pieceIds: [least.pieceId] }), startsAt)
 }

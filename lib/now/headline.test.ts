@@ -79,6 +79,7 @@ const carry = (
   whatever: null,
   repeat: null,
   putOffFrom: null,
+  betterAt: null,
   canPutBack: false,
 })
 const plan = (worst: Carry['worst'], check: PieceCheck, plannedAt?: string) =>

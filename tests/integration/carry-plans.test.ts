@@ -161,6 +161,8 @@ describe('putting a plan off', () => {
     const carry = await planWhatever(place, asked)
     expect(carry.worst).toBe('leave')
     const off = valueOf(await putOffCarry(database.db, place.maker, carry.id, { from }, now))
+    // The button names the very hour that a press goes to.
+    expect(off.plannedAt).toBe(carry.betterAt)
     expect(Date.parse(off.plannedAt)).toBeGreaterThanOrEqual(Date.parse(at(24)))
     expect(Date.parse(off.plannedAt)).toBeLessThan(Date.parse(at(48)))
     expect(off.putOffFrom).toBe(from)

@@ -74,7 +74,13 @@ export function PlannedSheet({ carry, reader, now, isOwnPage = false }: PlannedS
               <StartCarry carry={carry} start={actions.start} isSoon={minutes <= 120} />
             )}
             {isShort && !carry.canPutBack ? (
-              <PutOff carry={carry} actions={actions} isBest={carry.worst === 'leave'} />
+              <PutOff
+                carry={carry}
+                actions={actions}
+                isBest={carry.worst === 'leave'}
+                timeZone={reader.timeZone}
+                now={now}
+              />
             ) : null}
             {carry.worst === 'leave' && carry.cover !== 'bagged' && !carry.takesWhatever ? (
               <Button
@@ -87,7 +93,7 @@ export function PlannedSheet({ carry, reader, now, isOwnPage = false }: PlannedS
                   })
                 }}
               >
-                Plan it bagged
+                Plan {carry.pieces.length === 1 ? 'it' : 'them'} bagged
               </Button>
             ) : null}
             <ChangePlan carry={carry} actions={actions} timeZone={reader.timeZone} now={now} />

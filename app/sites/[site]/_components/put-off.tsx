@@ -6,10 +6,11 @@ import type { Carry } from '@/lib/carry/carry'
 import { formatMoment } from '@/lib/format/times'
 import type { CarryActions } from './use-carry-actions'
 
-type PutOffProps = { carry: Carry; actions: CarryActions; isBest: boolean }
+type PutOffProps = { carry: Carry; actions: CarryActions; isBest: boolean; timeZone: string; now: Date }
 
 /** One press puts a plan off to the better hour that the forecast knows of. */
-export function PutOff({ carry, actions, isBest }: PutOffProps) {
+export function PutOff({ carry, actions, isBest, timeZone, now }: PutOffProps) {
+  if (carry.betterAt === null) return null
   return (
     <Button
       variant={isBest ? 'filled' : 'second'}
@@ -18,7 +19,7 @@ export function PutOff({ carry, actions, isBest }: PutOffProps) {
         actions.putOff.act({ carryId: carry.id, from: carry.plannedAt })
       }}
     >
-      Put off to the better hour
+      Put off to {formatMoment(carry.betterAt, timeZone, now)}
     </Button>
   )
 }
