@@ -56,8 +56,9 @@ function mailOf(route: MailRoute, { due, messageId, group }: Message) {
   const [first] = due
   const { siteId, userId } = group
   const rules = new Set(due.map(({ rule }) => rule))
-  // Pressed in the mail program, it ends mails like this one; with several rules in one mail, it ends them all.
-  const rule = rules.size === 1 ? (first?.rule ?? null) : null
+  // Pressed in the mail program, it ends mails like this one; with several rules in one mail, or a test, it ends them all.
+  const [only = null] = rules
+  const rule = rules.size === 1 && only !== 'test' ? only : null
   const token = signLink(route.authSecret, { kind: 'unsubscribe', siteId, userId, rule })
   const mail = noticeMail(
     due.map((one) => ({

@@ -54,7 +54,7 @@ export function AnswerLinkView({ token, initial }: { token: string; initial: Lin
                 ? 'This link has run out. Sign in and answer on the page Notices.'
                 : press.done
                   ? 'It is set down. Thank you.'
-                  : 'Already done.'}
+                  : 'It was answered already. Nothing more needs to be done.'}
             </p>
           )}
           {press.error ? (

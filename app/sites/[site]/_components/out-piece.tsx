@@ -109,9 +109,9 @@ export function OutPiece({ carry, piece, reader, now, isFirst = false }: OutPiec
             {isShut ? (
               coverVerb
             ) : (
-              <>
+              <span>
                 Bagged<span className="max-sm:hidden">, still out</span>
-              </>
+              </span>
             )}
           </Button>
         </div>
