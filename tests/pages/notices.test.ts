@@ -65,7 +65,7 @@ describe('a notice that asks', () => {
     await reader.page.getByRole('button', { name: 'Going now' }).click()
     await reader.page.getByText('It is set down.').waitFor()
     await reader.page.goto(link)
-    await reader.page.getByText('Already done.').waitFor()
+    await reader.page.getByText('It was answered already.').waitFor()
     await reader.page.getByText(/^You said they are going, /).waitFor()
     expect(reader.complaints).toEqual([])
     await reader.close()
