@@ -2,7 +2,7 @@ import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import type { PieceCheck } from '@/lib/carry/carry-check'
 import type { NoticeAnswer, NoticeCarry, NoticeInputs } from './inputs'
-import { at, daysBefore, Ledger, room, yard, yardSite } from './test-yard'
+import { at, daysBefore, Ledger, room, yard, yardSite } from '@/tests/support/notice-yard'
 
 const minute = 60_000
 const outAt = at('2026-03-05T11:58:00Z')

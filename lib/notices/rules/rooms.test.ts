@@ -1,7 +1,16 @@
 import { describe, expect, it } from 'vitest'
 import { daysAfter } from '@/lib/climate/days'
 import type { NoticeRoom } from '../surroundings'
-import { daysBefore, hoursBefore, Ledger, morningOf, room, rulesOf, yard, yardSite } from '../test-yard'
+import {
+  daysBefore,
+  hoursBefore,
+  Ledger,
+  morningOf,
+  room,
+  rulesOf,
+  yard,
+  yardSite,
+} from '@/tests/support/notice-yard'
 
 const firstOn = '2026-03-05'
 const house = { temperatureC: 20, humidityPct: 45 }

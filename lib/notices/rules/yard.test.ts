@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import type { NoticeSensor } from '../inputs'
 import type { NoticeBlank, NoticeStrip, NoticeTub, RestingBox, StripKind } from '../surroundings'
-import { at, Ledger, rulesOf, yard } from '../test-yard'
+import { at, Ledger, rulesOf, yard } from '@/tests/support/notice-yard'
 
 const hourMs = 3_600_000
 const dayMs = 24 * hourMs

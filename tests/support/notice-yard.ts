@@ -1,8 +1,8 @@
 import { dayOfInstant, daysAfter, startOfDayAt } from '@/lib/climate/days'
 import { emcOfReadingPct } from '@/lib/wood/emc'
-import { decideNotices } from './decide'
-import type { KnownEpisode, NoticeAnswer, NoticeInputs, NoticeState, VerdictHold } from './inputs'
-import type { NoticeRoom, RoomDay, Surroundings } from './surroundings'
+import { decideNotices } from '@/lib/notices/decide'
+import type { KnownEpisode, NoticeAnswer, NoticeInputs, NoticeState, VerdictHold } from '@/lib/notices/inputs'
+import type { NoticeRoom, RoomDay, Surroundings } from '@/lib/notices/surroundings'
 
 /** A yard for the tests of the rules, and a worker that keeps what it told as the database does. */
 
