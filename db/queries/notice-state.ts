@@ -60,7 +60,10 @@ const answerSchema = z.enum(['in', 'going', 'cant', 'later', 'nothing'])
 export async function takeSiteForNotices(trx: Transaction<Database>, siteId: number): Promise<boolean> {
   const { rows } = await sql<{ taken: boolean }>`
     select pg_try_advisory_xact_lock(hashtext('lidfast notices'), ${siteId}) as taken`.execute(trx)
-  return rows[0]?.taken ?? false
+  if (rows[0]?.taken !== true) return false
+  // Held before anything else is: a site that is being deleted waits for us, or we find it gone, and neither for ever.
+  const site = await sql`select 1 from site where id = ${siteId} for key share`.execute(trx)
+  return site.rows.length > 0
 }
 
 export async function loadNoticeState(db: Kysely<Database>, siteId: number, now: Date): Promise<NoticeState> {

@@ -131,6 +131,18 @@ describe('a push', () => {
     expect(shown()).toMatchObject([{ title: 'One.', body: 'And 3 more, on the page Notices.' }])
   })
 
+  it('reaches the other phone where one gave a key that nothing can be sealed to, and asks that one no more', async () => {
+    const broken = { p256dh: 'B'.repeat(87), auth: phone.keys.auth }
+    const endpoint = `${trap.origin}/push/broken`
+    await savePhone(database.db, { userId: maker, endpoint, ...broken, device: 'a tablet' }, now)
+    await tell('Bring 207 in now.')
+    expect(await pushPerson(database.db, route, maker, now)).toBe(1)
+    expect(shown()).toHaveLength(1)
+    const phones = await listPhones(database.db, maker)
+    expect(phones.find((one) => one.endpoint === endpoint)?.goneAt).not.toBeNull()
+    expect(phones.find((one) => one.endpoint !== endpoint)?.goneAt).toBeNull()
+  })
+
   it('makes no sound during a session at work', async () => {
     await saveSettings(database.db, site.siteId, maker, { sessionUntil: later(60) })
     await tell('Bring 207 in now.')

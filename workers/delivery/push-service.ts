@@ -76,6 +76,9 @@ export function createPushService({ contact, vapid, trap }: PushServiceOptions):
 }
 
 function answerOf(error: unknown): PushAnswer {
+  // A key that nothing can be sealed to stays so: that phone is lost, and must not hold up the others.
+  if (error instanceof Error && 'code' in error && String(error.code).startsWith('ERR_CRYPTO'))
+    return { kind: 'gone' }
   if (!(error instanceof WebPushError))
     return { kind: 'failed', error: error instanceof Error ? error.message : String(error) }
   const { statusCode } = error
