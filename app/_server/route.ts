@@ -245,6 +245,10 @@ function guarded(work: (request: Request, params: unknown) => Promise<Reply>): R
 async function failureOf(error: unknown, request: Request): Promise<Failure> {
   const { method } = request
   const path = new URL(request.url).pathname
+  if (request.signal.aborted) {
+    log().debug({ method, path }, 'the browser went away before its answer')
+    return fail('went-wrong').error
+  }
   if (isDatabaseAway(error)) {
     log().warn({ method, path, err: error }, 'the database is away')
     return fail('database-away', 'The database can not be reached just now. Try again in a minute.', {
