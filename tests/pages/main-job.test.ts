@@ -116,7 +116,7 @@ describe('the main job', () => {
       const soon = new Date(Date.now() + 25 * 60_000)
       await page.getByLabel('When it is to go').fill(localFieldValue(soon, timeZone))
       await page.getByText('Leave it where it is').first().waitFor()
-      await page.getByRole('button', { name: 'Plan it', exact: true }).click()
+      await page.getByRole('button', { name: 'Plan it as asked' }).click()
       await page.waitForURL(/\/carry\/[a-z0-9]{10}$/)
 
       await page.goto(`/sites/${site}`)
