@@ -48,9 +48,11 @@ export async function evaluateAll(
   baseUrl: string,
   onError: (siteCode: string, error: unknown) => void,
   costly: CostlyFacts = new Map(),
+  isStopping: () => boolean = () => false,
 ): Promise<number> {
   let told = 0
   for (const site of await listNoticeSites(db)) {
+    if (isStopping()) break
     try {
       told += (await evaluateSite(db, site, now, baseUrl, costly)) ?? 0
     } catch (error) {

@@ -25,6 +25,8 @@ const db = createDatabase(config.databaseUrl, {
 })
 await migrateJobs(config.databaseUrl)
 
+/** Sites that have not been looked at yet can wait for the next start. */
+let stopping = false
 /** Means of days and the readiness of blanks are worked out once an hour. */
 const costly: CostlyFacts = new Map()
 const loop = every(
@@ -36,6 +38,7 @@ const loop = every(
       config.baseUrl,
       (site, error) => logger.error({ err: error, site }, 'could not decide for a site'),
       costly,
+      () => stopping,
     )
     await beat(db, 'notices', new Date())
     if (told > 0) logger.info({ told }, 'notices made')
@@ -114,12 +117,9 @@ logger.info('ready')
 
 onShutdown(
   async () => {
+    stopping = true
     await listener.stop()
-    await loop.stop()
-    await afterReadings.stop()
-    await follow.stop()
-    await repeats.stop()
-    await forecast.stop()
+    await Promise.all([loop, afterReadings, follow, repeats, forecast].map((one) => one.stop()))
     await db.destroy()
   },
   { logger },
