@@ -6,6 +6,7 @@ import type { SiteMember } from '@/db/queries/members'
 import { findMonthMeans, findRoomYears, monthKey } from '@/db/queries/room-figures'
 import { findRoom, listRoomRecords, type RoomRecord } from '@/db/queries/rooms'
 import type { Database } from '@/db/schema'
+import { capital } from '@/lib/format/capital'
 import type { PieceFacts } from '@/lib/carry/carry-check'
 import { movementOfPiece, woodOfPiece } from '@/lib/carry/joint-defaults'
 import { lidOfPiece, placeAfterStay } from '@/lib/carry/lid-of-piece'
@@ -188,7 +189,7 @@ function cutInput(
 }
 
 const cutAssumed = (own: PieceMaterial, keepRoom: RoomRecord, query: FitQuery): string[] => [
-  ...woodOfPiece(own.facts).assumed.map((phrase) => `${phrase.charAt(0).toUpperCase()}${phrase.slice(1)}.`),
+  ...woodOfPiece(own.facts).assumed.map((phrase) => `${capital(phrase)}.`),
   ...(own.isKeepRoomAssumed ? [`Kept to match ${keepRoom.name}.`] : []),
   ...(query.fitGrade === undefined && own.facts.fitGrade === null ? ['A snug lid is wanted.'] : []),
 ]

@@ -1,3 +1,4 @@
+import { capital } from '@/lib/format/capital'
 import { say, strong, type TextPart } from '@/lib/format/sentence'
 import type { CurvePoint } from './clearance-curve'
 import { TIGHT_BELOW_MM } from './feel'
@@ -25,7 +26,6 @@ function runsOf(curve: readonly CurvePoint[]): readonly Run[] {
 const about = (angleDeg: number): string => `about ${String(Math.round(angleDeg / 5) * 5)}°`
 
 const stateWords: Readonly<Record<Run['state'], string>> = { free: 'free', tight: 'tight', binds: 'may bind' }
-const capital = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1)
 
 /** Within this of either end an angle is told by its name, degrees: 5 degrees rounded would give the end itself. */
 const END_DEG = 2.5

@@ -1,3 +1,4 @@
+import { capital } from '@/lib/format/capital'
 import { formatEmc, formatFineLength, formatLength, formatMass, formatPoints } from '@/lib/format/figures'
 import type { UnitSystem } from '@/lib/sites/site'
 import { eventKindWords, isFitKind, type PieceEventView } from './event'
@@ -11,8 +12,6 @@ const gradeWords: Readonly<Record<FitGrade, string>> = {
   loose: 'a loose lid',
   threaded: 'a threaded lid',
 }
-
-const capital = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1)
 
 /** "Final fit, an easy lid": what happened, without when and where. */
 export function eventTitle({ kind, data }: Pick<PieceEventView, 'kind' | 'data'>, units: UnitSystem): string {

@@ -1,3 +1,4 @@
+import { capital } from '@/lib/format/capital'
 import { formatEmc, formatEmcFigure, formatLength, formatPoints } from '@/lib/format/figures'
 import { say, strong, type TextPart } from '@/lib/format/sentence'
 import { formatDate, formatMoment } from '@/lib/format/times'
@@ -95,5 +96,3 @@ function isBeforeRecord({ at, recordFrom }: RoomFelt, memoryDays: number): boole
   if (at === null || recordFrom === null) return false
   return (new Date(at).getTime() - new Date(recordFrom).getTime()) / DAY_MS < memoryDays - 1
 }
-
-const capital = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1)

@@ -1,6 +1,7 @@
 import type { CarryCheckAnswer, CarryCheckRequest } from '@/lib/carry/carry-answer'
 import { groupCover, type WayPiece } from '@/lib/carry/ways'
 import { namesOf } from '@/lib/carry/summary'
+import { capital } from '@/lib/format/capital'
 import { formatDuration, formatMoment } from '@/lib/format/times'
 import { type Cover, coverWords } from '@/lib/pieces/piece'
 import type { Reader } from '@/lib/sites/reader'
@@ -87,7 +88,7 @@ function hourWay(answer: CarryCheckAnswer, request: CarryCheckRequest, reader: R
   return [
     {
       key: 'hour',
-      title: `${moment(hour.startsAt)}, ${coverWords[answer.cover]}`,
+      title: `${capital(moment(hour.startsAt))}, ${coverWords[answer.cover]}`,
       words: `${lit}${answer.room.name} should be at about ${hour.emcPct.toFixed(1)}\u00a0%\u00a0MC`,
       pieces: hour.pieces,
       request: { ...request, startsAt: hour.startsAt },
