@@ -65,6 +65,7 @@ const pages: { as?: DemoRole; addresses: string[] }[] = [
       '@/notices',
       '@/place',
       '@/place?part=place',
+      '@/place?part=doors',
       '@/place?part=delete',
       '@/place/woods',
       '@/place/woods?q=burl',
