@@ -152,7 +152,7 @@ export async function findForecasts(
   )
 }
 
-/** Mean errors of each way by lead, for each room that has any, over forecasts made since a moment and by another. */
+/** Mean errors of each way by lead, for each room that has some, over forecasts made since a moment and up to another. */
 export async function findLeadScores(
   db: Kysely<Database>,
   siteId: number,

@@ -58,7 +58,7 @@ describe('air as told', () => {
     expect(typed.usedAtEnd).toBe(room.usedAtEnd)
   })
 
-  it('is taken as wide as any typed reading, so that its early edge comes sooner', () => {
+  it('is taken no narrower than a typed reading, so that its early edge comes sooner', () => {
     const there: CarryCheckInput['there'] = { ...told, kind: 'told', emcPct }
     const wide = judged(carry({ there, airDoubtPct: emcDoubtPct }))
     const known = judged(carry({ there }))

@@ -3,9 +3,8 @@
 import { useState } from 'react'
 import { problemCodeOf } from '@/lib/api/problems'
 import type { Carry } from '@/lib/carry/carry'
-import { describeError } from '@/app/_components/api'
 import { Button } from '@/app/_components/ui/button'
-import { Callout } from '@/app/_components/ui/callout'
+import { ErrorCallout } from '@/app/_components/ui/error-callout'
 import { AgainstAdvice } from './against-advice'
 import type { CarryActions } from './use-carry-actions'
 
@@ -49,11 +48,7 @@ export function StartCarry({ carry, start, isSoon }: StartCarryProps) {
           start.act({ carryId: carry.id, againstAdvice: true })
         }}
       />
-      {start.error && !isAdvised ? (
-        <Callout tone="warn" mark="silent" title={describeError(start.error).title} announce>
-          <p>{describeError(start.error).detail}</p>
-        </Callout>
-      ) : null}
+      {start.error && !isAdvised ? <ErrorCallout error={start.error} /> : null}
     </>
   )
 }

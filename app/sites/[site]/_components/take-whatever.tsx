@@ -1,9 +1,8 @@
 'use client'
 
 import { useState } from 'react'
-import { describeError } from '@/app/_components/api'
 import { Button } from '@/app/_components/ui/button'
-import { Callout } from '@/app/_components/ui/callout'
+import { ErrorCallout } from '@/app/_components/ui/error-callout'
 import { Dialog } from '@/app/_components/ui/dialog'
 import { problemCodeOf } from '@/lib/api/problems'
 import type { Carry } from '@/lib/carry/carry'
@@ -42,11 +41,7 @@ export function TakeWhatever({ carry, reader, start }: TakeWhateverProps) {
             chosen={chosen}
             onChange={setChosen}
           />
-          {start.error && !isAdvised ? (
-            <Callout tone="warn" mark="silent" title={describeError(start.error).title} announce>
-              <p>{describeError(start.error).detail}</p>
-            </Callout>
-          ) : null}
+          {start.error && !isAdvised ? <ErrorCallout error={start.error} /> : null}
           <div>
             <Button
               variant="filled"

@@ -3,10 +3,10 @@
 import { zodResolver } from '@hookform/resolvers/zod'
 import { useForm, useWatch } from 'react-hook-form'
 import { z } from 'zod'
-import { apiFetch, describeError } from '@/app/_components/api'
+import { apiFetch } from '@/app/_components/api'
 import { siteKey } from '@/app/_components/live/site-keys'
 import { Button } from '@/app/_components/ui/button'
-import { Callout } from '@/app/_components/ui/callout'
+import { ErrorCallout } from '@/app/_components/ui/error-callout'
 import { Field } from '@/app/_components/ui/field'
 import { NumberInput } from '@/app/_components/ui/number-input'
 import { useAction } from '@/app/_components/use-action'
@@ -100,11 +100,7 @@ export function TypedReadingForm({
           'A typed figure counts for 2 hours in a shop and for a day in the house; a sensor keeps watch at night too.'
         )}
       </p>
-      {save.error ? (
-        <Callout tone="warn" mark="silent" title={describeError(save.error).title} announce>
-          <p>{describeError(save.error).detail}</p>
-        </Callout>
-      ) : null}
+      {save.error ? <ErrorCallout error={save.error} /> : null}
       <div>
         <Button type="submit" variant="filled" pending={save.pending} className="max-sm:w-full">
           {submitWords}

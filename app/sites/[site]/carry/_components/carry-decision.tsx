@@ -1,10 +1,10 @@
 'use client'
 
 import { useState } from 'react'
-import { apiFetch, describeError } from '@/app/_components/api'
+import { apiFetch } from '@/app/_components/api'
 import { siteKey } from '@/app/_components/live/site-keys'
 import { Button } from '@/app/_components/ui/button'
-import { Callout } from '@/app/_components/ui/callout'
+import { ErrorCallout } from '@/app/_components/ui/error-callout'
 import { PageActions } from '@/app/_components/ui/page-actions'
 import { useAction } from '@/app/_components/use-action'
 import { problemCodeOf } from '@/lib/api/problems'
@@ -103,11 +103,7 @@ export function CarryDecision(props: CarryDecisionProps) {
           create.act(bodyOf(request, mode, true))
         }}
       />
-      {create.error && !isAdvised ? (
-        <Callout tone="warn" mark="silent" title={describeError(create.error).title} announce>
-          <p>{describeError(create.error).detail}</p>
-        </Callout>
-      ) : null}
+      {create.error && !isAdvised ? <ErrorCallout error={create.error} /> : null}
     </div>
   )
 }

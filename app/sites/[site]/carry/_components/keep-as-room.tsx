@@ -1,10 +1,10 @@
 'use client'
 
 import { useState } from 'react'
-import { apiFetch, describeError } from '@/app/_components/api'
+import { apiFetch } from '@/app/_components/api'
 import { siteKey } from '@/app/_components/live/site-keys'
 import { Button } from '@/app/_components/ui/button'
-import { Callout } from '@/app/_components/ui/callout'
+import { ErrorCallout } from '@/app/_components/ui/error-callout'
 import { Sheet } from '@/app/_components/ui/sheet'
 import { SentenceSelect } from '@/app/_components/ui/sentence-control'
 import { useAction } from '@/app/_components/use-action'
@@ -81,11 +81,7 @@ export function KeepAsRoom({ reader, air, onKept }: KeepAsRoomProps) {
       ) : (
         <p className="text-ink-soft">Somebody who may change rooms can add it.</p>
       )}
-      {keep.error ? (
-        <Callout tone="warn" mark="silent" title={describeError(keep.error).title} announce>
-          <p>{describeError(keep.error).detail}</p>
-        </Callout>
-      ) : null}
+      {keep.error ? <ErrorCallout error={keep.error} /> : null}
     </Sheet>
   )
 }

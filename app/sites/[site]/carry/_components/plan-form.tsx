@@ -1,10 +1,9 @@
 'use client'
 
 import { useState } from 'react'
-import { describeError } from '@/app/_components/api'
 import { useSiteQuery } from '@/app/_components/live/use-site-query'
 import { Button } from '@/app/_components/ui/button'
-import { Callout } from '@/app/_components/ui/callout'
+import { ErrorCallout } from '@/app/_components/ui/error-callout'
 import { ControlSentence, SentenceInput, SentenceSelect } from '@/app/_components/ui/sentence-control'
 import { instantOfLocalField, localFieldValue, nextFullHour } from '@/lib/format/local-time'
 import { type Cover, coverSchema, coverWords } from '@/lib/pieces/piece'
@@ -151,11 +150,7 @@ export function PlanForm({ reader, now, onDone }: PlanFormProps) {
           onChange={setPieceIds}
         />
       )}
-      {error ? (
-        <Callout tone="warn" mark="silent" title={describeError(error).title} announce>
-          <p>{describeError(error).detail}</p>
-        </Callout>
-      ) : null}
+      {error ? <ErrorCallout error={error} /> : null}
       <div className="flex flex-wrap items-center gap-3">
         <Button
           variant="filled"

@@ -1,9 +1,8 @@
 'use client'
 
 import { useState } from 'react'
-import { describeError } from '@/app/_components/api'
 import { Button } from '@/app/_components/ui/button'
-import { Callout } from '@/app/_components/ui/callout'
+import { ErrorCallout } from '@/app/_components/ui/error-callout'
 import { useSiteQuery } from '@/app/_components/live/use-site-query'
 import { ControlSentence, SentenceSelect } from '@/app/_components/ui/sentence-control'
 import { Sheet } from '@/app/_components/ui/sheet'
@@ -136,11 +135,7 @@ function LogAsOut({ reader, now, actions, onDone }: LogAsOutProps) {
         chosen={chosen}
         onChange={setChosen}
       />
-      {error ? (
-        <Callout tone="warn" mark="silent" title={describeError(error).title} announce>
-          <p>{describeError(error).detail}</p>
-        </Callout>
-      ) : null}
+      {error ? <ErrorCallout error={error} /> : null}
       <div>
         <Button
           variant="filled"

@@ -3,9 +3,9 @@
 import { zodResolver } from '@hookform/resolvers/zod'
 import { useForm } from 'react-hook-form'
 import type { z } from 'zod'
-import { ApiProblem, describeError } from '@/app/_components/api'
+import { ApiProblem } from '@/app/_components/api'
 import { Button } from '@/app/_components/ui/button'
-import { Callout } from '@/app/_components/ui/callout'
+import { ErrorCallout } from '@/app/_components/ui/error-callout'
 import { Checkbox } from '@/app/_components/ui/checkbox'
 import { Field } from '@/app/_components/ui/field'
 import { Input } from '@/app/_components/ui/input'
@@ -66,11 +66,7 @@ export function RoomForm({ defaults, submitWords, pending, error, onSubmit }: Ro
       <Field label="A note" error={errors.note?.message} hint="Where it lies, how it is heated.">
         <Textarea {...form.register('note')} />
       </Field>
-      {error ? (
-        <Callout tone="warn" mark="silent" title={describeError(error).title} announce>
-          <p>{describeError(error).detail}</p>
-        </Callout>
-      ) : null}
+      {error ? <ErrorCallout error={error} /> : null}
       <div>
         <Button type="submit" variant="filled" pending={pending} className="max-sm:w-full">
           {submitWords}
